@@ -1,0 +1,44 @@
+package iridepth.reading;
+
+import java.util.EnumMap;
+import java.util.Map;
+
+/**
+ * The readings of a photograph, pixel by pixel, rows first.
+ *
+ * @param width      pixels
+ * @param height     pixels
+ * @param thickness  nm, NaN where not read
+ * @param random     random part of the standard uncertainty, nm, NaN where not read
+ * @param systematic systematic part of the standard uncertainty, nm, NaN where not read
+ * @param state      code of the {@link State}
+ */
+public record ThicknessMap(int width, int height, float[] thickness, float[] random, float[] systematic, byte[] state) {
+    /** An empty map: nothing read, everything excluded. */
+    public static ThicknessMap blank(int width, int height) {
+        int size = Math.multiplyExact(width, height);
+        float[][] planes = new float[3][size];
+        for (float[] plane : planes) {
+            java.util.Arrays.fill(plane, Float.NaN);
+        }
+        return new ThicknessMap(width, height, planes[0], planes[1], planes[2], new byte[size]);
+    }
+
+    /** Combined standard uncertainty of a pixel, nm. */
+    public float uncertainty(int pixel) {
+        return (float) Math.hypot(random[pixel], systematic[pixel]);
+    }
+
+    /** How many pixels are in each state. */
+    public Map<State, Long> counts() {
+        long[] counts = new long[State.values().length];
+        for (byte code : state) {
+            counts[code]++;
+        }
+        Map<State, Long> result = new EnumMap<>(State.class);
+        for (State s : State.values()) {
+            result.put(s, counts[s.ordinal()]);
+        }
+        return result;
+    }
+}

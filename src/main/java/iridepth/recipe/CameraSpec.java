@@ -1,0 +1,88 @@
+package iridepth.recipe;
+
+import iridepth.optics.Materials;
+import iridepth.optics.Stack;
+import iridepth.photo.Region;
+import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.List;
+
+/**
+ * The camera and the photographs that characterise it, {@code [camera]}.
+ *
+ * @param encoding         "linear" or "srgb"
+ * @param whiteReflectance reflectance that fills the scale
+ * @param fullScale        the count that is full scale, NaN for that of the file's bit depth
+ * @param sensitivities    table of the sensor's spectral sensitivities, or null
+ * @param dark             photo with no light, or null
+ * @param flat             photo of the reference surface, or null
+ * @param flatStack        stack of that surface, or null
+ * @param steps            patches of known thickness
+ * @param readNoise        read noise in counts, NaN to estimate
+ * @param fullWell         electrons at full scale, NaN to estimate
+ */
+public record CameraSpec(String encoding, double whiteReflectance, double fullScale, Path sensitivities, Path dark,
+                         Path flat, Stack flatStack, List<Step> steps, double readNoise, double fullWell) {
+    /**
+     * A patch of the film of known thickness.
+     *
+     * @param image         the photo that shows it
+     * @param region        where it is in the photo
+     * @param thicknessNm   its thickness
+     * @param uncertaintyNm standard uncertainty of that
+     */
+    public record Step(Path image, Region region, double thicknessNm, double uncertaintyNm) {
+    }
+
+    /** Standard uncertainty of a step's thickness where none is given: what an ellipsometer does, common practice. */
+    private static final double USUAL_STEP_UNCERTAINTY_NM = 0.5;
+
+    static CameraSpec read(Section camera, Tables tables, Materials materials) {
+        String encoding = camera.choice("encoding", "srgb", List.of("srgb", "linear"));
+        double white = camera.number("white_reflectance", 1, 1e-4, 100);
+        double fullScale = camera.number("full_scale", Double.NaN, 1, 65535);
+        Path sensitivities = path(camera, "sensitivities", tables);
+        Path dark = path(camera, "dark", tables);
+        Path flat = path(camera, "flat", tables);
+        Stack flatStack = camera.has("flat_stack") ? Recipe.stack(camera, "flat_stack", materials) : null;
+        if ((flat == null) != (flatStack == null)) {
+            throw camera.error(flat == null ? "flat_stack" : "flat", "camera.flat and camera.flat_stack go together: the photo of "
+                    + "the reference surface and what it is made of");
+        }
+        if (flatStack != null && flatStack.hasFilm()) {
+            throw camera.error("flat_stack", "camera.flat_stack: every inner layer needs its thickness, as in 'air / SiO2 1.5 nm / Si'");
+        }
+        List<Step> steps = new ArrayList<>();
+        for (Section section : camera.sections("steps")) {
+            steps.add(step(section, tables));
+            section.finish();
+        }
+        double readNoise = camera.number("read_noise_counts", Double.NaN, 0, 65535);
+        double fullWell = camera.number("full_well_e", Double.NaN, 1, 1e9);
+        if (Double.isNaN(readNoise) != Double.isNaN(fullWell)) {
+            throw camera.error("read_noise_counts", "camera.read_noise_counts and camera.full_well_e go together");
+        }
+        camera.finish();
+        return new CameraSpec(encoding, white, fullScale, sensitivities, dark, flat, flatStack, List.copyOf(steps), readNoise,
+                fullWell);
+    }
+
+    private static Path path(Section camera, String key, Tables tables) {
+        return camera.has(key) ? tables.resolve(camera.text(key)) : null;
+    }
+
+    private static Step step(Section section, Tables tables) {
+        Region region = Recipe.region(section, "region", section.numbers("region", 4));
+        double thickness = section.number("thickness_nm", Double.NaN, 0, 1e6);
+        if (Double.isNaN(thickness)) {
+            throw section.error("", section.path("thickness_nm") + " is missing from a step");
+        }
+        return new Step(tables.resolve(section.text("image")), region, thickness,
+                section.number("uncertainty_nm", USUAL_STEP_UNCERTAINTY_NM, 0, 1e4));
+    }
+
+    /** Whether the file's values are colour-managed. */
+    public boolean isColourManaged() {
+        return encoding.equals("srgb");
+    }
+}
