@@ -191,7 +191,12 @@ public final class IccProfile {
         return adaptation.map(IccProfile::copy);
     }
 
-    private static double[][] copy(double[][] matrix) {
+    /** XYZ of the white of the profile connection space. */
+    static double[] d50() {
+        return D50.clone();
+    }
+
+    static double[][] copy(double[][] matrix) {
         return Arrays.stream(matrix).map(double[]::clone).toArray(double[][]::new);
     }
 }
