@@ -1,0 +1,115 @@
+package iridepth.photo;
+
+import java.util.Arrays;
+
+/**
+ * The photon-transfer model of EMVA Standard 1288 (release 4.0, section 2), per channel, in linear fractions of full scale:
+ * variance(s) = read^2 + gain max(0, s - black) + slope^2 / 12, where s is the signal above the dark, gain = 1 / full
+ * well in electrons, and the last term is the rounding to whole counts (slope = d(linear) / d(count)). Immutable.
+ */
+public final class NoiseModel {
+
+    private final double[] readVariance;
+    private final double[] gain;
+    private final double[] black;
+    private final double[] correlation;
+
+    NoiseModel(double[] readVariance, double[] gain, double[] black, double[] correlation) {
+        this.readVariance = readVariance;
+        this.gain = gain;
+        this.black = black;
+        this.correlation = correlation;
+    }
+
+    /**
+     * A camera whose figures are known; serves any number of channels.
+     *
+     * @param readNoise noise without light in electrons, 0 or more
+     * @param fullWell electrons at full scale, above 0
+     * @return the model
+     */
+    public static NoiseModel of(double readNoise, double fullWell) {
+        if (!(readNoise >= 0 && readNoise < fullWell && fullWell < Double.POSITIVE_INFINITY)) {
+            throw new IllegalArgumentException("a read noise of " + readNoise + " and a full well of " + fullWell
+                    + " electrons are not possible: give 0 <= read noise < full well");
+        }
+        double read = readNoise / fullWell;
+        return new NoiseModel(new double[] {read * read}, new double[] {1 / fullWell}, new double[1], new double[1]);
+    }
+
+    private static double of(double[] values, int channel) {
+        return values[values.length == 1 ? 0 : channel];
+    }
+
+    /**
+     * Variance without the rounding.
+     *
+     * @param channel 0 and up
+     * @param signal linear signal above the dark
+     * @return variance, a squared linear fraction
+     */
+    public double variance(int channel, double signal) {
+        return of(readVariance, channel) + of(gain, channel) * Math.max(0, signal - of(black, channel));
+    }
+
+    /**
+     * Variance with the rounding to counts.
+     *
+     * @param channel 0 and up
+     * @param signal linear signal above the dark
+     * @param slope d(linear) / d(count) there
+     * @return variance, a squared linear fraction, above 0
+     */
+    public double variance(int channel, double signal, double slope) {
+        return variance(channel, signal) + slope * slope / 12;
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return noise without light, a linear fraction of full scale
+     */
+    public double readNoise(int channel) {
+        return Math.sqrt(of(readVariance, channel));
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return growth of the variance with the signal, the reciprocal of the full well in electrons
+     */
+    public double gain(int channel) {
+        return of(gain, channel);
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return the signal at which photon noise begins: above 0 where a pedestal shows that no dark frame has taken away
+     */
+    public double black(int channel) {
+        return of(black, channel);
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return correlation of the noise of neighbouring pixels, mean of across and down: 0 for a plain sensor, above where
+     *     demosaicing, JPEG or noise reduction has mixed pixels, so that averages gain less than the root of their number
+     */
+    public double correlation(int channel) {
+        return of(correlation, channel);
+    }
+
+    /** @return read noise, full well and correlation of each channel on one line */
+    @Override
+    public String toString() {
+        StringBuilder text = new StringBuilder();
+        for (int c = 0; c < readVariance.length; c++) {
+            text.append(String.format(java.util.Locale.ROOT, "%s read noise %.3g, full well %.4g e, correlation %.2f",
+                    c == 0 ? "" : ";", readNoise(c), 1 / gain[c], correlation[c]));
+        }
+        return text.toString().strip();
+    }
+
+    /** @return number of channels described, 1 where one serves all */
+    public int channels() {
+        return Arrays.stream(new int[] {readVariance.length, gain.length, black.length}).max().orElse(1);
+    }
+}

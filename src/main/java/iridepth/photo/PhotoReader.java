@@ -1,0 +1,14 @@
+package iridepth.photo;
+
+import java.io.Closeable;
+import java.io.IOException;
+
+/** Reads the counts of one file format. Safe for several threads at once. */
+interface PhotoReader extends Closeable {
+
+    /** @return what the header says */
+    PhotoInfo info();
+
+    /** Fills {@code into} with rows y to y + count - 1 of a frame, interleaved; the arguments have been checked. */
+    void read(int frame, int y, int count, short[] into) throws IOException;
+}
