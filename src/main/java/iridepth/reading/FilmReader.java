@@ -52,17 +52,17 @@ public final class FilmReader {
      * @throws IllegalArgumentException if the channels do not match
      */
     public ThicknessMap read(SignalSource photo, int frame, LongConsumer progress) {
-        if (photo.channels() != curve.channels()) {
-            throw new IllegalArgumentException("the photo has " + photo.channels() + " channels where the calibration has "
+        if (photo.info().channels() != curve.channels()) {
+            throw new IllegalArgumentException("the photo has " + photo.info().channels() + " channels where the calibration has "
                     + curve.channels());
         }
-        ThicknessMap map = ThicknessMap.blank(photo.width(), photo.height());
-        for (int y = 0; y < photo.height(); y += BAND) {
-            int rows = Math.min(BAND, photo.height() - y);
+        ThicknessMap map = ThicknessMap.blank(photo.info().width(), photo.info().height());
+        for (int y = 0; y < photo.info().height(); y += BAND) {
+            int rows = Math.min(BAND, photo.info().height() - y);
             Signal signal = photo.rows(frame, y, rows);
             int top = y;
             IntStream.range(0, rows).parallel().forEach(row -> readRow(signal, row, top + row, map));
-            progress.accept((long) (y + rows) * photo.width());
+            progress.accept((long) (y + rows) * photo.info().width());
         }
         return map;
     }

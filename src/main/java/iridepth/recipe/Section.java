@@ -1,6 +1,7 @@
 package iridepth.recipe;
 
 import com.fasterxml.jackson.databind.JsonNode;
+import com.fasterxml.jackson.databind.node.JsonNodeFactory;
 import iridepth.spectrum.Catalogue;
 import java.util.ArrayList;
 import java.util.LinkedHashSet;
@@ -141,7 +142,7 @@ final class Section {
     /** A table; an empty one where the key is missing. */
     Section section(String key) {
         if (!has(key)) {
-            return new Section(text, path(key), text.tree().objectNode());
+            return new Section(text, path(key), JsonNodeFactory.instance.objectNode());
         }
         if (!node.get(key).isObject()) {
             throw wrongType(key, "a table, [" + path(key) + "]");
