@@ -27,7 +27,7 @@ class OpticsTest {
         Table table = Table.resource("/iridepth/reference/film-colours.csv");
         double[][] observer = Sensor.cie1931().curves();
         for (int row = 0; row < table.size(); row++) {
-            View view = View.aperture(table.number(row, "numerical_aperture"), 128);
+            View view = View.aperture(table.number(row, "numerical_aperture"), 224);
             double[] r = FilmReflectance.of(FilmStack.parse(table.text(row, "stack")), view,
                     table.number(row, "thickness_nm"), 1, 1).spectrum(0);
             double[] light = Lamp.illuminant(table.text(row, "illuminant")).power();
