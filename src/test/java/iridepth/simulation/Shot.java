@@ -86,6 +86,33 @@ public final class Shot {
         return flat.clone();
     }
 
+    /** Reflectance that fills the scale at the centre of the shading, in the channels of unit response. */
+    public double whiteReflectance() {
+        return 1 / gain;
+    }
+
+    /**
+     * The signals s_c of a photograph as an ideal correction would give them: black level, gain, shading and glare taken
+     * off exactly; noise, rounding and clipping stay. Row by row, the channels of a pixel side by side.
+     */
+    public double[] signals(Photograph photo) {
+        double[] signals = new double[photo.counts().length];
+        int channels = photo.channels();
+        for (int i = 0; i < signals.length; i++) {
+            int c = i % channels;
+            int x = i / channels % photo.width();
+            int y = i / channels / photo.width();
+            double f = rig.detector().fraction(Short.toUnsignedInt(photo.counts()[i]));
+            signals[i] = f / fractionSlope(c, x, y, photo.width(), photo.height()) - rig.glare() * white[c];
+        }
+        return signals;
+    }
+
+    /** Standard deviation of a signal s_c at the centre of the shading, rounding included. */
+    public double signalNoise(int channel, double signal) {
+        return rig.detector().noiseRounded(gain * (signal + rig.glare() * white[channel])) / gain;
+    }
+
     /** Fraction of full scale, without black level, of a signal at a pixel of the picture. */
     double fraction(double signal, int c, int x, int y, int width, int height) {
         return gain * rig.shading().at(x, y, width, height, c) * (signal + rig.glare() * white[c]);
