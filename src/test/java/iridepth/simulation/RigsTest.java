@@ -82,6 +82,29 @@ class RigsTest {
         assertTrue(covered > 0.03 * truth.length && covered < 0.15 * truth.length, "covered " + covered);
     }
 
+    /** Chi-square of three channels exceeds 16.3 by chance once in a thousand; every cover lies much further off. */
+    @Test
+    void noCoverOfTheDirtyFieldLooksLikeAFilm() {
+        Scene scene = Fields.dirty();
+        Shot shot = Shot.of(scene.rig(), scene.stack(), scene.flatStack(), 0, 1500);
+        double[] signals = shot.signals(shot.photo(scene.field(), scene.seed()));
+        for (int i = 0; i < scene.field().film().length; i++) {
+            if (scene.field().cover()[i] == null) {
+                continue;
+            }
+            double nearest = Double.MAX_VALUE;
+            for (int d = 0; d <= 1500; d++) {
+                double chiSquare = 0;
+                for (int c = 0; c < 3; c++) {
+                    double s = shot.curve().signal(c, d);
+                    chiSquare += Math.pow((signals[3 * i + c] - s) / shot.signalNoise(c, s), 2);
+                }
+                nearest = Math.min(nearest, chiSquare);
+            }
+            assertTrue(nearest > 50, scene.field().cover()[i] + " at pixel " + i + ": " + nearest);
+        }
+    }
+
     @Test
     void allOrderScenesCanBePhotographedWithoutClipping() {
         for (Scene scene : Fields.all()) {
