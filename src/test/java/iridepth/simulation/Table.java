@@ -81,7 +81,6 @@ public final class Table {
      * Linear interpolation in the column {@code wavelength_nm}, the end values held outside the table.
      *
      * @param column column to read
-     * @param wavelength nm
      */
     public Spectrum spectrum(String column) {
         double[] x = numbers("wavelength_nm");

