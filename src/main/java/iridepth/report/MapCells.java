@@ -8,8 +8,7 @@ package iridepth.report;
 public final class MapCells {
     /** Thickness is summed in units of 1/1024 nm. */
     private static final double UNITS_PER_NM = 1024;
-    private static final StateStyle[] STYLES = StateStyle.values();
-    private static final int STATES = STYLES.length;
+    private static final int STATES = StateStyle.values().length;
 
     private final int width;
     private final int height;
@@ -105,31 +104,29 @@ public final class MapCells {
         return rows;
     }
 
-    private int count(int cell, StateStyle state) {
-        return count[cell * STATES + state.code()];
-    }
-
     /** State of most pixels of a cell: first whether they have a thickness, then which of these or the other states. */
     StateStyle state(int cell) {
-        int read = count(cell, StateStyle.READ);
-        int doubtful = count(cell, StateStyle.ORDER_DOUBTFUL);
+        int base = cell * STATES;
         int others = 0;
-        StateStyle common = StateStyle.EXCLUDED;
-        for (StateStyle s : STYLES) {
-            if (!s.hasThickness()) {
-                others += count(cell, s);
-                common = count(cell, s) > count(cell, common) ? s : common;
-            }
+        int common = STATES - 1;
+        for (int code = STATES - 1; code > StateStyle.ORDER_DOUBTFUL.code(); code--) {
+            others += count[base + code];
+            common = count[base + code] > count[base + common] ? code : common;
         }
-        if (read + doubtful > 0 && read + doubtful >= others) {
-            return doubtful > read ? StateStyle.ORDER_DOUBTFUL : StateStyle.READ;
+        int having = having(cell);
+        if (having == 0 || having < others) {
+            return StateStyle.of(common);
         }
-        return common;
+        return 2 * count[base + StateStyle.ORDER_DOUBTFUL.code()] > having ? StateStyle.ORDER_DOUBTFUL : StateStyle.READ;
+    }
+
+    private int having(int cell) {
+        return count[cell * STATES + StateStyle.READ.code()] + count[cell * STATES + StateStyle.ORDER_DOUBTFUL.code()];
     }
 
     /** Mean thickness of a cell's pixels that have one, nm; NaN if none has. */
     double mean(int cell) {
-        int having = count(cell, StateStyle.READ) + count(cell, StateStyle.ORDER_DOUBTFUL);
+        int having = having(cell);
         return having == 0 ? Double.NaN : sum[cell] / UNITS_PER_NM / having;
     }
 

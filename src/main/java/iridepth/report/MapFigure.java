@@ -1,9 +1,6 @@
 package iridepth.report;
 
-import java.awt.Color;
-import java.awt.geom.Path2D;
 import java.nio.file.Path;
-import java.util.Arrays;
 import java.util.Locale;
 
 /**
@@ -25,11 +22,13 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
     private static final int LEFT = 96;
     private static final int RIGHT = 190;
     private static final int BAR_GAP = 36;
-    private static final int BAR_WIDTH = 30;
     private static final int LEAST_BAR = 300;
     private static final int LEAST_SHEET = 1000;
+    private static final int LEGEND_LINE = 30;
     private static final int HATCH_PERIOD = 8;
     private static final int HATCH_WIDTH = 2;
+    private static final int BINS = 4096;
+    private static final double BIN_SHARE = 1.0 / BINS;
     /** Share of the cells left beyond either end of the colour scale, so that a few stray ones do not stretch it. */
     private static final double BEYOND = 0.001;
 
@@ -37,24 +36,41 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
      * A figure whose scale spans the thicknesses in the map, but for a thousandth of the cells at either end; rounded outwards.
      */
     public static MapFigure of(String title, MapCells cells, double pixelUm) {
-        double[] means = new double[cells.columns() * cells.rows()];
-        int count = 0;
-        for (int i = 0; i < means.length; i++) {
+        double least = Double.POSITIVE_INFINITY;
+        double most = Double.NEGATIVE_INFINITY;
+        for (int i = 0; i < cells.columns() * cells.rows(); i++) {
             if (cells.state(i).hasThickness()) {
-                means[count++] = cells.mean(i);
+                least = Math.min(least, cells.mean(i));
+                most = Math.max(most, cells.mean(i));
             }
         }
-        if (count == 0) {
+        if (least > most) {
             return new MapFigure(title, cells, pixelUm, 0, 1);
         }
-        Arrays.sort(means, 0, count);
-        int cut = (int) (BEYOND * count);
-        double low = means[cut];
-        double high = means[count - 1 - cut];
+        double low = least + BIN_SHARE * (most - least) * strays(cells, least, most, false);
+        double high = most - BIN_SHARE * (most - least) * strays(cells, least, most, true);
         double step = Ticks.step(Math.max((high - low) / 20, 0.05));
         double from = Math.floor(low / step) * step;
         double to = Math.ceil(high / step) * step;
         return new MapFigure(title, cells, pixelUm, from, to > from ? to : from + step);
+    }
+
+    /** How many bins at one end of the thicknesses hold no more than a thousandth of the cells together. */
+    private static int strays(MapCells cells, double least, double most, boolean upper) {
+        int[] bin = new int[BINS];
+        int count = 0;
+        for (int i = 0; i < cells.columns() * cells.rows(); i++) {
+            if (cells.state(i).hasThickness()) {
+                double share = (cells.mean(i) - least) / Math.max(most - least, Double.MIN_NORMAL);
+                bin[Math.min(BINS - 1, (int) ((upper ? 1 - share : share) * BINS))]++;
+                count++;
+            }
+        }
+        int bins = 0;
+        for (int beyond = bin[0]; beyond <= BEYOND * count; beyond += bin[bins]) {
+            bins++;
+        }
+        return bins;
     }
 
     /**
@@ -67,19 +83,19 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
     }
 
     Picture draw() {
-        int enlarge = Math.max(1, LEAST_EDGE / Math.max(cells.columns(), cells.rows()));
+        int enlarge = (LEAST_EDGE - 1) / Math.max(cells.columns(), cells.rows()) + 1;
         int mapWidth = cells.columns() * enlarge;
         int mapHeight = cells.rows() * enlarge;
         int sheet = Math.max(LEAST_SHEET, LEFT + mapWidth + RIGHT);
         int top = 88;
         int body = Math.max(mapHeight, LEAST_BAR);
-        Picture picture = new Picture(sheet, top + body + 152);
+        Picture picture = new Picture(sheet, top + body + 122 + 2 * LEGEND_LINE);
         drawTitle(picture);
         drawMap(picture, LEFT, top, enlarge);
         picture.frame(LEFT, top, mapWidth, mapHeight);
         drawAxes(picture, LEFT, top, enlarge);
-        drawBar(picture, LEFT + mapWidth + BAR_GAP, top, body);
-        drawLegend(picture, top + body + 128);
+        ColourBar.draw(picture, LEFT + mapWidth + BAR_GAP, top, body, "Thickness (nm)", fromNm, toNm);
+        drawLegend(picture, top + body + 118);
         return picture;
     }
 
@@ -100,22 +116,24 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
     }
 
     private void drawMap(Picture picture, int left, int top, int enlarge) {
-        ColourScale scale = ColourScale.thickness();
         int[] pixels = picture.pixels();
-        for (int row = 0; row < cells.rows() * enlarge; row++) {
-            int place = (top + row) * picture.width() + left;
-            int cellRow = row / enlarge * cells.columns();
-            for (int column = 0; column < cells.columns(); column++) {
-                int cell = cellRow + column;
+        for (int cellRow = 0; cellRow < cells.rows(); cellRow++) {
+            for (int cellColumn = 0; cellColumn < cells.columns(); cellColumn++) {
+                int cell = cellRow * cells.columns() + cellColumn;
                 StateStyle state = cells.state(cell);
-                int rgb = state.hasThickness() ? scale.rgb(ColourScale.index((cells.mean(cell) - fromNm) / (toNm - fromNm)))
-                        : state.rgb();
-                for (int i = 0; i < enlarge; i++, place++) {
-                    boolean hatched = state == StateStyle.ORDER_DOUBTFUL && isHatch(column * enlarge + i, row);
-                    pixels[place] = hatched ? hatch(rgb) : rgb;
+                int rgb = state.hasThickness() ? colour(cells.mean(cell)) : state.rgb();
+                for (int y = cellRow * enlarge; y < (cellRow + 1) * enlarge; y++) {
+                    int place = (top + y) * picture.width() + left;
+                    for (int x = cellColumn * enlarge; x < (cellColumn + 1) * enlarge; x++) {
+                        pixels[place + x] = state == StateStyle.ORDER_DOUBTFUL && isHatch(x, y) ? hatch(rgb) : rgb;
+                    }
                 }
             }
         }
+    }
+
+    private int colour(double nm) {
+        return ColourScale.thickness().rgb(ColourScale.index((nm - fromNm) / (toNm - fromNm)));
     }
 
     private static boolean isHatch(int x, int y) {
@@ -165,55 +183,25 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
         picture.text(label, right - length - 10, y + 9, Picture.Align.RIGHT, Picture.INK);
     }
 
-    private void drawBar(Picture picture, int left, int top, int height) {
-        ColourScale scale = ColourScale.thickness();
-        int margin = 14;
-        int bar = height - 2 * margin;
-        for (int i = 0; i < bar; i++) {
-            Color ink = new Color(scale.rgb(ColourScale.index(1 - (i + 0.5) / bar)));
-            picture.fill(left, top + margin + i, BAR_WIDTH, 1, ink);
-        }
-        triangle(picture, left, top + margin, -margin + 2, scale.rgb(ColourScale.SIZE - 1));
-        triangle(picture, left, top + margin + bar, margin - 2, scale.rgb(0));
-        picture.frame(left, top + margin, BAR_WIDTH, bar);
-        picture.font(Picture.TEXT, false);
-        Ticks ticks = Ticks.of(fromNm, toNm, Math.max(2, bar / 55));
-        double widest = 0;
-        for (double v : ticks.at()) {
-            double y = top + margin + bar * (toNm - v) / (toNm - fromNm);
-            picture.line(left + BAR_WIDTH, y, left + BAR_WIDTH + 7, y, Picture.INK, 1);
-            picture.text(ticks.label(v), left + BAR_WIDTH + 12, y + 6, Picture.Align.LEFT, Picture.INK);
-            widest = Math.max(widest, picture.widthOf(ticks.label(v)));
-        }
-        picture.textUpwards("Thickness (nm)", left + BAR_WIDTH + 12 + widest + 28, top + height / 2.0, Picture.INK);
-    }
-
-    /** Points beyond the bar's end: thicker or thinner cells have the end's colour. */
-    private static void triangle(Picture picture, int left, int y, int height, int rgb) {
-        Path2D path = new Path2D.Double();
-        path.moveTo(left, y);
-        path.lineTo(left + BAR_WIDTH / 2.0, y + height);
-        path.lineTo(left + BAR_WIDTH, y);
-        path.closePath();
-        picture.graphics().setColor(new Color(rgb));
-        picture.graphics().fill(path);
-        picture.graphics().setColor(Picture.INK);
-        picture.graphics().draw(path);
-    }
-
-    private void drawLegend(Picture picture, int y) {
+    private void drawLegend(Picture picture, int firstLine) {
         long[] total = cells.total();
         double pixels = (double) cells.width() * cells.height();
         double x = 20;
+        int y = firstLine;
         picture.font(Picture.TEXT, false);
         for (StateStyle state : StateStyle.values()) {
             if (total[state.code()] == 0) {
                 continue;
             }
-            swatch(picture, (int) x, y - 15, state);
             String text = state.label() + " " + percent(total[state.code()] / pixels);
+            double width = 40 + picture.widthOf(text) + 30;
+            if (x > 20 && x + width > picture.width()) {
+                x = 20;
+                y += LEGEND_LINE;
+            }
+            swatch(picture, (int) x, y - 15, state);
             picture.text(text, x + 40, y, Picture.Align.LEFT, Picture.INK);
-            x += 40 + picture.widthOf(text) + 32;
+            x += width;
         }
     }
 

@@ -111,7 +111,7 @@ class MapFigureTest {
         Path file = folder.resolve("thickness.png");
         new MapFigure("Halves", halves(240, 180, 1600), 0.5, 100, 200).write(file);
         BufferedImage image = ImageIO.read(file.toFile());
-        int enlarge = 700 / 240;
+        int enlarge = 3;
         ColourScale scale = ColourScale.thickness();
         assertEquals(scale.rgb(0), image.getRGB(96 + 10 * enlarge, 88 + 10 * enlarge) & 0xFFFFFF);
         assertEquals(scale.rgb(255), image.getRGB(96 + 200 * enlarge, 88 + 10 * enlarge) & 0xFFFFFF);
