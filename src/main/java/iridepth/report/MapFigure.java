@@ -101,12 +101,7 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
 
     private void drawTitle(Picture picture) {
         picture.font(Picture.TITLE, true);
-        double room = picture.width() - 40.0;
-        String line = title;
-        while (line.length() > 1 && picture.widthOf(line) > room) {
-            line = line.substring(0, line.length() - 2).stripTrailing() + "\u2026";
-        }
-        picture.text(line, 20, 38, Picture.Align.LEFT, Picture.INK);
+        picture.text(picture.fitted(title, picture.width() - 40.0), 20, 38, Picture.Align.LEFT, Picture.INK);
         picture.font(Picture.SMALL, false);
         String size = cells.width() + " \u00d7 " + cells.height() + " pixels";
         if (cells.factor() > 1) {
