@@ -86,7 +86,7 @@ public final class PhotonTransfer {
         List<Bands.Band> bands = Bands.sample(photo);
         List<Optional<Frame>> others = bands.stream()
                 .map(band -> second.map(other -> other.rows(band.y(), band.frame().height()))).toList();
-        List<Optional<float[]>> darks = bands.stream().map(band -> dark.map(field -> rows(field, band))).toList();
+        List<Optional<float[][]>> darks = bands.stream().map(band -> dark.map(field -> rows(field, band))).toList();
         BlockResidual small = new BlockResidual(6, 2);
         int channels = photo.info().channels();
         QuietBlocks[] quiet = new QuietBlocks[channels];
@@ -108,7 +108,7 @@ public final class PhotonTransfer {
     }
 
     private static QuietBlocks quiet(BlockResidual residual, List<Bands.Band> bands, List<Optional<Frame>> others,
-            List<Optional<float[]>> darks, int channel, Encoding encoding, int top) {
+            List<Optional<float[][]>> darks, int channel, Encoding encoding, int top) {
         NoiseBlocks blocks = new NoiseBlocks(residual);
         for (int i = 0; i < bands.size(); i++) {
             blocks.add(bands.get(i).frame(), others.get(i).orElse(null), channel, encoding, top,
@@ -120,13 +120,12 @@ public final class PhotonTransfer {
         return QuietBlocks.of(blocks, Math.max(1, Math.min(MOST_GROUPS, blocks.count() / GROUP_BLOCKS)));
     }
 
-    private static float[] rows(ShadingField field, Bands.Band band) {
-        int length = band.frame().width() * band.frame().channels();
-        float[] all = new float[length * band.frame().height()];
-        float[] row = new float[length];
-        for (int y = 0; y < band.frame().height(); y++) {
-            field.row(band.y() + y, row);
-            System.arraycopy(row, 0, all, y * length, length);
+    /** The dark field of a band, channel after channel, row after row. */
+    private static float[][] rows(ShadingField field, Bands.Band band) {
+        Frame frame = band.frame();
+        float[][] all = new float[frame.channels() * frame.height()][frame.width()];
+        for (int i = 0; i < all.length; i++) {
+            field.row(band.y() + i % frame.height(), i / frame.height(), all[i]);
         }
         return all;
     }
