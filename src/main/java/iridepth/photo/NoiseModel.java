@@ -1,6 +1,8 @@
 package iridepth.photo;
 
 import java.util.Arrays;
+import java.util.List;
+import java.util.Optional;
 
 /**
  * The photon-transfer model of EMVA Standard 1288 (release 4.0, section 2), per channel, in linear fractions of full scale:
@@ -35,6 +37,60 @@ public final class NoiseModel {
         }
         double read = readNoise / fullWell;
         return new NoiseModel(new double[] {read * read}, new double[] {1 / fullWell}, new double[1], new double[1]);
+    }
+
+    /**
+     * The model through a measured photon-transfer curve.
+     *
+     * @param curve from photos of one camera with one setting
+     * @return the model, with as many channels as the curve
+     */
+    public static NoiseModel fit(PhotonTransfer curve) {
+        int n = curve.channels();
+        TransferFit[] fits = new TransferFit[n];
+        Arrays.setAll(fits, c -> TransferFit.of(curve.points(c)));
+        double[] correlation = new double[n];
+        Arrays.setAll(correlation, curve::correlation);
+        return new NoiseModel(Arrays.stream(fits).mapToDouble(TransferFit::readVariance).toArray(),
+                Arrays.stream(fits).mapToDouble(TransferFit::gain).toArray(),
+                Arrays.stream(fits).mapToDouble(TransferFit::black).toArray(), correlation);
+    }
+
+    /**
+     * The noise of any photo from itself: parts of it must be smooth, but need not be even.
+     *
+     * @param photo a photo, or a single flat
+     * @param encoding how its counts stand for light
+     * @param dark dark field, if there is one
+     * @return the model
+     * @throws PhotoException if too little of the photo is free of clipping
+     */
+    public static NoiseModel fromPhoto(PhotoFile photo, Encoding encoding, Optional<ShadingField> dark) {
+        return fit(PhotonTransfer.of(photo, encoding, dark));
+    }
+
+    /**
+     * The noise from two or more flats taken with the same settings, by their differences; from a single flat as from
+     * any photo.
+     *
+     * @param flats one or more flats
+     * @param encoding how their counts stand for light
+     * @param dark dark field, if there is one
+     * @return the model
+     * @throws PhotoException if the flats differ in kind or are clipped
+     */
+    public static NoiseModel fromFlats(List<PhotoFile> flats, Encoding encoding, Optional<ShadingField> dark) {
+        if (flats.isEmpty()) {
+            throw new IllegalArgumentException("no flat is given: give one or more");
+        }
+        if (flats.size() == 1) {
+            return fromPhoto(flats.get(0), encoding, dark);
+        }
+        PhotonTransfer curve = PhotonTransfer.ofDifference(flats.get(0), flats.get(1), encoding, dark);
+        for (int i = 2; i < flats.size(); i++) {
+            curve = curve.and(PhotonTransfer.ofDifference(flats.get(i - 1), flats.get(i), encoding, dark));
+        }
+        return fit(curve);
     }
 
     private static double of(double[] values, int channel) {

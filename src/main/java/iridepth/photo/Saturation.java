@@ -25,7 +25,8 @@ final class Saturation {
         PhotoInfo info = photo.info();
         int top = Math.min(encoding.top(), info.maxCount()) - (info.lossy() ? LOSSY_MARGIN : 0);
         int[][] histogram = new int[info.channels()][info.maxCount() + 1];
-        for (Frame band : Bands.sample(photo)) {
+        for (Bands.Band sampled : Bands.sample(photo)) {
+            Frame band = sampled.frame();
             for (int i = 0; i < band.counts().length; i++) {
                 histogram[i % band.channels()][band.counts()[i] & 0xffff]++;
             }

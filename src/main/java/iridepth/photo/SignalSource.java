@@ -1,5 +1,6 @@
 package iridepth.photo;
 
+import java.util.Arrays;
 import java.util.Optional;
 
 /**
@@ -94,46 +95,48 @@ public final class SignalSource {
      * @return their signal
      */
     public Signal convert(Frame rows, int y) {
+        int width = rows.width();
         int channels = rows.channels();
-        int rowLength = rows.width() * channels;
-        float[] value = new float[rows.counts().length];
-        float[] variance = new float[value.length];
-        byte[] limit = new byte[value.length];
-        float[] darkRow = new float[rowLength];
-        float[] flatRow = new float[rowLength];
+        int length = rows.counts().length;
+        Signal signal = new Signal(width, rows.height(), channels, new float[length], new float[length], new byte[length]);
+        float[] darkRow = new float[width];
+        float[] flatRow = new float[width];
+        Arrays.fill(flatRow, 1);
         for (int row = 0; row < rows.height(); row++) {
-            int line = y + row;
-            dark.ifPresent(field -> field.row(line, darkRow));
-            flat.ifPresent(field -> field.row(line, flatRow));
             for (int c = 0; c < channels; c++) {
-                convert(rows.counts(), row * rowLength, c, channels, rowLength, darkRow, flatRow, value, variance, limit);
+                if (dark.isPresent()) {
+                    dark.get().row(y + row, c, darkRow);
+                }
+                if (flat.isPresent()) {
+                    flat.get().row(y + row, c, flatRow);
+                }
+                convert(rows.counts(), row * width * channels + c, c, darkRow, flatRow, signal);
             }
         }
-        return new Signal(rows.width(), rows.height(), channels, value, variance, limit);
+        return signal;
     }
 
-    private void convert(short[] counts, int start, int c, int channels, int rowLength, float[] darkRow, float[] flatRow,
-            float[] value, float[] variance, byte[] limit) {
-        float[] table = encoding.table(c);
-        float[] slopes = encoding.slopes(c);
-        float read = (float) noise.variance(c, 0);
-        float gain = (float) noise.gain(c);
-        float black = (float) noise.black(c);
+    /** Converts one channel of a row that starts at a place in the arrays. */
+    private void convert(short[] counts, int start, int channel, float[] darkRow, float[] flatRow, Signal signal) {
+        float[] table = encoding.table(channel);
+        float[] slopes = encoding.slopes(channel);
+        float read = (float) noise.variance(channel, 0);
+        float gain = (float) noise.gain(channel);
+        float black = (float) noise.black(channel);
         int bottom = encoding.bottom();
-        int top = saturation[c];
-        for (int i = c; i < rowLength; i += channels) {
-            int count = counts[start + i] & 0xffff;
-            float signal = table[count] - darkRow[i];
+        int top = saturation[channel];
+        float[] value = signal.value();
+        float[] variance = signal.variance();
+        byte[] limit = signal.limit();
+        int channels = signal.channels();
+        for (int x = 0, at = start; x < signal.width(); x++, at += channels) {
+            int count = counts[at] & 0xffff;
+            float light = table[count] - darkRow[x];
             float slope = slopes[count];
-            float v = read + gain * Math.max(0, signal - black) + slope * slope * (1f / 12);
-            if (flat.isPresent()) {
-                float reciprocal = 1 / flatRow[i];
-                signal *= reciprocal;
-                v *= reciprocal * reciprocal;
-            }
-            value[start + i] = signal;
-            variance[start + i] = v;
-            limit[start + i] = count >= top ? Signal.AT_LEAST : count <= bottom ? Signal.AT_MOST : Signal.MEASURED;
+            float scale = 1 / flatRow[x];
+            value[at] = light * scale;
+            variance[at] = (read + gain * Math.max(0, light - black) + slope * slope * (1f / 12)) * scale * scale;
+            limit[at] = count >= top ? Signal.AT_LEAST : count <= bottom ? Signal.AT_MOST : Signal.MEASURED;
         }
     }
 }

@@ -17,9 +17,6 @@ final class SplineFit {
     private final SplineBasis down;
     private final double[][] coefficients;
     private final RealMatrix fitted;
-    private double uncertainty;
-    private double residual;
-    private double outlierFraction;
 
     private SplineFit(SplineBasis across, SplineBasis down, RealMatrix means) {
         this.across = across;
@@ -29,38 +26,56 @@ final class SplineFit {
         fitted = down.blockMeans().multiply(c).multiply(across.blockMeans().transpose());
     }
 
-    static SplineFit of(BlockMeans means, int channel) {
+    /**
+     * A fit and how well it describes the blocks.
+     *
+     * @param uncertainty standard uncertainty of the fit from the noise of the blocks
+     * @param residual what the fit leaves of the blocks beyond their noise, root mean square
+     * @param outlierFraction fraction of the blocks left out
+     */
+    record Judged(SplineFit fit, double uncertainty, double residual, double outlierFraction) {
+    }
+
+    static Judged of(BlockMeans means, int channel) {
         RealMatrix data = MatrixUtils.createRealMatrix(means.mean(channel));
         double noise = blockNoise(means.mean(channel));
         RealMatrix cleaned = data;
-        SplineFit best = null;
+        SplineFit best = best(means, data, noise);
         int outliers = 0;
         for (int round = 0; round < ROUNDS; round++) {
-            best = best(means, cleaned, noise);
-            double[] residuals = flat(data.subtract(best.fitted));
-            double reach = OUTLIER * Math.max(noise, MAD_TO_SIGMA * medianOfAbsolute(residuals));
             cleaned = data.copy();
-            int found = 0;
-            for (int i = 0; i < residuals.length; i++) {
-                if (Math.abs(residuals[i]) > reach) {
-                    int row = i / data.getColumnDimension();
-                    int column = i % data.getColumnDimension();
-                    cleaned.setEntry(row, column, best.fitted.getEntry(row, column));
-                    found++;
-                }
-            }
+            int found = best.replaceOutliers(cleaned, noise);
             if (found == outliers) {
                 break;
             }
             outliers = found;
+            best = best(means, cleaned, noise);
         }
         double n = (double) data.getRowDimension() * data.getColumnDimension();
-        double p = (double) best.across.size() * best.down.size();
-        best.uncertainty = noise * Math.sqrt(p / n);
-        double[] left = flat(cleaned.subtract(best.fitted));
-        best.residual = Math.sqrt(Math.max(0, meanSquare(left) - noise * noise * (1 - p / n)));
-        best.outlierFraction = outliers / n;
-        return best;
+        double share = best.size() / n;
+        double left = meanSquare(flat(cleaned.subtract(best.fitted)));
+        return new Judged(best, noise * Math.sqrt(share), Math.sqrt(Math.max(0, left - noise * noise * (1 - share))),
+                outliers / n);
+    }
+
+    /** Puts the fit in the place of blocks that stand out of it; returns how many. */
+    private int replaceOutliers(RealMatrix data, double noise) {
+        RealMatrix residuals = data.subtract(fitted);
+        double reach = OUTLIER * Math.max(noise, MAD_TO_SIGMA * medianOfAbsolute(flat(residuals)));
+        int found = 0;
+        for (int row = 0; row < data.getRowDimension(); row++) {
+            for (int column = 0; column < data.getColumnDimension(); column++) {
+                if (Math.abs(residuals.getEntry(row, column)) > reach) {
+                    data.setEntry(row, column, fitted.getEntry(row, column));
+                    found++;
+                }
+            }
+        }
+        return found;
+    }
+
+    private double size() {
+        return (double) across.size() * down.size();
     }
 
     private static SplineFit best(BlockMeans means, RealMatrix data, double noise) {
@@ -77,7 +92,7 @@ final class SplineFit {
             }
             SplineFit fit = new SplineFit(new SplineBasis(means.width(), means.block(), mx),
                     new SplineBasis(means.height(), means.block(), my), data);
-            double share = (double) fit.across.size() * fit.down.size() / ((double) rows * columns);
+            double share = fit.size() / ((double) rows * columns);
             double cp = meanSquare(flat(data.subtract(fit.fitted))) + 2 * share * noise * noise;
             if (cp < bestCp) {
                 bestCp = cp;
@@ -119,9 +134,9 @@ final class SplineFit {
         return Arrays.stream(matrix.getData()).flatMapToDouble(Arrays::stream).toArray();
     }
 
-    /** Evaluates along a row: fills into[start], into[start + step], ... */
-    void row(int y, float[] into, int start, int step) {
-        across.evaluate(down.at(y, coefficients), into, start, step);
+    /** Evaluates along a row of pixels. */
+    void row(int y, float[] into) {
+        across.evaluate(down.at(y, coefficients), into);
     }
 
     double mean() {
@@ -130,17 +145,5 @@ final class SplineFit {
 
     double lowest() {
         return Arrays.stream(flat(fitted)).min().orElse(Double.NaN);
-    }
-
-    double uncertainty() {
-        return uncertainty;
-    }
-
-    double residual() {
-        return residual;
-    }
-
-    double outlierFraction() {
-        return outlierFraction;
     }
 }

@@ -1,9 +1,7 @@
 package iridepth.reading;
 
-/** What became of a pixel. */
+/** What became of a pixel; the codes in files are 0 for read and so on in this order. */
 public enum State {
-    /** Left out by the recipe. */
-    EXCLUDED("excluded"),
     /** A thickness was read. */
     READ("read"),
     /** A thickness was read, but another interference order fits about as well. */
@@ -13,7 +11,10 @@ public enum State {
     /** No light to speak of in any channel. */
     DARK("dark"),
     /** Every channel at the end of its scale. */
-    CLIPPED("clipped");
+    CLIPPED("clipped"),
+    /** Left out by the recipe. */
+    EXCLUDED("excluded");
+
 
     private final String label;
 

@@ -21,7 +21,9 @@ public record ThicknessMap(int width, int height, float[] thickness, float[] ran
         for (float[] plane : planes) {
             java.util.Arrays.fill(plane, Float.NaN);
         }
-        return new ThicknessMap(width, height, planes[0], planes[1], planes[2], new byte[size]);
+        byte[] state = new byte[size];
+        java.util.Arrays.fill(state, State.EXCLUDED.code());
+        return new ThicknessMap(width, height, planes[0], planes[1], planes[2], state);
     }
 
     /** Combined standard uncertainty of a pixel, nm. */

@@ -127,6 +127,11 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
     }
 
     static Region region(Section section, String key, double[] row) {
+        for (double number : row) {
+            if (number != Math.rint(number)) {
+                throw section.error(key, section.path(key) + ": a region is [x, y, width, height] in whole pixels");
+            }
+        }
         try {
             return new Region((int) row[0], (int) row[1], (int) row[2], (int) row[3]);
         } catch (IllegalArgumentException e) {

@@ -11,13 +11,13 @@ public enum StateStyle {
     /** A thickness is read, but another order fits about as well: its colour of the scale, hatched. */
     ORDER_DOUBTFUL("order-doubtful", 0xF0C04A),
     /** No thickness explains the colour. */
-    OFF_CURVE("off-curve", 0x4A4A4A),
+    OFF_CURVE("off-curve", 0xD9D9D9),
     /** Too little light. */
     DARK("dark", 0x000000),
     /** Too much light. */
     CLIPPED("clipped", 0xFFFFFF),
     /** Left out on request. */
-    EXCLUDED("excluded", 0xD9D9D9);
+    EXCLUDED("excluded", 0x4A4A4A);
 
     private static final StateStyle[] ALL = values();
 
