@@ -56,22 +56,22 @@ public final class FilmReader {
             throw new IllegalArgumentException("the photo has " + photo.info().channels() + " channels where the calibration has "
                     + curve.channels());
         }
+        double[] range = photo.lightRange();
+        CurveIndex index = CurveIndex.of(curve, photo::variance, LightLevels.of(range[0], range[1]), threshold);
         ThicknessMap map = ThicknessMap.blank(photo.info().width(), photo.info().height());
         for (int y = 0; y < photo.info().height(); y += BAND) {
             int rows = Math.min(BAND, photo.info().height() - y);
             Signal signal = photo.rows(frame, y, rows);
             int top = y;
-            IntStream.range(0, rows).parallel().forEach(row -> readRow(signal, row, top + row, map));
+            IntStream.range(0, rows).parallel().forEach(row -> readRow(index, signal, row, top + row, map));
             progress.accept((long) (y + rows) * photo.info().width());
         }
         return map;
     }
 
-    private void readRow(Signal signal, int row, int y, ThicknessMap map) {
-        CandidateSearch search = new ExhaustiveSearch(curve, threshold);
-        Misfit misfit = new Misfit(curve);
-        Candidates candidates = new Candidates();
-        double[] parts = new double[2];
+    private void readRow(CurveIndex index, Signal signal, int row, int y, ThicknessMap map) {
+        CandidateSearch search = new GridSearch(index);
+        CandidateRow candidates = new CandidateRow(map.width());
         boolean[] out = excludedColumns(y, map.width());
         for (int x = 0; x < map.width(); x++) {
             int target = y * map.width() + x;
@@ -83,17 +83,22 @@ public final class FilmReader {
                 map.state()[target] = State.CLIPPED.code();
                 continue;
             }
-            search.find(signal.value(), signal.variance(), signal.limit(), pixel, candidates);
-            int best = candidates.likeliest();
-            if (best < 0) {
-                map.state()[target] = (dark(signal, pixel) ? State.DARK : State.OFF_CURVE).code();
+            int level = index.levels().level(signal.light()[pixel]);
+            candidates.clear();
+            search.find(signal.value(), signal.limit(), pixel, level, candidates);
+            if (candidates.size() == 0) {
+                map.state()[target] = (dark(index, signal, pixel) ? State.DARK : State.OFF_CURVE).code();
                 continue;
             }
-            misfit.load(signal.value(), signal.variance(), signal.limit(), pixel);
-            misfit.uncertainty(candidates.thickness(best), parts);
-            map.thickness()[target] = (float) candidates.thickness(best);
-            map.random()[target] = (float) parts[0];
-            map.systematic()[target] = (float) parts[1];
+            int best = 0;
+            for (int k = 1; k < candidates.size(); k++) {
+                best = candidates.cost(k) < candidates.cost(best) ? k : best;
+            }
+            float d = candidates.thickness(best);
+            TangentTable table = index.tables()[level];
+            map.thickness()[target] = d;
+            map.random()[target] = table.random(table.nearest(d));
+            map.systematic()[target] = table.systematic(table.nearest(d));
             map.state()[target] = State.READ.code();
         }
     }
@@ -118,10 +123,10 @@ public final class FilmReader {
         return true;
     }
 
-    private boolean dark(Signal signal, int pixel) {
+    private boolean dark(CurveIndex index, Signal signal, int pixel) {
         for (int c = 0; c < curve.channels(); c++) {
             int at = pixel * curve.channels() + c;
-            if (signal.value()[at] > DARK_SIGMAS * Math.sqrt(signal.variance()[at])) {
+            if (signal.value()[at] > DARK_SIGMAS * Math.sqrt(index.noise().variance(c, 0, signal.light()[pixel]))) {
                 return false;
             }
         }

@@ -1,0 +1,92 @@
+package iridepth.reading;
+
+import iridepth.curve.ColourCurve;
+
+/**
+ * A grid over channel space that tells for every cell which runs of the curve can lie within the chi-square threshold of a
+ * pixel in it.
+ *
+ * <p>chi^2 = r^T C^-1 r bounds a weighted sum of residuals, |w^T r| <= sqrt(chi^2 w^T C w) (Cauchy and Schwarz), so that the
+ * curve between two samples can only explain pixels in the box around it whose half-widths are these bounds, widened by how far
+ * the curve leaves its chord. Every cell that such a box touches lists the piece. A pixel outside the grid has no candidates.
+ *
+ * <p>A run is straight when chi-square, seen from any pixel of the cell, is convex along it: s'^T W s' > |s''|_W |r|_W with r
+ * as far as the cell and the threshold reach together. It then holds one minimum at most.
+ */
+final class CurveCells {
+    private static final int[] MOST_CELLS = {8192, 512, 96};
+
+    private final CellFrame frame;
+    /** [cell]: where its runs begin, one more entry at the end. */
+    private final int[] start;
+    /** Pairs of first and last sample; the last as its complement where the run is not straight. */
+    private final int[] runs;
+
+    private CurveCells(CellFrame frame, CellRuns lists) {
+        this.frame = frame;
+        this.start = lists.starts();
+        this.runs = lists.packed(start);
+    }
+
+    /**
+     * Builds the grid.
+     *
+     * @param light     the least light that a pixel has, where noise is greatest
+     * @param table     the samples to which runs refer
+     * @param threshold chi-square of the farthest candidates
+     */
+    static CurveCells of(ColourCurve curve, ExpectedNoise noise, double light, TangentTable table, double threshold) {
+        CellAxes axes = CellAxes.of(curve, noise);
+        CurveBoxes boxes = CurveBoxes.of(curve, noise, light, table, axes, threshold);
+        double[] edge = new double[axes.count()];
+        double reach = 1;
+        for (int i = 0; i < edge.length; i++) {
+            double finest = (boxes.most(i) - boxes.least(i)) / MOST_CELLS[edge.length - 1];
+            edge[i] = Math.max(boxes.halfWidth(i), finest);
+            reach = Math.max(reach, edge[i] / boxes.halfWidth(i));
+        }
+        reach = (1 + reach) * Math.sqrt(threshold * edge.length);
+        CellFrame frame = new CellFrame(axes, boxes.least(), boxes.most(), edge);
+        CellRuns lists = new CellRuns(frame.size());
+        for (int k = 0; k + 1 < table.size(); k++) {
+            boolean straight = isStraight(table, k, reach) && isStraight(table, k + 1, reach);
+            mark(frame, boxes, k, straight, lists);
+        }
+        return new CurveCells(frame, lists);
+    }
+
+    private static boolean isStraight(TangentTable table, int k, double reach) {
+        return table.information(k) > reach * Math.sqrt(table.bend(k));
+    }
+
+    private static void mark(CellFrame frame, CurveBoxes boxes, int k, boolean straight, CellRuns lists) {
+        int[] first = new int[CellAxes.MOST];
+        int[] last = new int[CellAxes.MOST];
+        for (int i = 0; i < boxes.axes(); i++) {
+            first[i] = frame.place(i, boxes.low(k, i));
+            last[i] = frame.place(i, boxes.high(k, i));
+        }
+        for (int a = first[0]; a <= last[0]; a++) {
+            for (int b = first[1]; b <= last[1]; b++) {
+                for (int c = first[2]; c <= last[2]; c++) {
+                    lists.add((a * frame.size(1) + b) * frame.size(2) + c, k, straight);
+                }
+            }
+        }
+    }
+
+    /** The cell of a pixel whose values begin at a place, or -1 outside the grid. */
+    int cell(float[] values, int at) {
+        return frame.cell(values, at);
+    }
+
+    /** Where the runs of a cell begin in {@link #runs}; those of cell + 1 begin where they end. */
+    int start(int cell) {
+        return start[cell];
+    }
+
+    /** First and last sample of each run, pair after pair; the last as its complement where the run is not straight. */
+    int[] runs() {
+        return runs;
+    }
+}
