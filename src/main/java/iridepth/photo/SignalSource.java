@@ -17,6 +17,8 @@ public final class SignalSource {
     private final Optional<ShadingField> flat;
     private final NoiseModel noise;
     private final int[] saturation;
+    private final double[] darkMean;
+    private final double[] flatMean;
 
     private SignalSource(PhotoFile photo, Encoding encoding, Optional<ShadingField> dark, Optional<ShadingField> flat,
             NoiseModel noise) {
@@ -26,6 +28,14 @@ public final class SignalSource {
         this.flat = flat;
         this.noise = noise;
         this.saturation = Saturation.of(photo, encoding);
+        this.darkMean = means(dark, photo.info().channels(), 0);
+        this.flatMean = means(flat, photo.info().channels(), 1);
+    }
+
+    private static double[] means(Optional<ShadingField> field, int channels, double otherwise) {
+        double[] means = new double[channels];
+        Arrays.setAll(means, c -> field.isPresent() ? field.get().mean(c) : otherwise);
+        return means;
     }
 
     /**
@@ -143,7 +153,7 @@ public final class SignalSource {
             }
             if (flat.isPresent()) {
                 flat.get().row(y, c, flatRow);
-                float weight = (float) (1 / (channels * flat.get().mean(c)));
+                float weight = (float) (1 / (channels * flatMean[c]));
                 for (int x = 0; x < width; x++) {
                     light[x] += weight * flatRow[x];
                 }
@@ -173,14 +183,13 @@ public final class SignalSource {
      *
      * @param channel 0 and up
      * @param value expected signal
-     * @param light light over its mean in the picture, above 0; see {@link Signal#light}
+     * @param light light over its mean in the picture, above 0, and 1 without a flat; see {@link Signal#light}
      * @return variance of the value, above 0
      */
     public double variance(int channel, double value, double light) {
-        double scale = flat.isPresent() ? flat.get().mean(channel) * light : 1;
+        double scale = flatMean[channel] * light;
         double signal = value * scale;
-        double black = dark.isPresent() ? dark.get().mean(channel) : 0;
-        return noise.variance(channel, signal, encoding.slope(channel, signal + black)) / (scale * scale);
+        return noise.variance(channel, signal, encoding.slope(channel, signal + darkMean[channel])) / (scale * scale);
     }
 
     /**
@@ -199,7 +208,7 @@ public final class SignalSource {
             for (int c = 0; c < channels; c++) {
                 flat.get().row(y, c, row);
                 for (int x = 0; x < row.length; x++) {
-                    light[x] += row[x] / (float) (channels * flat.get().mean(c));
+                    light[x] += row[x] / (float) (channels * flatMean[c]);
                 }
             }
             for (float l : light) {

@@ -11,16 +11,14 @@ import java.util.Arrays;
  */
 final class CandidateRow {
     /** Most that are kept for a pixel; the costliest are left out. */
-    static final int MOST = 200;
+    static final int MOST = 120;
 
-    private final byte[] count;
     private float[] thickness;
     private float[] cost;
     private int size;
     private int first;
 
     CandidateRow(int width) {
-        this.count = new byte[width];
         this.thickness = new float[2 * width + MOST];
         this.cost = new float[2 * width + MOST];
     }
@@ -53,20 +51,26 @@ final class CandidateRow {
         size--;
     }
 
-    /** Ends the pixel in work. */
-    void close(int x) {
-        count[x] = (byte) (size - first);
+    /** Ends the pixel in work; how many candidates it has. */
+    int close() {
+        int count = size - first;
         first = size;
+        return count;
     }
 
-    /** Number of candidates of a pixel. */
-    int count(int x) {
-        return count[x] & 0xff;
+    /** Takes back the candidates of the pixel in work. */
+    void withdraw() {
+        size = first;
     }
 
-    /** Number of candidates of all pixels. */
+    /** Number of candidates so far. */
     int size() {
         return size;
+    }
+
+    /** Number of candidates of the pixel in work. */
+    int pending() {
+        return size - first;
     }
 
     /** Thickness of a candidate by its place in the row, nm. */
@@ -77,5 +81,10 @@ final class CandidateRow {
     /** Cost of a candidate by its place in the row. */
     float cost(int place) {
         return cost[place];
+    }
+
+    /** A copy of all thicknesses. */
+    float[] thicknesses() {
+        return Arrays.copyOf(thickness, size);
     }
 }

@@ -42,6 +42,12 @@ final class GridSearch implements CandidateSearch {
                 return;
             }
         }
+        find(values, pixel, level, into);
+    }
+
+    /** Finds the candidates of a pixel without censored channels. */
+    void find(float[] values, int pixel, int level, CandidateRow into) {
+        int at = pixel * channels;
         int cell = cells.cell(values, at);
         if (cell < 0) {
             return;

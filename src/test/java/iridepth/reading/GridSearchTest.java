@@ -5,7 +5,6 @@ import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import iridepth.curve.ColourCurve;
 import java.util.Random;
-import org.apache.commons.math3.distribution.ChiSquaredDistribution;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
 
@@ -29,8 +28,7 @@ class GridSearchTest {
     }
 
     private static void compare(ColourCurve curve, ExpectedNoise noise) {
-        double threshold = new ChiSquaredDistribution(Math.max(1, curve.channels() - 1)).inverseCumulativeProbability(1 - 1e-6);
-        CurveIndex index = CurveIndex.of(curve, noise, LEVELS, threshold);
+        CurveIndex index = CurveIndex.of(curve, noise, LEVELS);
         ExhaustiveSearch exhaustive = new ExhaustiveSearch(index);
         GridSearch grid = new GridSearch(index);
         Misfit misfit = new Misfit(curve, noise);
