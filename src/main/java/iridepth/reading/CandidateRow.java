@@ -41,6 +41,13 @@ final class CandidateRow {
         cost[size++] = itsCost;
     }
 
+    /** Adds a candidate to the pixel in work unless it is the one added last. */
+    void addOnce(float thicknessNm, float itsCost) {
+        if (size == first || thicknessNm > thickness[size - 1]) {
+            add(thicknessNm, itsCost);
+        }
+    }
+
     private void dropCostliest() {
         int worst = first;
         for (int k = first + 1; k < size; k++) {

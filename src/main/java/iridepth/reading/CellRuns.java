@@ -10,7 +10,6 @@ final class CellRuns {
     private int[] previous = new int[1024];
     private int[] first = new int[1024];
     private int[] last = new int[1024];
-    private boolean[] straight = new boolean[1024];
     private int count;
 
     CellRuns(int cells) {
@@ -19,48 +18,58 @@ final class CellRuns {
     }
 
     /** Adds the piece from sample k to k + 1; pieces come in rising order. */
-    void add(int cell, int k, boolean isStraight) {
+    void add(int cell, int k) {
         int run = newest[cell];
         if (run != NONE && last[run] == k) {
             last[run] = k + 1;
-            straight[run] &= isStraight;
             return;
         }
         if (count == first.length) {
             previous = Arrays.copyOf(previous, 2 * count);
             first = Arrays.copyOf(first, 2 * count);
             last = Arrays.copyOf(last, 2 * count);
-            straight = Arrays.copyOf(straight, 2 * count);
         }
         previous[count] = run;
         first[count] = k;
         last[count] = k + 1;
-        straight[count] = isStraight;
         newest[cell] = count++;
     }
 
-    /** Where each cell's runs begin when pairs stand one after another, rising. */
+    /** Values a run takes when packed: first and last sample, and how slowly the curve goes. */
+    static final int PACKED = 3;
+
+    /** Where each cell's runs begin when they stand one after another, rising; one more entry at the end. */
     int[] starts() {
         int[] start = new int[newest.length + 1];
         int at = 0;
         for (int cell = 0; cell < newest.length; cell++) {
             start[cell] = at;
             for (int run = newest[cell]; run != NONE; run = previous[run]) {
-                at += 2;
+                at += PACKED;
             }
         }
         start[newest.length] = at;
         return start;
     }
 
-    /** The runs as pairs of first and last sample, the last as its complement where the run is not straight. */
-    int[] packed(int[] start) {
+    /** How slowly the curve goes along a run. */
+    @FunctionalInterface
+    interface Slowness {
+        /** 0 where the run is straight, else samples per standard deviation of the noise where the curve goes fastest. */
+        float of(int first, int last);
+    }
+
+    /** The runs of all cells. */
+    int[] packed(Slowness slowness) {
+        int[] start = starts();
         int[] packed = new int[start[newest.length]];
         for (int cell = 0; cell < newest.length; cell++) {
             int at = start[cell + 1];
             for (int run = newest[cell]; run != NONE; run = previous[run]) {
-                packed[--at] = straight[run] ? last[run] : ~last[run];
-                packed[--at] = first[run];
+                at -= PACKED;
+                packed[at] = first[run];
+                packed[at + 1] = last[run];
+                packed[at + 2] = Float.floatToIntBits(slowness.of(first[run], last[run]));
             }
         }
         return packed;

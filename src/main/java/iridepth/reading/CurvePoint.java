@@ -60,6 +60,17 @@ final class CurvePoint {
         return cholesky.quadratic(second, scratch);
     }
 
+    /** Curvature in the metric W, |s'' less its part along s'| / |s'|^2; infinite where s' vanishes. */
+    double curvature() {
+        double[] along = pull();
+        double information = information();
+        double product = 0;
+        for (int i = 0; i < n; i++) {
+            product += along[i] * second[i];
+        }
+        return Math.sqrt(Math.max(0, bend() - product * product / information)) / information;
+    }
+
     /** W s', 1/nm: how residuals pull at the thickness. Overwritten by the next call. */
     double[] pull() {
         cholesky.solve(first, pull);

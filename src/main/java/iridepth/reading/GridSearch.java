@@ -2,42 +2,43 @@ package iridepth.reading;
 
 /**
  * Finds candidates by the runs of the curve that a pixel's cell lists: in a straight run by Newton steps from sample to sample
- * until the nearest is found, in others by looking at every sample. Pixels with censored channels go to the exhaustive search.
+ * until the nearest is found, in others by looking along it. Pixels with censored channels go to the exhaustive search.
  */
 final class GridSearch implements CandidateSearch {
     private static final int HOPS = 8;
     /** A minimum may lie this many samples off the nearest one, since the tangents of neighbours differ a little. */
     private static final float SLACK = 0.6f;
+    /** Share of a distance that is skipped: the metric changes somewhat along the curve. */
+    private static final float SKIPPED = 0.8f;
+    /** Steps in which to look along a run, in standard deviations of the noise. */
+    private static final float STEP = 0.5f;
 
     private final TangentTable[] tables;
     private final CurveCells cells;
     private final float threshold;
-    private final int channels;
+    private final float reach;
+    private final TangentProbe probe;
     private final ExhaustiveSearch exhaustive;
-    private final float[] value;
-    private final float[] residual;
-    private float[] scan = new float[64];
+    private final int channels;
+    private final int size;
 
-    private TangentTable table;
-    private float[] samples;
-    private int stride;
     private CandidateRow result;
 
     GridSearch(CurveIndex index) {
         this.tables = index.tables();
         this.cells = index.cells();
         this.threshold = (float) index.threshold();
+        this.reach = (float) Math.sqrt(index.threshold());
         this.channels = index.curve().channels();
+        this.size = tables[0].size();
+        this.probe = channels == 3 ? new ThreeChannelProbe() : new AnyChannelProbe(channels);
         this.exhaustive = new ExhaustiveSearch(index);
-        this.value = new float[channels];
-        this.residual = new float[channels];
     }
 
     @Override
     public void find(float[] values, byte[] limits, int pixel, int level, CandidateRow into) {
-        int at = pixel * channels;
         for (int c = 0; c < channels; c++) {
-            if (limits[at + c] != 0) {
+            if (limits[pixel * channels + c] != 0) {
                 exhaustive.find(values, limits, pixel, level, into);
                 return;
             }
@@ -52,112 +53,89 @@ final class GridSearch implements CandidateSearch {
         if (cell < 0) {
             return;
         }
-        System.arraycopy(values, at, value, 0, channels);
-        table = tables[level];
-        samples = table.samples();
-        stride = table.stride();
-        result = into;
         int[] runs = cells.runs();
-        for (int i = cells.start(cell), end = cells.start(cell + 1); i < end; i += 2) {
-            if (runs[i + 1] >= 0) {
-                straight(runs[i], runs[i + 1]);
+        int i = cells.start(cell);
+        int end = cells.start(cell + 1);
+        if (i == end) {
+            return;
+        }
+        probe.load(tables[level], values, at);
+        result = into;
+        for (; i < end; i += CellRuns.PACKED) {
+            if (runs[i + 2] == 0) {
+                int k = probe.nearest(runs[i], runs[i + 1], HOPS);
+                accept(k, probe.distance(k));
             } else {
-                folded(runs[i], ~runs[i + 1]);
+                look(runs[i], runs[i + 1], Float.intBitsToFloat(runs[i + 2]));
             }
         }
-    }
-
-    /** Distance to the nearest thickness along the tangent of a sample, in samples; leaves the residual. */
-    private float distance(int k) {
-        int at = k * stride;
-        float t = 0;
-        for (int c = 0; c < channels; c++) {
-            residual[c] = value[c] - samples[at + c];
-            t += residual[c] * samples[at + channels + c];
-        }
-        return t;
-    }
-
-    /** Chi-square at the nearest thickness along the tangent of a sample, from the residual that {@link #distance} left. */
-    private float least(int k) {
-        int at = k * stride + 2 * channels;
-        float sum = 0;
-        for (int i = 0; i < channels; i++) {
-            for (int j = i; j < channels; j++) {
-                sum += samples[at++] * residual[i] * residual[j];
-            }
-        }
-        return sum;
-    }
-
-    private void straight(int first, int last) {
-        int k = (first + last) >>> 1;
-        float t = distance(k);
-        for (int hop = 0; hop < HOPS; hop++) {
-            int next = step(k, t, first, last);
-            if (next == k) {
-                break;
-            }
-            k = next;
-            t = distance(k);
-        }
-        accept(k, t);
-    }
-
-    /** The sample nearest to t samples beyond k, inside the run. */
-    private static int step(int k, float t, int first, int last) {
-        float place = k + t + 0.5f;
-        return place < first ? first : place > last ? last : (int) place;
     }
 
     /** Keeps the minimum t samples beyond k, unless it lies beyond what k stands for or does not explain the pixel. */
     private void accept(int k, float t) {
         float held = t;
-        if (k == 0 && t < 0 || k == table.size() - 1 && t > 0) {
+        if (k == 0 && t < 0 || k == size - 1 && t > 0) {
             held = 0;
         } else if (t < -SLACK || t > SLACK) {
             return;
         }
-        float beside = t - held;
-        float chiSquare = least(k) + beside * beside * samples[k * stride + stride - 2];
+        float chiSquare = probe.chiSquare(k, held);
         if (chiSquare <= threshold) {
-            result.add((float) table.thickness(k + held), chiSquare + samples[k * stride + stride - 1]);
+            result.add((float) probe.table().thickness(k + held), chiSquare + probe.table().logDeterminant(k));
         }
     }
 
-    /** Looks at every sample of a run and places each minimum by the parabola through its neighbours. */
-    private void folded(int first, int last) {
-        int count = last - first + 1;
-        if (scan.length < count) {
-            scan = new float[Math.max(count, 2 * scan.length)];
-        }
-        for (int i = 0; i < count; i++) {
-            float t = distance(first + i);
-            scan[i] = least(first + i) + t * t * samples[(first + i) * stride + stride - 2];
-        }
-        for (int i = 0; i < count; i++) {
-            int k = first + i;
-            boolean atStart = k == 0;
-            boolean atEnd = k == table.size() - 1;
-            if ((i == 0 ? !atStart : scan[i] >= scan[i - 1]) || (i == count - 1 ? !atEnd : scan[i] > scan[i + 1])) {
-                continue;
+    /**
+     * Looks along a run, at a stride where a candidate can be and in leaps where it is far: the root of chi-square falls no
+     * faster than the length of the curve that is passed.
+     */
+    private void look(int first, int last, float slowness) {
+        int stride = (int) Math.max(1, STEP * slowness);
+        int k = first;
+        int lowest = first;
+        float least = Float.POSITIVE_INFINITY;
+        boolean falling = false;
+        while (true) {
+            float here = probe.chiSquare(k);
+            if (falling && here >= least) {
+                settle(lowest);
             }
-            if (atStart || atEnd) {
-                float t = distance(k);
-                accept(k, atStart ? Math.min(t, SLACK) : Math.max(t, -SLACK));
-            } else {
-                acceptParabola(k, scan[i - 1], scan[i], scan[i + 1]);
+            falling = here < least;
+            least = here;
+            lowest = k;
+            if (k == last) {
+                break;
             }
+            int step = here <= threshold ? stride : Math.max(stride, (int) (((float) Math.sqrt(here) - reach) * SKIPPED * slowness));
+            k = Math.min(last, k + step);
+        }
+        if (falling && last == size - 1) {
+            settle(last);
         }
     }
 
-    private void acceptParabola(int k, float before, float here, float after) {
-        float rise = after - before;
+    /** Walks down to the minimum near a sample and places it by the parabola through its neighbours. */
+    private void settle(int near) {
+        int k = near;
+        float here = probe.chiSquare(k);
+        while (k > 0 && probe.chiSquare(k - 1) < here) {
+            here = probe.chiSquare(--k);
+        }
+        while (k < size - 1 && probe.chiSquare(k + 1) < here) {
+            here = probe.chiSquare(++k);
+        }
+        if (k == 0 || k == size - 1) {
+            float t = probe.distance(k);
+            accept(k, k == 0 ? Math.min(t, SLACK) : Math.max(t, -SLACK));
+            return;
+        }
+        float before = probe.chiSquare(k - 1);
+        float after = probe.chiSquare(k + 1);
         float bend = after - 2 * here + before;
-        float t = bend > 0 ? -rise / (2 * bend) : 0;
-        float chiSquare = Math.max(0, here + rise * t / 4);
+        float t = bend > 0 ? (before - after) / (2 * bend) : 0;
+        float chiSquare = Math.max(0, here - (before - after) * t / 4);
         if (chiSquare <= threshold) {
-            result.add((float) table.thickness(k + t), chiSquare + samples[k * stride + stride - 1]);
+            result.addOnce((float) probe.table().thickness(k + t), chiSquare + probe.table().logDeterminant(k));
         }
     }
 }

@@ -30,18 +30,18 @@ final class TangentTable {
     private final float[] samples;
     private final float[] random;
     private final float[] systematic;
-    private final float[] bend;
+    private final float[] curvature;
 
     private TangentTable(ColourCurve curve, int finer) {
         this.channels = curve.channels();
         this.size = (curve.size() - 1) * finer + 1;
-        this.stride = 2 * channels + channels * (channels + 1) / 2 + 2;
+        this.stride = stride(channels);
         this.fromNm = curve.fromNm();
         this.stepNm = curve.stepNm() / finer;
         this.samples = new float[size * stride];
         this.random = new float[size];
         this.systematic = new float[size];
-        this.bend = new float[size];
+        this.curvature = new float[size];
     }
 
     /** The table of a curve at a light, with the samples of the curve divided so many times. */
@@ -81,9 +81,9 @@ final class TangentTable {
         return size;
     }
 
-    /** Values a sample takes in {@link #samples}. */
-    int stride() {
-        return stride;
+    /** Values that a sample takes in {@link #samples}. */
+    static int stride(int channels) {
+        return 2 * channels + channels * (channels + 1) / 2 + 2;
     }
 
     /** The samples themselves: not to be changed. */
@@ -117,9 +117,9 @@ final class TangentTable {
         return samples[sample * stride + stride - 2];
     }
 
-    /** s''^T W s'' at a sample, per fourth power of a sample. */
-    double bend(int sample) {
-        return bend[sample];
+    /** Curvature of the curve at a sample: the reciprocal of its radius in standard deviations of the noise. */
+    double curvature(int sample) {
+        return curvature[sample];
     }
 
     /** Random part of the standard uncertainty at a sample, nm. */
@@ -154,7 +154,7 @@ final class TangentTable {
         }
         samples[at++] = (float) (flat ? 0 : a);
         samples[at] = (float) point.logDeterminant();
-        bend[k] = (float) (point.bend() * h * h * h * h);
+        curvature[k] = (float) point.curvature();
         double total = 2 / (information + Math.sqrt(information * information + point.bend()));
         double share = information > 0 ? Math.min(1, point.noiseIn(pull) / information) : 1;
         random[k] = (float) Math.sqrt(total * share);

@@ -49,7 +49,7 @@ class GridSearchTest {
             found += expected.size();
         }
         assertTrue(found > PIXELS / 3, "candidates found: " + found);
-        assertTrue(doubtful <= 0.04 * found, doubtful + " pixels with a candidate at an edge, of " + found);
+        assertTrue(doubtful <= 0.06 * found, doubtful + " pixels with a candidate at an edge, of " + found);
     }
 
     /** A pixel of the film with noise, sometimes far too much of it, or one of any colour. */
@@ -84,7 +84,7 @@ class GridSearchTest {
             count++;
             double chiSquare = misfit.chiSquare(d);
             boolean nearThreshold = chiSquare > 0.96 * index.threshold();
-            boolean merging = j >= 0 && misfit.chiSquare((others.thickness(j) + d) / 2) < chiSquare + 0.1;
+            boolean merging = j >= 0 && misfit.chiSquare((others.thickness(j) + d) / 2) < chiSquare + 0.3;
             assertTrue(nearThreshold || merging, "missing " + d + " nm with chi-square " + chiSquare + " of " + index.threshold()
                     + "; " + (j < 0 ? "none" : "nearest " + others.thickness(j)) + "; u " + u);
         }

@@ -47,7 +47,7 @@ record SimulatedPhoto(SignalSource signal, ColourCurve curve, Scene scene, doubl
         return new SimulatedPhoto(signal, curve(scene), scene, files.truth());
     }
 
-    private static ColourCurve curve(Scene scene) {
+    static ColourCurve curve(Scene scene) {
         Materials materials = new Materials(Map.of("resist", Material.constant("resist", 1.60, 0)));
         Stack stack = Stack.parse(scene.stack().text(), materials);
         Stack flat = Stack.parse(scene.flatStack().text(), materials);
