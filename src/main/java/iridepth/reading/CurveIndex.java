@@ -25,10 +25,10 @@ record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, do
         ChiSquaredDistribution chiSquare = new ChiSquaredDistribution(Math.max(1, curve.channels() - 1));
         double threshold = chiSquare.inverseCumulativeProbability(1 - CANDIDATE_PROBABILITY);
         double acceptance = chiSquare.inverseCumulativeProbability(1 - OFF_CURVE_PROBABILITY);
-        int finer = TangentTable.division(curve, noise, levels.light(levels.count() - 1));
+        CurveSampling sampling = CurveSampling.of(curve, noise, levels.light(levels.count() - 1));
         TangentTable[] tables = new TangentTable[levels.count()];
         IntStream.range(0, tables.length).parallel()
-                .forEach(i -> tables[i] = TangentTable.of(curve, noise, levels.light(i), finer));
+                .forEach(i -> tables[i] = TangentTable.of(curve, noise, levels.light(i), sampling));
         CurveCells cells = CurveCells.of(curve, noise, levels.light(0), tables[0], threshold);
         return new CurveIndex(curve, noise, levels, threshold, acceptance, tables, cells);
     }

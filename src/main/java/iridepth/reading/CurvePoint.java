@@ -60,8 +60,11 @@ final class CurvePoint {
         return cholesky.quadratic(second, scratch);
     }
 
-    /** Curvature in the metric W, |s'' less its part along s'| / |s'|^2; infinite where s' vanishes. */
+    /** Curvature in the metric W, |s'' less its part along s'| / |s'|^2; 0 with one channel, where there is but one way. */
     double curvature() {
+        if (n == 1) {
+            return 0;
+        }
         double[] along = pull();
         double information = information();
         double product = 0;

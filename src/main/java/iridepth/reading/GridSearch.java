@@ -10,9 +10,6 @@ final class GridSearch implements CandidateSearch {
     private static final float SLACK = 0.6f;
     /** Share of a distance that is skipped: the metric changes somewhat along the curve. */
     private static final float SKIPPED = 0.8f;
-    /** Steps in which to look along a run, in standard deviations of the noise. */
-    private static final float STEP = 0.5f;
-
     private final TangentTable[] tables;
     private final CurveCells cells;
     private final float threshold;
@@ -81,16 +78,15 @@ final class GridSearch implements CandidateSearch {
         }
         float chiSquare = probe.chiSquare(k, held);
         if (chiSquare <= threshold) {
-            result.add((float) probe.table().thickness(k + held), chiSquare + probe.table().logDeterminant(k));
+            result.add((float) probe.table().thickness(k, held), chiSquare + probe.table().logDeterminant(k));
         }
     }
 
     /**
-     * Looks along a run, at a stride where a candidate can be and in leaps where it is far: the root of chi-square falls no
+     * Looks along a run, at every sample where a candidate can be and in leaps where it is far: the root of chi-square falls no
      * faster than the length of the curve that is passed.
      */
     private void look(int first, int last, float slowness) {
-        int stride = (int) Math.max(1, STEP * slowness);
         int k = first;
         int lowest = first;
         float least = Float.POSITIVE_INFINITY;
@@ -106,7 +102,7 @@ final class GridSearch implements CandidateSearch {
             if (k == last) {
                 break;
             }
-            int step = here <= threshold ? stride : Math.max(stride, (int) (((float) Math.sqrt(here) - reach) * SKIPPED * slowness));
+            int step = here <= threshold ? 1 : Math.max(1, (int) (((float) Math.sqrt(here) - reach) * SKIPPED * slowness));
             k = Math.min(last, k + step);
         }
         if (falling && last == size - 1) {
@@ -135,7 +131,7 @@ final class GridSearch implements CandidateSearch {
         float t = bend > 0 ? (before - after) / (2 * bend) : 0;
         float chiSquare = Math.max(0, here - (before - after) * t / 4);
         if (chiSquare <= threshold) {
-            result.addOnce((float) probe.table().thickness(k + t), chiSquare + probe.table().logDeterminant(k));
+            result.addOnce((float) probe.table().thickness(k, t), chiSquare + probe.table().logDeterminant(k));
         }
     }
 }

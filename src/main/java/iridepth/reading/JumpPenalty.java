@@ -13,14 +13,15 @@ final class JumpPenalty {
     static final float TRUNCATION = 9;
     private static final double PIXELS_PER_FRINGE = 16;
 
-    private final float fromNm;
-    private final float perNm;
+    /** Samples of a colour curve per finest fringe; see {@link iridepth.curve.ThicknessRange#step}. */
+    private static final double SAMPLES_PER_FRINGE = 64;
+
+    private final TangentTable table;
     /** 1 / (q^2 + 2 u^2) at each sample of the curve, 1/nm^2. */
     private final float[] stiffness;
 
     private JumpPenalty(TangentTable table, double q) {
-        this.fromNm = (float) table.thickness(0);
-        this.perNm = (float) (1 / (table.thickness(1) - table.thickness(0)));
+        this.table = table;
         this.stiffness = new float[table.size()];
         for (int k = 0; k < stiffness.length; k++) {
             stiffness[k] = (float) (1 / (q * q + 2 * table.random(k) * table.random(k)));
@@ -32,12 +33,8 @@ final class JumpPenalty {
         return new JumpPenalty(index.tables()[index.tables().length / 2], fringe / PIXELS_PER_FRINGE);
     }
 
-    /** Samples of a colour curve per finest fringe; see {@link iridepth.curve.ThicknessRange#step}. */
-    private static final double SAMPLES_PER_FRINGE = 64;
-
     /** 1 / (q^2 + 2 u^2) at a thickness, 1/nm^2. */
     float stiffness(float thicknessNm) {
-        int k = (int) ((thicknessNm - fromNm) * perNm + 0.5f);
-        return stiffness[k < 0 ? 0 : Math.min(k, stiffness.length - 1)];
+        return stiffness[table.nearest(thicknessNm)];
     }
 }

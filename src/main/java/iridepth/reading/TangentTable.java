@@ -7,8 +7,7 @@ import iridepth.curve.ColourCurve;
  *
  * <p>At sample k, with r = v - s_k, W = C^-1, g = W s', A = s'^T W s' and h the spacing of the samples, the nearest thickness
  * lies t = q . r samples on, q = g / (A h), and chi-square there is r^T M r with M = W - g g^T / A; t samples beside it
- * chi-square is larger by a t^2 with a = A h^2. The spacing is such that the curve leaves its tangent by no more than a tenth
- * of the noise half a sample on.
+ * chi-square is larger by a t^2 with a = A h^2.
  *
  * <p>Standard uncertainty: the reading is the generalised least-squares estimate q . r, so its random part has the variance
  * g^T N g / A^2 and its systematic part g^T S g / A^2 (JCGM 100, 5.1). Where the curve turns back on itself A vanishes; there
@@ -16,60 +15,37 @@ import iridepth.curve.ColourCurve;
  * of 1 / sqrt(A).
  */
 final class TangentTable {
-    private static final double STRAIGHT = 0.1;
-    private static final int FINEST = 16;
     /** Below this a the tangent does not tell where the minimum lies. */
     private static final double FLAT = 1e-9;
 
     private final int channels;
-    private final int size;
     private final int stride;
-    private final double fromNm;
-    private final double stepNm;
+    private final CurveSampling sampling;
     /** [sample * stride]: signal, q, M by its upper triangle with the other elements doubled, a, ln det C. */
     private final float[] samples;
     private final float[] random;
     private final float[] systematic;
     private final float[] curvature;
 
-    private TangentTable(ColourCurve curve, int finer) {
-        this.channels = curve.channels();
-        this.size = (curve.size() - 1) * finer + 1;
+    private TangentTable(int channels, CurveSampling sampling) {
+        this.channels = channels;
         this.stride = stride(channels);
-        this.fromNm = curve.fromNm();
-        this.stepNm = curve.stepNm() / finer;
-        this.samples = new float[size * stride];
-        this.random = new float[size];
-        this.systematic = new float[size];
-        this.curvature = new float[size];
+        this.sampling = sampling;
+        this.samples = new float[sampling.size() * stride];
+        this.random = new float[sampling.size()];
+        this.systematic = new float[sampling.size()];
+        this.curvature = new float[sampling.size()];
     }
 
-    /** The table of a curve at a light, with the samples of the curve divided so many times. */
-    static TangentTable of(ColourCurve curve, ExpectedNoise noise, double light, int finer) {
-        TangentTable table = new TangentTable(curve, finer);
+    /** The table of a curve at a light. */
+    static TangentTable of(ColourCurve curve, ExpectedNoise noise, double light, CurveSampling sampling) {
+        TangentTable table = new TangentTable(curve.channels(), sampling);
         CurvePoint point = new CurvePoint(curve, noise, light);
-        for (int k = 0; k < table.size; k++) {
-            point.moveTo(table.thickness(k));
+        for (int k = 0; k < sampling.size(); k++) {
+            point.moveTo(sampling.thickness(k));
             table.store(k, point);
         }
         return table;
-    }
-
-    /** How many times the samples of the curve must be divided at a light for tangents to do. */
-    static int division(ColourCurve curve, ExpectedNoise noise, double light) {
-        CurvePoint point = new CurvePoint(curve, noise, light);
-        double worst = 0;
-        for (int k = 0; k < curve.size(); k++) {
-            point.moveTo(curve.thickness(k));
-            worst = Math.max(worst, point.bend());
-        }
-        double half = curve.stepNm() / 2;
-        double sagitta = Math.sqrt(worst) * half * half / 2;
-        int finer = 1;
-        while (finer < FINEST && sagitta / (finer * finer) > STRAIGHT) {
-            finer *= 2;
-        }
-        return finer;
     }
 
     int channels() {
@@ -78,7 +54,7 @@ final class TangentTable {
 
     /** Number of samples. */
     int size() {
-        return size;
+        return sampling.size();
     }
 
     /** Values that a sample takes in {@link #samples}. */
@@ -91,15 +67,19 @@ final class TangentTable {
         return samples;
     }
 
-    /** Thickness at a sample, or between, nm. */
-    double thickness(double sample) {
-        return fromNm + stepNm * sample;
+    /** Thickness at a sample, nm. */
+    double thickness(int k) {
+        return sampling.thickness(k);
+    }
+
+    /** Thickness at less than a sample's spacing beyond a sample, nm. */
+    double thickness(int k, float t) {
+        return sampling.thickness(k) + t * sampling.spacing(k);
     }
 
     /** The sample nearest to a thickness. */
     int nearest(float thicknessNm) {
-        int k = (int) ((thicknessNm - fromNm) / stepNm + 0.5);
-        return k < 0 ? 0 : Math.min(k, size - 1);
+        return sampling.nearest(thicknessNm);
     }
 
     /** Signal of a channel at a sample. */
@@ -134,7 +114,7 @@ final class TangentTable {
 
     private void store(int k, CurvePoint point) {
         int n = channels;
-        double h = stepNm;
+        double h = sampling.spacing(k);
         double[] inverse = point.inverse();
         double[] pull = point.pull();
         double information = point.information();
