@@ -17,6 +17,7 @@ final class CandidateRow {
     private float[] cost;
     private int size;
     private int first;
+    private boolean explained;
 
     CandidateRow(int width) {
         this.thickness = new float[2 * width + MOST];
@@ -26,10 +27,16 @@ final class CandidateRow {
     void clear() {
         size = 0;
         first = 0;
+        explained = false;
     }
 
-    /** Adds a candidate to the pixel in work. */
-    void add(float thicknessNm, float itsCost) {
+    /**
+     * Adds a candidate to the pixel in work.
+     *
+     * @param explains whether it passes the off-curve test
+     */
+    void add(float thicknessNm, float itsCost, boolean explains) {
+        explained |= explains;
         if (size == thickness.length) {
             thickness = Arrays.copyOf(thickness, 2 * size);
             cost = Arrays.copyOf(cost, 2 * size);
@@ -42,9 +49,9 @@ final class CandidateRow {
     }
 
     /** Adds a candidate to the pixel in work unless it is the one added last. */
-    void addOnce(float thicknessNm, float itsCost) {
+    void addOnce(float thicknessNm, float itsCost, boolean explains) {
         if (size == first || thicknessNm > thickness[size - 1]) {
-            add(thicknessNm, itsCost);
+            add(thicknessNm, itsCost, explains);
         }
     }
 
@@ -62,12 +69,14 @@ final class CandidateRow {
     int close() {
         int count = size - first;
         first = size;
+        explained = false;
         return count;
     }
 
     /** Takes back the candidates of the pixel in work. */
     void withdraw() {
         size = first;
+        explained = false;
     }
 
     /** Number of candidates so far. */
@@ -75,9 +84,9 @@ final class CandidateRow {
         return size;
     }
 
-    /** Number of candidates of the pixel in work. */
-    int pending() {
-        return size - first;
+    /** Whether a candidate of the pixel in work passes the off-curve test. */
+    boolean explained() {
+        return explained;
     }
 
     /** Thickness of a candidate by its place in the row, nm. */

@@ -1,13 +1,14 @@
 package iridepth.reading;
 
 import iridepth.curve.ColourCurve;
+import java.util.Arrays;
 
 /**
  * The thicknesses at which a curve is tabulated: as far apart as its noise allows.
  *
  * <p>From one sample to the next the curve moves by 1.5 standard deviations of the noise at most, and half way between them
  * it leaves their tangents by 0.1, |s''|_W h^2 / 8, unless that asks for spacings outside a sixteenth to four times that of the
- * curve's own samples. The spacing changes gradually. Place counts samples and runs on between them.
+ * curve's own samples. The spacing changes gradually.
  */
 final class CurveSampling {
     private static final double STRAIGHT = 0.1;
@@ -16,18 +17,16 @@ final class CurveSampling {
     private static final double COARSEST = 4;
     /** Most change of the spacing along as much thickness. */
     private static final double GRADUAL = 0.1;
+    private static final int PER_SPACING = 3;
 
-    private final double fromNm;
-    private final double perNm;
-    /** Place of each sample of the curve. */
-    private final double[] place;
-    /** Thickness at each whole place. */
     private final double[] thickness;
+    private final float fromNm;
+    private final float perNm;
+    /** The sample nearest to each of many thicknesses, even and finer than the samples. */
+    private final int[] nearest;
 
     private CurveSampling(ColourCurve curve, double[] spacing) {
-        this.fromNm = curve.fromNm();
-        this.perNm = 1 / curve.stepNm();
-        this.place = new double[curve.size()];
+        double[] place = new double[curve.size()];
         for (int i = 1; i < place.length; i++) {
             place[i] = place[i - 1] + curve.stepNm() * (1 / spacing[i - 1] + 1 / spacing[i]) / 2;
         }
@@ -39,11 +38,23 @@ final class CurveSampling {
         place[place.length - 1] = last;
         this.thickness = new double[last + 1];
         int i = 0;
-        for (int k = 0; k <= last; k++) {
-            while (i < place.length - 2 && place[i + 1] < k) {
+        for (int n = 0; n <= last; n++) {
+            while (i < place.length - 2 && place[i + 1] < n) {
                 i++;
             }
-            thickness[k] = fromNm + (i + (k - place[i]) / (place[i + 1] - place[i])) * curve.stepNm();
+            thickness[n] = curve.fromNm() + (i + (n - place[i]) / (place[i + 1] - place[i])) * curve.stepNm();
+        }
+        double pitch = Arrays.stream(spacing).min().orElseThrow() / PER_SPACING;
+        this.fromNm = (float) curve.fromNm();
+        this.perNm = (float) (1 / pitch);
+        this.nearest = new int[(int) ((curve.toNm() - curve.fromNm()) / pitch) + 1];
+        int k = 0;
+        for (int j = 0; j < nearest.length; j++) {
+            double d = curve.fromNm() + (j + 0.5) * pitch;
+            while (k < last && thickness[k + 1] - d < d - thickness[k]) {
+                k++;
+            }
+            nearest[j] = k;
         }
     }
 
@@ -83,11 +94,9 @@ final class CurveSampling {
         return (thickness[high] - thickness[low]) / (high - low);
     }
 
-    /** The sample nearest to a thickness. */
+    /** The sample nearest to a thickness; between two samples either. */
     int nearest(float thicknessNm) {
-        double at = (thicknessNm - fromNm) * perNm;
-        int i = Math.max(0, Math.min(place.length - 2, (int) at));
-        int k = (int) (place[i] + (at - i) * (place[i + 1] - place[i]) + 0.5);
-        return Math.max(0, Math.min(thickness.length - 1, k));
+        int j = (int) ((thicknessNm - fromNm) * perNm);
+        return nearest[j < 0 ? 0 : Math.min(j, nearest.length - 1)];
     }
 }

@@ -6,22 +6,20 @@ package iridepth.reading;
  */
 final class ExhaustiveSearch implements CandidateSearch {
     private final TangentTable table;
-    private final LightLevels levels;
-    private final double threshold;
+    private final CurveIndex index;
     private final Misfit misfit;
     private final double[] scan;
 
     ExhaustiveSearch(CurveIndex index) {
         this.table = index.tables()[0];
-        this.levels = index.levels();
-        this.threshold = index.threshold();
+        this.index = index;
         this.misfit = new Misfit(index.curve(), index.noise());
         this.scan = new double[table.size()];
     }
 
     @Override
     public void find(float[] values, byte[] limits, int pixel, int level, CandidateRow result) {
-        misfit.load(values, limits, pixel, levels.light(level));
+        misfit.load(values, limits, pixel, index.levels().light(level));
         for (int k = 0; k < scan.length; k++) {
             scan[k] = misfit.chiSquare(table.thickness(k));
         }
@@ -30,8 +28,9 @@ final class ExhaustiveSearch implements CandidateSearch {
             boolean risesToRight = k == scan.length - 1 || scan[k] <= scan[k + 1];
             if (fallsFromLeft && risesToRight) {
                 double d = misfit.minimum(table.thickness(Math.max(k - 1, 0)), table.thickness(Math.min(k + 1, scan.length - 1)));
-                if (misfit.chiSquare(d) <= threshold) {
-                    result.add((float) d, (float) misfit.cost(d));
+                double chiSquare = misfit.chiSquare(d);
+                if (chiSquare <= index.threshold()) {
+                    result.add((float) d, (float) misfit.cost(d), chiSquare <= index.acceptance());
                 }
             }
         }

@@ -13,6 +13,7 @@ final class GridSearch implements CandidateSearch {
     private final TangentTable[] tables;
     private final CurveCells cells;
     private final float threshold;
+    private final float acceptance;
     private final float reach;
     private final TangentProbe probe;
     private final ExhaustiveSearch exhaustive;
@@ -25,6 +26,7 @@ final class GridSearch implements CandidateSearch {
         this.tables = index.tables();
         this.cells = index.cells();
         this.threshold = (float) index.threshold();
+        this.acceptance = (float) index.acceptance();
         this.reach = (float) Math.sqrt(index.threshold());
         this.channels = index.curve().channels();
         this.size = tables[0].size();
@@ -78,7 +80,8 @@ final class GridSearch implements CandidateSearch {
         }
         float chiSquare = probe.chiSquare(k, held);
         if (chiSquare <= threshold) {
-            result.add((float) probe.table().thickness(k, held), chiSquare + probe.table().logDeterminant(k));
+            result.add((float) probe.table().thickness(k, held), chiSquare + probe.table().logDeterminant(k),
+                    chiSquare <= acceptance);
         }
     }
 
@@ -131,7 +134,8 @@ final class GridSearch implements CandidateSearch {
         float t = bend > 0 ? (before - after) / (2 * bend) : 0;
         float chiSquare = Math.max(0, here - (before - after) * t / 4);
         if (chiSquare <= threshold) {
-            result.addOnce((float) probe.table().thickness(k, t), chiSquare + probe.table().logDeterminant(k));
+            result.addOnce((float) probe.table().thickness(k, t), chiSquare + probe.table().logDeterminant(k),
+                    chiSquare <= acceptance);
         }
     }
 }

@@ -71,8 +71,7 @@ final class RowReader {
 
     /** Ends a pixel: keeps the costs of its candidates if there are several, and judges it if there is none. */
     private void close(int x) {
-        int end = found.size();
-        if (!isExplained(found.size() - found.pending(), end, level[x])) {
+        if (!found.explained()) {
             found.withdraw();
             kind[x] = (byte) ~(isDark(x) ? State.DARK : State.OFF_CURVE).code();
             return;
@@ -83,20 +82,10 @@ final class RowReader {
             if (open + count > cost.length) {
                 cost = Arrays.copyOf(cost, 2 * cost.length);
             }
-            for (int k = end - count; k < end; k++) {
+            for (int k = found.size() - count; k < found.size(); k++) {
                 cost[open++] = found.cost(k);
             }
         }
-    }
-
-    /** Whether one of the candidates passes the off-curve test. */
-    private boolean isExplained(int from, int to, int itsLevel) {
-        for (int k = from; k < to; k++) {
-            if (index.explains(found.thickness(k), found.cost(k), itsLevel)) {
-                return true;
-            }
-        }
-        return false;
     }
 
     private boolean[] excludedColumns(int y) {
