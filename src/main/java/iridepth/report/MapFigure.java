@@ -150,8 +150,8 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
         double scale = enlarge * perUnit / cells.factor();
         double columns = cells.columns() * enlarge / scale;
         double rows = cells.rows() * enlarge / scale;
-        Ticks xs = Ticks.of(0, columns, Math.max(2, cells.columns() * enlarge / 110));
-        Ticks ys = Ticks.of(0, rows, Math.max(2, cells.rows() * enlarge / 70));
+        Ticks xs = Ticks.of(0, columns, Math.max(1, cells.columns() * enlarge / 110));
+        Ticks ys = Ticks.of(0, rows, Math.max(1, cells.rows() * enlarge / 70));
         int bottom = top + cells.rows() * enlarge;
         picture.font(Picture.TEXT, false);
         for (double v : xs.at()) {
