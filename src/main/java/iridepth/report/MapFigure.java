@@ -33,6 +33,18 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
     private static final double BEYOND = 0.001;
 
     /**
+     * Loads letters and drawing code, which takes some 150 ms in a fresh process: call it on a thread of its own while the map
+     * is being read. Figures need no such call.
+     */
+    public static void prepare() {
+        Picture picture = new Picture(1, 1);
+        picture.font(Picture.TEXT, false);
+        picture.text("0", 0, 0, Picture.Align.LEFT, Picture.INK);
+        picture.line(0, 0, 1, 1, Picture.INK, 1);
+        ColourScale.thickness();
+    }
+
+    /**
      * A figure whose scale spans the thicknesses in the map, but for a thousandth of the cells at either end; rounded outwards.
      */
     public static MapFigure of(String title, MapCells cells, double pixelUm) {
