@@ -135,16 +135,9 @@ public final class MapFolder implements AutoCloseable {
         state.close();
         MapFigure.of(title, cells, pixelUm).write(folder.file("thickness.png"));
         Histogram histogram = Histogram.of(distribution);
-        new HistogramFigure(title, List.of(words()), histogram, distribution, tolerance).write(folder.file("histogram.png"));
-        table(histogram, title).write(folder.file("histogram.csv"));
-    }
-
-    private static CsvTable table(Histogram histogram, String title) {
-        CsvTable table = CsvTable.of(List.of("thickness histogram of " + title), List.of("from_nm", "to_nm", "pixels"));
-        for (int i = 0; i < histogram.bins(); i++) {
-            table.row(histogram.edge(i), histogram.edge(i + 1), histogram.count(i));
-        }
-        return table;
+        HistogramFigure figure = new HistogramFigure(title, List.of(words()), histogram, distribution, tolerance);
+        figure.write(folder.file("histogram.png"));
+        figure.csv().write(folder.file("histogram.csv"));
     }
 
     /** The counts of all states that occur, in words. */
