@@ -3,6 +3,7 @@ package iridepth.app.cli;
 import iridepth.photo.PhotoException;
 import iridepth.recipe.RecipeException;
 import iridepth.report.OutputException;
+import java.io.PrintWriter;
 import java.util.Locale;
 import picocli.CommandLine;
 import picocli.CommandLine.Command;
@@ -46,14 +47,14 @@ public final class Iridepth {
     /** Runs a command and leaves with its exit code. */
     public static void main(String[] args) {
         System.setProperty("java.awt.headless", "true");
-        System.exit(run(args));
+        System.exit(run(new PrintWriter(System.out, true), new PrintWriter(System.err, true), args));
     }
 
     /** Runs a command and returns its exit code. */
-    static int run(String... args) {
+    static int run(PrintWriter out, PrintWriter err, String... args) {
         Locale.setDefault(Locale.ROOT);
         Iridepth program = new Iridepth();
-        CommandLine line = new CommandLine(program);
+        CommandLine line = new CommandLine(program).setOut(out).setErr(err);
         line.setParameterExceptionHandler((e, given) -> {
             e.getCommandLine().getErr().println(e.getCommandLine().getCommandName() + ": " + firstLine(e.getMessage())
                     + " (see --help)");
