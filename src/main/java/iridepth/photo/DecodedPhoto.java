@@ -63,7 +63,7 @@ final class DecodedPhoto implements PhotoReader {
         } catch (IndexOutOfBoundsException | IllegalArgumentException e) {
             throw new IIOException(String.valueOf(e.getMessage()), e);
         } catch (IIOException e) {
-            if (e.getCause() instanceof EOFException || String.valueOf(e.getMessage()).contains("Premature end")) {
+            if (e.getCause() instanceof EOFException || String.valueOf(e.getMessage()).matches("(?i).*(truncated|premature end).*")) {
                 throw new EOFException();
             }
             throw e;
