@@ -69,7 +69,7 @@ final class PngPhoto {
             throw new PhotoException(path, "is too large for a PNG that is decoded whole; save it as TIFF");
         }
         PhotoInfo info = new PhotoInfo(path, width, height, channels, depth, 1, pitch, profile, false);
-        return new DecodedPhoto(info, "png", file.array());
+        return new DecodedPhoto(info, "png", file.array(), Optional.empty());
     }
 
     /** The content of the chunk that starts at a position. */
