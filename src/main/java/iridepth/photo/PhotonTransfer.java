@@ -141,7 +141,8 @@ public final class PhotonTransfer {
     }
 
     /**
-     * Joins the curves of two photos taken by the same camera with the same settings.
+     * Joins the curves of two photos taken by the same camera with the same settings. Means of several exposures have
+     * less noise than single ones and must not be joined with them.
      *
      * @param other curve with the same number of channels
      * @return all points of both

@@ -238,4 +238,16 @@ class NoiseModelTest {
                             () -> NoiseModel.fromFlats(List.of(a, b), Encoding.linear(255), Optional.empty())).getMessage());
         }
     }
+
+    @Test
+    void curvesOfDifferentChannelsAreNotJoined() {
+        Path grey = Pictures.tiff(folder.resolve("1.tif"), 64, 64, 1, 8, (x, y, c) -> 100);
+        Path rgb = Pictures.tiff(folder.resolve("2.tif"), 64, 64, 3, 8, (x, y, c) -> 100);
+        try (PhotoFile a = PhotoFile.open(grey); PhotoFile b = PhotoFile.open(rgb)) {
+            Encoding linear = Encoding.linear(255);
+            assertEquals("curves of 1 and 3 channels cannot be joined; use photos of one camera",
+                    assertThrows(IllegalArgumentException.class, () -> PhotonTransfer.of(a, linear, Optional.empty())
+                            .and(PhotonTransfer.of(b, linear, Optional.empty()))).getMessage());
+        }
+    }
 }

@@ -188,6 +188,27 @@ class TiffPhotoTest {
         assertEquals(counts.at(3, 2, 0), IJ.openImage(path.toString()).getProcessor().get(3, 2));
     }
 
+    @Test
+    void sixteenBitRgbOfImageJIsPutTogether() {
+        ij.ImageStack stack = new ij.ImageStack(WIDTH, HEIGHT);
+        for (int c = 0; c < 3; c++) {
+            short[] pixels = new short[WIDTH * HEIGHT];
+            for (int i = 0; i < pixels.length; i++) {
+                pixels[i] = (short) counts.at(i % WIDTH, i / WIDTH, c);
+            }
+            stack.addSlice("channel " + c, new ShortProcessor(WIDTH, HEIGHT, pixels, null));
+        }
+        ImagePlus image = new ImagePlus("a", stack);
+        image.setDimensions(3, 1, 1);
+        Path path = folder.resolve("a.tif");
+        assertTrue(new FileSaver(new ij.CompositeImage(image, ij.CompositeImage.COMPOSITE)).saveAsTiffStack(path.toString()));
+        try (PhotoFile photo = PhotoFile.open(path)) {
+            assertEquals(3, photo.info().channels());
+            assertEquals(1, photo.info().frames());
+        }
+        assertRowsInAnyOrder(path, counts);
+    }
+
     @ParameterizedTest
     @CsvSource({"2, 25400, 1, 1.0", "3, 20000, 1, 0.5", "2, 300, 1, NaN", "2, 72, 1, NaN", "2, 96, 1, NaN", "1, 2, 1, NaN",
         "2, 1, 1, NaN", "2, 5, 0, NaN"})
