@@ -12,7 +12,7 @@ import org.junit.jupiter.api.Test;
 
 class EncodingTest {
 
-    /** IEC 61966-2-1:1999: the two branches meet at 0.04045 (to 1e-7 or so), and a value of 0.5 is 0.214041 linear. */
+    /** IEC 61966-2-1:1999: the two branches meet at 0.04045 (to 1e-7 or so), and a value of 0.5 is 0.214041 linear, by the formula. */
     @Test
     void srgbFollowsTheStandard() {
         Encoding srgb = Encoding.srgb(16);

@@ -10,7 +10,7 @@ import org.junit.jupiter.api.Test;
 
 class JpegTablesTest {
 
-    /** ITU-T T.81 figure A.6: rows of the table of places along the zigzag path. */
+    /** ITU-T T.81 figure A.6, rows of the table of places along the zigzag path; from memory. */
     private static final int[] ZIGZAG = {
         0, 1, 5, 6, 14, 15, 27, 28,
         2, 4, 7, 13, 16, 26, 29, 42,

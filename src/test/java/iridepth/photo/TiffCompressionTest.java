@@ -20,7 +20,7 @@ class TiffCompressionTest {
         assertArrayEquals(bytes(plain), into);
     }
 
-    /** TIFF 6.0 section 13: the string 7 7 7 8 8 7 7 6 6 gives the codes 256 7 258 8 8 258 6 6 257. */
+    /** TIFF 6.0 section 13: the string 7 7 7 8 8 7 7 6 6 gives the codes 256 7 258 8 8 258 6 6 257; from memory. */
     @Test
     void lzwUnpacksTheExampleOfTheStandard() throws IOException {
         int[] codes = {256, 7, 258, 8, 8, 258, 6, 6, 257};
