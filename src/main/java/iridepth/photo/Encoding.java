@@ -116,8 +116,8 @@ public final class Encoding {
             throw new PhotoException(photo.path(), "has 16 bit, but its encoding is one for 8 bit; give the encoding of this photo");
         }
         if (curves.length > 1 && curves.length != photo.channels()) {
-            throw new PhotoException(photo.path(), "has " + photo.channels() + " channels, but its colour profile has "
-                    + curves.length + "; export the photo again");
+            throw new PhotoException(photo.path(), "its colour profile is for " + curves.length
+                    + " channels, but it has " + photo.channels() + "; export the photo again");
         }
     }
 
