@@ -123,6 +123,7 @@ public final class SignalSource {
         float read = (float) noise.variance(channel, 0);
         float gain = (float) noise.gain(channel);
         float black = (float) noise.black(channel);
+        float rounding = (float) noise.countVariance(channel);
         int bottom = encoding.bottom();
         int top = saturation[channel];
         float[] value = signal.value();
@@ -135,7 +136,7 @@ public final class SignalSource {
             float slope = slopes[count];
             float scale = 1 / flatRow[x];
             value[at] = light * scale;
-            variance[at] = (read + gain * Math.max(0, light - black) + slope * slope * (1f / 12)) * scale * scale;
+            variance[at] = (read + gain * Math.max(0, light - black) + slope * slope * rounding) * scale * scale;
             limit[at] = count >= top ? Signal.AT_LEAST : count <= bottom ? Signal.AT_MOST : Signal.MEASURED;
         }
     }

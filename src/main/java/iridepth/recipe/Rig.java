@@ -8,7 +8,6 @@ import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.ShadingField;
 import iridepth.photo.SignalSource;
-import java.util.List;
 import java.util.Optional;
 
 /**
@@ -18,9 +17,8 @@ import java.util.Optional;
  * @param recipe   the recipe
  * @param dark     field of the dark frame
  * @param flat     field of the flat above the dark
- * @param noise    noise by the flat; empty where figures of the recipe or the photo itself tell it
  */
-public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingField> flat, Optional<NoiseModel> noise) {
+public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingField> flat) {
     /**
      * Reads the dark and the flat that a recipe names.
      *
@@ -35,17 +33,12 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
             }
         }
         Optional<ShadingField> flat = Optional.empty();
-        Optional<NoiseModel> noise = Optional.empty();
         if (camera.flat() != null) {
             try (PhotoFile file = PhotoFile.open(camera.flat())) {
-                Encoding encoding = encoding(camera, file.info());
-                flat = Optional.of(ShadingField.flat(file, encoding, dark));
-                if (Double.isNaN(camera.fullWell())) {
-                    noise = Optional.of(NoiseModel.fromFlats(List.of(file), encoding, dark));
-                }
+                flat = Optional.of(ShadingField.flat(file, encoding(camera, file.info()), dark));
             }
         }
-        return new Rig(recipe, dark, flat, noise);
+        return new Rig(recipe, dark, flat);
     }
 
     /** How the counts of a photo stand for light. */
@@ -68,15 +61,16 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
     /** The linear signal of a photo of this rig with its noise. */
     public SignalSource signal(PhotoFile photo) {
         Encoding encoding = encoding(photo.info());
-        return SignalSource.of(photo, encoding, dark, flat, noise.orElseGet(() -> noise(photo, encoding)));
+        return SignalSource.of(photo, encoding, dark, flat, noise(photo, encoding));
     }
 
     private NoiseModel noise(PhotoFile photo, Encoding encoding) {
         CameraSpec camera = recipe.camera();
-        if (Double.isNaN(camera.fullWell())) {
-            return NoiseModel.fromPhoto(photo, encoding, dark);
+        if (!Double.isNaN(camera.fullWell())) {
+            double fullScale = Double.isNaN(camera.fullScale()) ? photo.info().maxCount() : camera.fullScale();
+            return NoiseModel.of(camera.readNoise() / fullScale * camera.fullWell(), camera.fullWell());
         }
-        double fullScale = Double.isNaN(camera.fullScale()) ? photo.info().maxCount() : camera.fullScale();
-        return NoiseModel.of(camera.readNoise() / fullScale * camera.fullWell(), camera.fullWell());
+        // A flat is often the mean of several exposures and so quieter than the photo: the photo's own noise is what counts.
+        return NoiseModel.fromPhoto(photo, encoding, dark);
     }
 }
