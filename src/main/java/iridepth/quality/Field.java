@@ -30,6 +30,19 @@ public interface Field {
         return new ArrayField(width, height, values);
     }
 
+    /** A number at a pixel. */
+    @FunctionalInterface
+    interface Values {
+
+        /** The number in column x and row y; NaN is 'no value'. */
+        double at(int x, int y);
+    }
+
+    /** A view of numbers that are told pixel by pixel. */
+    static Field view(int width, int height, Values values) {
+        return new ViewField(width, height, values);
+    }
+
     /** One value everywhere. */
     static Field constant(int width, int height, double value) {
         return new ConstantField(width, height, value);
@@ -72,6 +85,15 @@ record ArrayField(int width, int height, float[] values) implements Field {
     @Override
     public double at(int x, int y) {
         return values[y * width + x];
+    }
+}
+
+/** A field of numbers told pixel by pixel. */
+record ViewField(int width, int height, Field.Values values) implements Field {
+
+    @Override
+    public double at(int x, int y) {
+        return values.at(x, y);
     }
 }
 

@@ -98,35 +98,15 @@ public record UncertaintyCurve(double[] thickness, long[] pixels, double[] rando
      * @param correlatedPixels how many neighbouring pixels share one random error, 1 or more
      */
     public MeasuredField divide(Field thickness, Field combined, double correlatedPixels) {
-        Field systematicPart = view(thickness, (x, y) -> Math.min(combined.at(x, y), systematicAt(thickness.at(x, y))));
-        Field randomPart = view(thickness, (x, y) -> {
+        int width = thickness.width();
+        int height = thickness.height();
+        Field systematicPart = Field.view(width, height,
+                (x, y) -> Math.min(combined.at(x, y), systematicAt(thickness.at(x, y))));
+        Field randomPart = Field.view(width, height, (x, y) -> {
             double all = combined.at(x, y);
             double part = systematicPart.at(x, y);
             return Math.sqrt(all * all - part * part);
         });
         return new MeasuredField(thickness, randomPart, systematicPart, correlatedPixels);
-    }
-
-    private interface Pixels {
-        double at(int x, int y);
-    }
-
-    private static Field view(Field size, Pixels pixels) {
-        return new Field() {
-            @Override
-            public int width() {
-                return size.width();
-            }
-
-            @Override
-            public int height() {
-                return size.height();
-            }
-
-            @Override
-            public double at(int x, int y) {
-                return pixels.at(x, y);
-            }
-        };
     }
 }

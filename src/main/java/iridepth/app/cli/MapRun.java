@@ -70,7 +70,12 @@ record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
         Map<String, Object> summary = new LinkedHashMap<>();
         summary.put("program", "iridepth " + Iridepth.Version.number());
         summary.put("title", recipe().title());
-        summary.put("photo", Map.of("file", info.path().getFileName().toString(), "width", info.width(), "height", info.height()));
+        Map<String, Object> photograph = new LinkedHashMap<>();
+        photograph.put("file", info.path().getFileName().toString());
+        photograph.put("width", info.width());
+        photograph.put("height", info.height());
+        photograph.put("pixel_um", instrument.pixelUm(info));
+        summary.put("photo", photograph);
         summary.put("stack", recipe().stack().toString());
         summary.put("range_nm", List.of(recipe().range().fromNm(), recipe().range().toNm()));
         Map<String, Object> counts = new LinkedHashMap<>();
@@ -88,6 +93,7 @@ record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
         summary.put("standard_uncertainty_rms", uncertainty);
         judgement.ifPresent(j -> summary.put("tolerance", judged(j)));
         summary.put("noise", signal.noise().toString());
+        summary.put("correlated_pixels", signal.noise().correlatedPixels());
         summary.put("inputs_sha256", hashes);
         summary.put("caution", Iridepth.CAUTION);
         return summary;
