@@ -18,7 +18,7 @@ import java.util.Locale;
  */
 public record MaterialCheck(List<String> faults, List<String> remarks) {
     /** Gaps between rows up to which linear interpolation serves ordinary dispersion, common practice. */
-    private static final double WIDEST_GAP_NM = 60;
+    private static final double WIDEST_GAP_NM = 75;
     /** A step of n or k below this is no jump: it moves the optical thickness by less than a tenth of a per cent or so. */
     private static final double LEAST_JUMP = 0.002;
     /** A jump is so many times steeper than the scatter of the slopes around it. */
@@ -107,8 +107,9 @@ public record MaterialCheck(List<String> faults, List<String> remarks) {
             }
             double middle = median(around);
             double scatter = median(Arrays.stream(around).map(s -> Math.abs(s - middle)).toArray());
-            double step = Math.abs(slope[i] - middle) * (at[i + 1] - at[i]);
-            if (step > worstStep && Math.abs(slope[i] - middle) > STEEPNESS * scatter) {
+            double excess = Math.abs(slope[i] - middle);
+            double step = excess * (at[i + 1] - at[i]);
+            if (step > worstStep && excess > STEEPNESS * scatter && beyondNext(slope, i) > excess / 2) {
                 worst = i;
                 worstStep = step;
             }
@@ -117,6 +118,15 @@ public record MaterialCheck(List<String> faults, List<String> remarks) {
             remarks.add(name + " jumps from " + values[worst] + " at " + nm(at[worst]) + " nm to " + values[worst + 1] + " at "
                     + nm(at[worst + 1]) + " nm; look for a mistyped number");
         }
+    }
+
+    /** How far a slope lies beyond both next to it: in the flank of an absorption band one of them is about as steep. */
+    private static double beyondNext(double[] slope, int i) {
+        double before = slope[Math.max(0, i - 1)];
+        double after = slope[Math.min(slope.length - 1, i + 1)];
+        double one = i == 0 ? after : before;
+        double other = i == slope.length - 1 ? before : after;
+        return Math.max(slope[i] - Math.max(one, other), Math.min(one, other) - slope[i]);
     }
 
     /** The smallest change from row to row, rows without change apart: what the numbers are rounded to, or more. */
