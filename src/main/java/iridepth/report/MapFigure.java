@@ -33,6 +33,18 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
     private static final double BEYOND = 0.001;
 
     /**
+     * Loads letters and drawing code, which takes some 150 ms in a fresh process: call it on a thread of its own while the map
+     * is being read. Figures need no such call.
+     */
+    public static void prepare() {
+        Picture picture = new Picture(1, 1);
+        picture.font(Picture.TEXT, false);
+        picture.text("0", 0, 0, Picture.Align.LEFT, Picture.INK);
+        picture.line(0, 0, 1, 1, Picture.INK, 1);
+        ColourScale.thickness();
+    }
+
+    /**
      * A figure whose scale spans the thicknesses in the map, but for a thousandth of the cells at either end; rounded outwards.
      */
     public static MapFigure of(String title, MapCells cells, double pixelUm) {
@@ -101,12 +113,7 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
 
     private void drawTitle(Picture picture) {
         picture.font(Picture.TITLE, true);
-        double room = picture.width() - 40.0;
-        String line = title;
-        while (line.length() > 1 && picture.widthOf(line) > room) {
-            line = line.substring(0, line.length() - 2).stripTrailing() + "\u2026";
-        }
-        picture.text(line, 20, 38, Picture.Align.LEFT, Picture.INK);
+        picture.text(picture.fitted(title, picture.width() - 40.0), 20, 38, Picture.Align.LEFT, Picture.INK);
         picture.font(Picture.SMALL, false);
         String size = cells.width() + " \u00d7 " + cells.height() + " pixels";
         if (cells.factor() > 1) {
@@ -155,8 +162,8 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
         double scale = enlarge * perUnit / cells.factor();
         double columns = cells.columns() * enlarge / scale;
         double rows = cells.rows() * enlarge / scale;
-        Ticks xs = Ticks.of(0, columns, Math.max(2, cells.columns() * enlarge / 110));
-        Ticks ys = Ticks.of(0, rows, Math.max(2, cells.rows() * enlarge / 70));
+        Ticks xs = Ticks.of(0, columns, Math.max(1, cells.columns() * enlarge / 110));
+        Ticks ys = Ticks.of(0, rows, Math.max(1, cells.rows() * enlarge / 70));
         int bottom = top + cells.rows() * enlarge;
         picture.font(Picture.TEXT, false);
         for (double v : xs.at()) {

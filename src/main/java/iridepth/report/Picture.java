@@ -5,6 +5,7 @@ import java.awt.Color;
 import java.awt.Font;
 import java.awt.Graphics2D;
 import java.awt.RenderingHints;
+import java.awt.Shape;
 import java.awt.geom.Line2D;
 import java.awt.geom.Rectangle2D;
 import java.awt.image.BufferedImage;
@@ -86,6 +87,15 @@ final class Picture {
         graphics.rotate(Math.PI / 2, x, y);
     }
 
+    /** A text cut to a width in the present font, with an ellipsis where something is missing. */
+    String fitted(String text, double width) {
+        String line = text;
+        while (line.length() > 1 && widthOf(line) > width) {
+            line = line.substring(0, line.length() - 2).stripTrailing() + "\u2026";
+        }
+        return line;
+    }
+
     /** Breaks a text at blanks into lines no wider than a width in the present font; a longer word stands alone. */
     List<String> wrap(String text, double width) {
         List<String> lines = new ArrayList<>();
@@ -104,9 +114,15 @@ final class Picture {
     }
 
     void line(double x0, double y0, double x1, double y1, Color ink, double width) {
+        stroke(new Line2D.Double(x0, y0, x1, y1), ink, width);
+    }
+
+    /** Draws an outline, dashed by lengths of line and gap in px if any are given. */
+    void stroke(Shape shape, Color ink, double width, float... dashes) {
         graphics.setColor(ink);
-        graphics.setStroke(new BasicStroke((float) width, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND));
-        graphics.draw(new Line2D.Double(x0, y0, x1, y1));
+        graphics.setStroke(new BasicStroke((float) width, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND, 10,
+                dashes.length == 0 ? null : dashes, 0));
+        graphics.draw(shape);
     }
 
     void fill(double x, double y, double width, double height, Color ink) {
