@@ -76,6 +76,11 @@ final class PageParts {
         return html.close("ul");
     }
 
+    /** Digits in groups of three (ISO 80000-1) where there are five or more. */
+    private static String grouped(long count) {
+        return count < 10_000 ? Long.toString(count) : String.format(Locale.ROOT, "%,d", count).replace(',', '\u202F');
+    }
+
     /** Rows of the table of states, those that occur. */
     Html states() {
         long[] total = content.map().total();
@@ -87,7 +92,7 @@ final class PageParts {
                 String share = count / pixels < 0.0005 ? "<0.1 %" : String.format(Locale.ROOT, "%.1f %%", 100 * count / pixels);
                 html.open("tr").open("th", "scope", "row")
                         .open("span", "class", "swatch " + state.label()).close("span").text(state.label()).close("th")
-                        .element("td", Long.toString(count), "class", "number").element("td", share, "class", "number").close("tr");
+                        .element("td", grouped(count), "class", "number").element("td", share, "class", "number").close("tr");
             }
         }
         return html;
@@ -99,14 +104,23 @@ final class PageParts {
         if (histogram.bins() == 0) {
             return new Html().element("p", "No pixel has been read.");
         }
-        Html html = new Html().element("p", histogram.total() + " pixels, in bins of " + Numbers.significant(histogram.width(), 6)
+        Html html = new Html().element("p", grouped(histogram.total()) + " pixels, in bins of " + Numbers.significant(histogram.width(), 6)
                         + " nm." + content.tolerance().map(t -> " " + limits(t) + ".").orElse(""),
                 "id", "histogram-text")
                 .open("div", "class", "plot").open("svg", "id", "histogram-chart", "role", "img", "aria-labelledby",
                         "histogram-title", "aria-describedby", "histogram-text").close("svg").close("div");
         if (content.tolerance().isPresent()) {
-            html.open("p", "class", "key").open("span").element("i", "", "class", "sample limit").text("limit").close("span")
+            html.open("p", "class", "key").add(limitKey())
                     .open("span").element("i", "", "class", "sample beyond").text("beyond the limits").close("span").close("p");
+        }
+        return html;
+    }
+
+    /** Explains the line of a limit, if there are limits. */
+    Html limitKey() {
+        Html html = new Html();
+        if (content.tolerance().isPresent()) {
+            html.open("span").element("i", "", "class", "sample limit").text("limit").close("span");
         }
         return html;
     }
@@ -126,7 +140,7 @@ final class PageParts {
         for (int i = 0; i < histogram.bins(); i++) {
             html.open("tr").element("th", Numbers.fixed(histogram.edge(i), decimals) + " to "
                             + Numbers.fixed(histogram.edge(i + 1), decimals), "scope", "row", "class", "number")
-                    .element("td", Long.toString(histogram.count(i)), "class", "number").close("tr");
+                    .element("td", grouped(histogram.count(i)), "class", "number").close("tr");
         }
         return html;
     }
@@ -148,7 +162,7 @@ final class PageParts {
             html.open("tr").open("th", "scope", "row")
                     .element("button", "Show region " + (i + 1), "type", "button", "class", "show", "data-doubt", Integer.toString(i))
                     .element("span", place, "class", "soft").close("th")
-                    .element("td", Long.toString(doubt.pixels()), "class", "number")
+                    .element("td", grouped(doubt.pixels()), "class", "number")
                     .element("td", doubt.reading()).element("td", doubt.alternatives()).element("td", doubt.remedy()).close("tr");
         }
         return html.close("tbody").close("table").close("div");

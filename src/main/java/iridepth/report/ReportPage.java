@@ -74,6 +74,7 @@ public final class ReportPage {
         parts.put("sampling", page.sampling().toString());
         parts.put("states", page.states().toString());
         parts.put("histogram", page.histogram().toString());
+        parts.put("limit-key", page.limitKey().toString());
         parts.put("bins", page.bins().toString());
         parts.put("doubts", page.doubts().toString());
         parts.put("sections", page.sections().toString());

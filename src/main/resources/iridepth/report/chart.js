@@ -24,7 +24,8 @@ function ticks(from, to, most) {
   const decimals = Math.max(0, -Math.floor(Math.log10(step) + 1e-9));
   const list = [];
   for (let k = Math.ceil(from / step - 1e-9); k * step <= to + 1e-9 * step; k++) {
-    list.push({ value: k * step, label: (k * step).toFixed(decimals).replace(/^-(0\.?0*)$/, '$1').replace('-', '\u2212') });
+    const label = (k * step).toFixed(decimals).replace(/^-(0\.?0*)$/, '$1').replace('-', '\u2212');
+    list.push({ value: k * step, label: grouped(label) });
   }
   return list;
 }
@@ -71,6 +72,20 @@ function cssColour(rgb) {
 function scaleGradient(colours) {
   const stops = Array.from({ length: 17 }, (_, i) => cssColour(colours[Math.round(i / 16 * (colours.length - 1))]));
   return `linear-gradient(90deg, ${stops.join(', ')})`;
+}
+
+/** A bar that shows how long a round length is on a map as wide as the element. */
+function scaleBar(svg, map) {
+  const unit = lengthUnit(map);
+  const width = Math.max(200, svg.parentElement.clientWidth);
+  const field = map.columns * map.factor * unit.perPixel;
+  const length = roundStep(field / 8);
+  const decimals = Math.max(0, -Math.floor(Math.log10(length) + 1e-9));
+  svg.replaceChildren();
+  svg.setAttribute('viewBox', `0 0 ${width} 22`);
+  const left = width - length / field * width;
+  svgElement(svg, 'path', { class: 'scale-bar', d: `M${left} 12H${width}` });
+  svgElement(svg, 'text', { class: 'label', x: left - 10, y: 16, 'text-anchor': 'end' }, `${length.toFixed(decimals)} ${unit.name}`);
 }
 
 /** A bar of the scale's colours with its ticks; its points stand for values beyond. */

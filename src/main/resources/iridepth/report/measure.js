@@ -101,7 +101,12 @@ function lengthUnit(map) {
   }
   const millimetres = Math.max(map.width, map.height) * map.pixelUm >= 5000;
   const perPixel = millimetres ? map.pixelUm / 1000 : map.pixelUm;
-  return { name: millimetres ? 'mm' : 'µm', perPixel, decimals: Math.max(0, 1 - Math.floor(Math.log10(perPixel))) };
+  return { name: millimetres ? 'mm' : 'µm', perPixel, decimals: Math.max(0, Math.ceil(-Math.log10(perPixel))) };
+}
+
+/** A whole number with its digits in groups of three where there are five or more. */
+function grouped(text) {
+  return text.replace(/^\d{5,}/, digits => digits.replace(/\B(?=(\d{3})+$)/g, '\u202f'));
 }
 
 function nm(value, decimals = 2) {

@@ -4,6 +4,7 @@ const byId = id => document.getElementById(id);
 const map = readMap();
 const photo = byId('photo');
 const unit = lengthUnit(map);
+const systemDark = matchMedia('(prefers-color-scheme: dark)');
 let view;
 let profile = { samples: [], plot: null };
 let waiting;
@@ -18,7 +19,7 @@ function place(point) {
   const x = photoX(map, point.column);
   const y = photoY(map, point.row);
   const scaled = v => (v * unit.perPixel).toFixed(unit.decimals);
-  return `x ${x}, y ${y} px` + (map.pixelUm === null ? '' : ` \u00b7 ${scaled(x)}, ${scaled(y)} ${unit.name}`);
+  return `x ${x}, y ${y} px` + (map.pixelUm === null ? '' : `\n${scaled(x)}, ${scaled(y)} ${unit.name}`);
 }
 
 function readPoint(point, spoken) {
@@ -35,7 +36,7 @@ function readPoint(point, spoken) {
     byId('at-' + name).textContent = text;
   }
   if (spoken) {
-    say(`${texts.position}. ${texts.thickness}, standard uncertainty ${texts.uncertainty}, ${texts.state}, other candidates: `
+    say(`${texts.position.replace('\n', '; ')}. ${texts.thickness}, standard uncertainty ${texts.uncertainty}, ${texts.state}, other candidates: `
       + texts.others + '.');
   }
 }
@@ -60,7 +61,7 @@ function showRectangle({ from, to }, done) {
   const s = statistics(within(map, from, to));
   const points = map.factor === 1 ? 'pixels' : 'points';
   const texts = {
-    count: `${s.count} of ${s.all} ${points}`, mean: nm(s.mean), deviation: nm(s.deviation), least: nm(s.least),
+    count: `${grouped(String(s.count))} of ${grouped(String(s.all))} ${points}`, mean: nm(s.mean), deviation: nm(s.deviation), least: nm(s.least),
     median: nm(s.median), greatest: nm(s.greatest),
   };
   for (const [name, text] of Object.entries(texts)) {
@@ -96,7 +97,7 @@ function showLayer(layer) {
   byId('map').dataset.layer = layer;
   byId('layer-' + layer).checked = true;
   view.show(layer);
-  byId('bar').toggleAttribute('hidden', !style.range);
+  byId('bar').style.visibility = style.range ? 'visible' : 'hidden';
   if (style.range) {
     colourBar(byId('bar'), map.colours, style.range(map), style.label);
   }
@@ -133,11 +134,17 @@ function followProfile(event) {
   view.readAt({ column: Math.round(sample.column), row: Math.round(sample.row) });
 }
 
+function isDark() {
+  return (document.documentElement.dataset.theme || (systemDark.matches ? 'dark' : 'light')) === 'dark';
+}
+
+function showTheme() {
+  byId('theme').setAttribute('aria-pressed', String(isDark()));
+}
+
 function toggleTheme() {
-  const root = document.documentElement;
-  const dark = root.dataset.theme ? root.dataset.theme === 'dark' : matchMedia('(prefers-color-scheme: dark)').matches;
-  root.dataset.theme = dark ? 'light' : 'dark';
-  byId('theme').setAttribute('aria-pressed', String(!dark));
+  document.documentElement.dataset.theme = isDark() ? 'light' : 'dark';
+  showTheme();
 }
 
 function start() {
@@ -172,6 +179,8 @@ function start() {
   document.querySelectorAll('[data-doubt]').forEach(button =>
     button.addEventListener('click', () => showRegion(Number(button.dataset.doubt))));
   byId('theme').addEventListener('click', toggleTheme);
+  systemDark.addEventListener('change', showTheme);
+  showTheme();
   byId('profile-chart').addEventListener('pointermove', followProfile);
   showLayer('thickness');
   view.set('line', { column: 0, row: map.rows >> 1 }, { column: map.columns - 1, row: map.rows >> 1 }, false);
@@ -184,6 +193,7 @@ function start() {
 
 /** Charts are drawn for the width they have. */
 function redraw() {
+  scaleBar(byId('scale-bar'), map);
   drawHistogram(byId('histogram-chart'), map);
   profile.plot = drawProfile(byId('profile-chart'), map, profile.samples);
   const style = LAYERS[byId('map').dataset.layer];
