@@ -16,6 +16,7 @@ public final class NoiseModel {
     static final double ROUNDING = 1 / 12.0;
 
     private static final double NOTABLE_CORRELATION = 0.1;
+    private static final double LARGEST_CORRELATION = 0.95;
 
     private final double[] readVariance;
     private final double[] gain;
@@ -173,6 +174,18 @@ public final class NoiseModel {
     public boolean correlated() {
         return Arrays.stream(correlation).anyMatch(r -> Math.abs(r) > NOTABLE_CORRELATION)
                 || Arrays.stream(countVariance).anyMatch(v -> v > ROUNDING);
+    }
+
+    /**
+     * How many neighbouring pixels share one random error: ((1 + r) / (1 - r))^2 with r the largest correlation of neighbours,
+     * which is what the mean of a large area loses where correlation falls off geometrically along x and y (the variance of the
+     * mean of a first-order autoregressive series, in each direction).
+     *
+     * @return 1 for a plain sensor, more where pixels hang together
+     */
+    public double correlatedPixels() {
+        double r = Math.min(LARGEST_CORRELATION, Arrays.stream(correlation).map(v -> Math.max(0, v)).max().orElse(0));
+        return Math.pow((1 + r) / (1 - r), 2);
     }
 
     /**

@@ -30,36 +30,52 @@ public interface Field {
         return new ArrayField(width, height, values);
     }
 
+    /** A number at a pixel. */
+    @FunctionalInterface
+    interface Values {
+
+        /** The number in column x and row y; NaN is 'no value'. */
+        double at(int x, int y);
+    }
+
+    /** A view of numbers that are told pixel by pixel. */
+    static Field view(int width, int height, Values values) {
+        return new ViewField(width, height, values);
+    }
+
     /** One value everywhere. */
     static Field constant(int width, int height, double value) {
         return new ConstantField(width, height, value);
     }
 
     /**
-     * Value between the pixels, bilinear: the mean of the four pixels around the point, weighted by nearness. Pixels without a
-     * value are left out, as long as the others carry at least half of the weight.
+     * Value between the pixels, bilinear: the mean of the four pixels around the point, weighted by nearness. A coordinate
+     * within 1e-9 of a whole number is taken as that number, since rounding leaves points that are meant to lie on a pixel's
+     * centre a hair beside it.
      *
-     * @return NaN outside the rectangle of the pixels' centres, and where less than half of the weight has a value
+     * @return NaN outside the rectangle of the pixels' centres, and where a pixel that has weight has no value
      */
     default double interpolate(double x, double y) {
-        if (!(x >= 0 && y >= 0 && x <= width() - 1 && y <= height() - 1)) {
+        double column = settled(x);
+        double row = settled(y);
+        if (!(column >= 0 && row >= 0 && column <= width() - 1 && row <= height() - 1)) {
             return Double.NaN;
         }
-        int left = (int) x;
-        int top = (int) y;
-        double sum = 0;
-        double weights = 0;
-        for (int row = top; row <= Math.min(top + 1, height() - 1); row++) {
-            for (int column = left; column <= Math.min(left + 1, width() - 1); column++) {
-                double weight = (1 - Math.abs(x - column)) * (1 - Math.abs(y - row));
-                double value = weight > 0 ? at(column, row) : Double.NaN;
-                if (!Double.isNaN(value)) {
-                    sum += weight * value;
-                    weights += weight;
-                }
-            }
-        }
-        return weights >= 0.5 ? sum / weights : Double.NaN;
+        int left = (int) column;
+        int top = (int) row;
+        double right = column - left;
+        double below = row - top;
+        return weighted((1 - right) * (1 - below), left, top) + weighted(right * (1 - below), left + 1, top)
+                + weighted((1 - right) * below, left, top + 1) + weighted(right * below, left + 1, top + 1);
+    }
+
+    private double weighted(double weight, int x, int y) {
+        return weight > 0 ? weight * at(x, y) : 0;
+    }
+
+    private static double settled(double coordinate) {
+        double whole = Math.rint(coordinate);
+        return Math.abs(coordinate - whole) < 1e-9 ? whole : coordinate;
     }
 }
 
@@ -69,6 +85,15 @@ record ArrayField(int width, int height, float[] values) implements Field {
     @Override
     public double at(int x, int y) {
         return values[y * width + x];
+    }
+}
+
+/** A field of numbers told pixel by pixel. */
+record ViewField(int width, int height, Field.Values values) implements Field {
+
+    @Override
+    public double at(int x, int y) {
+        return values.at(x, y);
     }
 }
 

@@ -11,6 +11,8 @@ import java.util.stream.Stream;
  * @param points in order of distance; where nothing is read the average is empty
  */
 public record Profile(List<Point> points) {
+    /** A length this close above a whole number of pixels is that number. */
+    private static final double HAIR = 1e-9;
 
     /**
      * A point of a profile.
@@ -43,10 +45,12 @@ public record Profile(List<Point> points) {
         double dx = (end.x() - start.x()) / length;
         double dy = (end.y() - start.y()) / length;
         List<Point> points = new ArrayList<>();
-        for (int i = 0; i < Math.ceil(length); i++) {
+        for (int i = 0; i <= length; i++) {
             points.add(acrossLine(field, start, dx, dy, i, width));
         }
-        points.add(acrossLine(field, start, dx, dy, length, width));
+        if (length - Math.floor(length) > HAIR) {
+            points.add(acrossLine(field, start, dx, dy, length, width));
+        }
         return new Profile(points);
     }
 

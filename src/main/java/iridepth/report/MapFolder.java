@@ -4,6 +4,7 @@ import iridepth.quality.Distribution;
 import iridepth.quality.Histogram;
 import iridepth.quality.Tolerance;
 import iridepth.quality.Tolerance.Judgement;
+import iridepth.quality.UncertaintyCurve;
 import iridepth.quality.Uniformity;
 import iridepth.reading.State;
 import java.nio.file.Path;
@@ -16,9 +17,18 @@ import java.util.Optional;
 
 /**
  * The files of a thickness map, written as its rows come, in any order: {@code thickness.tif}, {@code uncertainty.tif},
- * {@code state.tif}, and at the end {@code thickness.png}, {@code histogram.csv} and {@code histogram.png}.
+ * {@code state.tif}, and at the end {@code thickness.png}, {@code histogram.csv}, {@code histogram.png} and
+ * {@code uncertainty.csv}.
  */
 public final class MapFolder implements AutoCloseable {
+    static final String THICKNESS = "thickness.tif";
+    static final String UNCERTAINTY = "uncertainty.tif";
+    /** The two parts of the uncertainty against thickness. */
+    static final String UNCERTAINTY_PARTS = "uncertainty.csv";
+    /** What every map's folder holds beside its summary. */
+    static final List<String> FILES = List.of(THICKNESS, UNCERTAINTY, "state.tif", "thickness.png", "histogram.csv",
+            "histogram.png", UNCERTAINTY_PARTS);
+
     private final ResultFolder folder;
     private final int width;
     private final double pixelUm;
@@ -27,6 +37,7 @@ public final class MapFolder implements AutoCloseable {
     private final TiffWriter state;
     private final MapCells cells;
     private final Distribution distribution;
+    private final UncertaintyCurve.Gathering parts;
     private final long[] counts = new long[State.values().length];
     private double randomSquares;
     private double systematicSquares;
@@ -35,11 +46,12 @@ public final class MapFolder implements AutoCloseable {
         this.folder = folder;
         this.width = width;
         this.pixelUm = pixelUm;
-        this.thickness = MapTiff.nanometres(folder.file("thickness.tif"), width, height, pixelUm);
-        this.uncertainty = MapTiff.nanometres(folder.file("uncertainty.tif"), width, height, pixelUm);
+        this.thickness = MapTiff.nanometres(folder.file(THICKNESS), width, height, pixelUm);
+        this.uncertainty = MapTiff.nanometres(folder.file(UNCERTAINTY), width, height, pixelUm);
         this.state = MapTiff.states(folder.file("state.tif"), width, height, pixelUm);
         this.cells = MapCells.of(width, height, MapFigure.MOST_CELLS);
         this.distribution = Distribution.over(fromNm, toNm);
+        this.parts = new UncertaintyCurve.Gathering(fromNm, toNm);
     }
 
     /**
@@ -73,6 +85,7 @@ public final class MapFolder implements AutoCloseable {
             counts[codes[i]]++;
             if (State.of(codes[i]).hasThickness()) {
                 distribution.add(nm[i]);
+                parts.add(nm[i], random[i], systematic[i]);
                 randomSquares += random[i] * random[i];
                 systematicSquares += systematic[i] * systematic[i];
             }
@@ -138,6 +151,18 @@ public final class MapFolder implements AutoCloseable {
         HistogramFigure figure = new HistogramFigure(title, List.of(words()), histogram, distribution, tolerance);
         figure.write(folder.file("histogram.png"));
         figure.csv().write(folder.file("histogram.csv"));
+        uncertaintyTable(title).write(folder.file(UNCERTAINTY_PARTS));
+    }
+
+    private CsvTable uncertaintyTable(String title) {
+        UncertaintyCurve curve = parts.curve();
+        CsvTable table = CsvTable.of(List.of("Standard uncertainty of one pixel against its thickness: " + title,
+                "root mean squares over the pixels within half a nanometre"),
+                List.of("thickness_nm", "pixels", "random_nm", "systematic_nm"));
+        for (int i = 0; i < curve.thickness().length; i++) {
+            table.row(curve.thickness()[i], curve.pixels()[i], curve.random()[i], curve.systematic()[i]);
+        }
+        return table;
     }
 
     /** The counts of all states that occur, in words. */

@@ -25,13 +25,20 @@ class FieldTest {
     }
 
     @Test
-    void pixelsWithoutAValueAreLeftOutWhileHalfTheWeightRemains() {
+    void aPixelWithoutAValueTakesTheValueFromAllThatNeedIt() {
         Field f = Field.of(2, 2, new float[] {1, 2, 3, NAN});
-        assertEquals(2, f.interpolate(0.5, 0.5), 1e-12);
-        assertTrue(Double.isNaN(f.interpolate(0.8, 0.8)));
-        assertEquals(1, f.interpolate(0, 0));
-        assertEquals(2, Field.of(2, 1, new float[] {2, NAN}).interpolate(0.5, 0));
-        assertTrue(Double.isNaN(Field.of(2, 1, new float[] {2, NAN}).interpolate(0.51, 0)));
+        assertTrue(Double.isNaN(f.interpolate(0.1, 0.1)));
+        assertEquals(1.5, f.interpolate(0.5, 0), 1e-12);
+        assertEquals(2, f.interpolate(0, 0.5), 1e-12);
+        assertTrue(Double.isNaN(f.interpolate(1, 0.5)));
+    }
+
+    @Test
+    void aHairBesideAPixelIsThatPixel() {
+        Field f = Field.of(2, 1, new float[] {1, NAN});
+        assertEquals(1, f.interpolate(1e-12, 0));
+        assertEquals(1, f.interpolate(-1e-12, 1e-12));
+        assertTrue(Double.isNaN(f.interpolate(1e-6, 0)));
     }
 
     @Test

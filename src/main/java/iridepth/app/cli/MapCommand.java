@@ -1,5 +1,6 @@
 package iridepth.app.cli;
 
+import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
 import java.nio.file.Path;
 import java.util.concurrent.Callable;
@@ -34,6 +35,6 @@ final class MapCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
-        return new MapRun(Recipe.read(recipe), photo, spec.commandLine().getOut()).write(out, replace);
+        return new MapRun(Instrument.of(Recipe.read(recipe)), photo, spec.commandLine().getOut()).write(out, replace);
     }
 }
