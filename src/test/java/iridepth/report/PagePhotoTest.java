@@ -16,7 +16,7 @@ import org.junit.jupiter.api.Test;
 
 class PagePhotoTest {
     private static Signal signal(int width, int height, int channels, float... value) {
-        return new Signal(width, height, channels, value, new float[value.length], new byte[value.length]);
+        return new Signal(width, height, channels, value, new float[width * height], new byte[value.length]);
     }
 
     private static BufferedImage decoded(PagePhoto photo) throws IOException {
