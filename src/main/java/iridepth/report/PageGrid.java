@@ -11,8 +11,8 @@ package iridepth.report;
 record PageGrid(int width, int height, int factor) {
     /** Points along a row or column at most. */
     static final int LONGEST = 1200;
-    /** Points in all at most; with this a page stays below 8 MB. */
-    static final int MOST = 800_000;
+    /** Points in all at most; with this the page of a noisy film stays below 8 MB. */
+    static final int MOST = 700_000;
 
     PageGrid {
         if (width < 1 || height < 1 || factor < 1) {

@@ -19,9 +19,10 @@ import javax.imageio.stream.MemoryCacheImageOutputStream;
  * those of sRGB, and the signal of a linear file is brightened until the lightest pixels are nearly white.
  */
 public final class PagePhoto {
-    /** Bytes up to which the picture is kept without loss. */
-    private static final int MOST_PNG = 1_000_000;
-    private static final float JPEG_QUALITY = 0.9f;
+    /** Points up to which the picture is kept without loss. */
+    private static final int MOST_PNG = 350_000;
+    private static final float JPEG_QUALITY = 0.85f;
+    private static final int MOST_SORTED = 100_000;
     private static final double LIGHTEST_SHARE = 0.998;
     private static final double LIGHTEST = 0.95;
 
@@ -86,18 +87,21 @@ public final class PagePhoto {
     }
 
     private double gain() {
-        float[] sorted = light.clone();
+        int stride = light.length / MOST_SORTED + 1;
+        float[] sorted = new float[(light.length + stride - 1) / stride];
+        for (int i = 0; i < sorted.length; i++) {
+            sorted[i] = light[i * stride];
+        }
         Arrays.sort(sorted);
         float lightest = sorted[(int) (LIGHTEST_SHARE * (sorted.length - 1))];
         return lightest > 0 ? LIGHTEST / lightest : 1;
     }
 
-    /** The picture as a data URI (RFC 2397): PNG where that is small, else JPEG. */
+    /** The picture as a data URI (RFC 2397): PNG where it has few points, else JPEG. */
     String dataUri() {
         try {
             BufferedImage image = picture();
-            byte[] png = PngWriter.encode(image);
-            return png.length <= MOST_PNG ? uri("image/png", png) : uri("image/jpeg", jpeg(image));
+            return grid.points() <= MOST_PNG ? uri("image/png", PngWriter.encode(image)) : uri("image/jpeg", jpeg(image));
         } catch (IOException e) {
             throw new UncheckedIOException("writing to memory cannot fail", e);
         }
