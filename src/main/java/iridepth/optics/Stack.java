@@ -85,7 +85,7 @@ public record Stack(Material ambient, List<Layer> layers, Material substrate) {
         if (Double.isNaN(n)) {
             throw new IllegalArgumentException("stack '" + stack + "': " + name + " has k but no n; write 'n=1.5 k=0.01'");
         }
-        return Material.constant(name, n, k);
+        return Material.constant(name + text.replaceAll("\\s*=\\s*", "="), n, k);
     }
 
     private static double number(String stack, String text) {

@@ -41,7 +41,7 @@ public record View(String text, double[] sine, double[] weight, Polarisation pol
             throw new IllegalArgumentException("the numerical aperture must be 0 to below the ambient's index, not "
                     + numericalAperture);
         }
-        String text = "numerical aperture " + plain(numericalAperture);
+        String text = edge == 0 ? "straight on" : "numerical aperture " + plain(numericalAperture);
         if (edge == 0) {
             return new View(text, new double[] {0}, new double[] {1}, Polarisation.NONE);
         }

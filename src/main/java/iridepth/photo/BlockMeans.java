@@ -1,5 +1,7 @@
 package iridepth.photo;
 
+import java.util.stream.IntStream;
+
 /** Means of a photo's linear values over a grid of square blocks, gathered band by band. */
 final class BlockMeans {
 
@@ -32,56 +34,70 @@ final class BlockMeans {
         PhotoInfo info = photo.info();
         encoding.requireFits(info);
         BlockMeans means = new BlockMeans(info);
-        for (int row = 0; row < means.rows; row++) {
+        double[][] squares = new double[means.rows][info.channels()];
+        int[][] clipped = new int[means.rows][info.channels()];
+        IntStream.range(0, means.rows).parallel().forEach(row -> {
             int y = row * means.block;
-            means.add(row, photo.rows(y, Math.min(means.block, means.height - y)), encoding);
-        }
+            Frame band = photo.rows(y, Math.min(means.block, means.height - y));
+            for (int c = 0; c < info.channels(); c++) {
+                means.add(row, band, c, encoding, squares, clipped);
+            }
+        });
         double pixels = (double) means.width * means.height;
+        double pairs = Math.max(1, (means.width - 1.0) * means.height);
         for (int c = 0; c < info.channels(); c++) {
-            means.topFraction[c] /= pixels;
-            double pairs = Math.max(1, (means.width - 1.0) * means.height);
-            means.noise[c] = Math.sqrt(means.noise[c] / (2 * pairs));
+            double sum = 0;
+            long top = 0;
+            for (int row = 0; row < means.rows; row++) {
+                sum += squares[row][c];
+                top += clipped[row][c];
+            }
+            means.noise[c] = Math.sqrt(sum / (2 * pairs));
+            means.topFraction[c] = top / pixels;
         }
         return means;
     }
 
-    private void add(int row, Frame band, Encoding encoding) {
-        int channels = band.channels();
+    private void add(int row, Frame band, int channel, Encoding encoding, double[][] squares, int[][] clipped) {
+        float[] table = encoding.table(channel);
         int top = Math.min(encoding.top(), band.maxCount());
-        for (int c = 0; c < channels; c++) {
-            float[] table = encoding.table(c);
-            double[] sums = mean[c][row];
-            double differences = 0;
-            int clipped = 0;
-            for (int y = 0; y < band.height(); y++) {
-                int at = y * width * channels + c;
-                float previous = table[band.counts()[at] & 0xffff];
-                for (int x = 0; x < width; x++, at += channels) {
-                    int count = band.counts()[at] & 0xffff;
-                    float linear = table[count];
-                    sums[x / block] += linear;
-                    differences += (double) (linear - previous) * (linear - previous);
-                    previous = linear;
-                    clipped += count >= top ? 1 : 0;
-                }
-            }
-            noise[c] += differences;
-            topFraction[c] += clipped;
+        short[] counts = band.counts();
+        double[] sums = mean[channel][row];
+        double differences = 0;
+        int atTop = 0;
+        for (int y = 0; y < band.height(); y++) {
+            int at = y * width * band.channels() + channel;
+            float previous = table[counts[at] & 0xffff];
             for (int column = 0; column < columns; column++) {
-                sums[column] /= (double) Math.min(block, width - column * block) * band.height();
+                double sum = 0;
+                int end = Math.min(block, width - column * block);
+                for (int x = 0; x < end; x++, at += band.channels()) {
+                    int count = counts[at] & 0xffff;
+                    float linear = table[count];
+                    float step = linear - previous;
+                    sum += linear;
+                    differences += step * step;
+                    previous = linear;
+                    atTop += count >= top ? 1 : 0;
+                }
+                sums[column] += sum;
             }
         }
+        for (int column = 0; column < columns; column++) {
+            sums[column] /= (double) Math.min(block, width - column * block) * band.height();
+        }
+        squares[row][channel] = differences;
+        clipped[row][channel] = atTop;
     }
 
     /** Takes the dark away; block means are those of the field at the block's middle. */
     void subtract(ShadingField dark) {
-        float[] values = new float[width * mean.length];
-        for (int row = 0; row < rows; row++) {
-            dark.row(Math.min(height - 1, row * block + block / 2), values);
-            for (int column = 0; column < columns; column++) {
-                int x = Math.min(width - 1, column * block + block / 2);
-                for (int c = 0; c < mean.length; c++) {
-                    mean[c][row][column] -= values[x * mean.length + c];
+        float[] values = new float[width];
+        for (int c = 0; c < mean.length; c++) {
+            for (int row = 0; row < rows; row++) {
+                dark.row(Math.min(height - 1, row * block + block / 2), c, values);
+                for (int column = 0; column < columns; column++) {
+                    mean[c][row][column] -= values[Math.min(width - 1, column * block + block / 2)];
                 }
             }
         }

@@ -25,9 +25,9 @@ final class NoiseBlocks {
      *
      * @param a the band
      * @param b the same band of another photo of the same thing, or null: then the noise is that of (a - b) / sqrt 2
-     * @param dark dark field of these rows, interleaved, or null
+     * @param dark dark field of these rows, channel after channel, row after row, or null
      */
-    void add(Frame a, Frame b, int channel, Encoding encoding, int top, float[] dark) {
+    void add(Frame a, Frame b, int channel, Encoding encoding, int top, float[][] dark) {
         int size = residual.size();
         double[] block = new double[size * size];
         for (int y = 0; y + size <= a.height(); y += size) {
@@ -37,7 +37,7 @@ final class NoiseBlocks {
         }
     }
 
-    private void add(Frame a, Frame b, int channel, Encoding encoding, int top, float[] dark, int left, int upper,
+    private void add(Frame a, Frame b, int channel, Encoding encoding, int top, float[][] dark, int left, int upper,
             double[] block) {
         float[] table = encoding.table(channel);
         float[] slopes = encoding.slopes(channel);
@@ -45,14 +45,16 @@ final class NoiseBlocks {
         double sum = 0;
         double slopeSquares = 0;
         for (int i = 0; i < block.length; i++) {
-            int at = ((upper + i / size) * a.width() + left + i % size) * a.channels() + channel;
+            int x = left + i % size;
+            int y = upper + i / size;
+            int at = (y * a.width() + x) * a.channels() + channel;
             int n = a.counts()[at] & 0xffff;
             int m = b == null ? n : b.counts()[at] & 0xffff;
             if (Math.max(n, m) >= top || Math.min(n, m) <= encoding.bottom()) {
                 return;
             }
             block[i] = b == null ? table[n] : (table[n] - table[m]) * Math.sqrt(0.5);
-            sum += 0.5 * (table[n] + table[m]) - (dark == null ? 0 : dark[at]);
+            sum += 0.5 * (table[n] + table[m]) - (dark == null ? 0 : dark[channel * a.height() + y][x]);
             slopeSquares += slopes[n] * slopes[n];
         }
         residual.apply(block);

@@ -38,10 +38,12 @@ public final class PhotonTransfer {
 
     private final List<List<Point>> points;
     private final double[] correlation;
+    private final double[] countVariance;
 
-    private PhotonTransfer(List<List<Point>> points, double[] correlation) {
+    private PhotonTransfer(List<List<Point>> points, double[] correlation, double[] countVariance) {
         this.points = points;
         this.correlation = correlation;
+        this.countVariance = countVariance;
     }
 
     /**
@@ -86,7 +88,7 @@ public final class PhotonTransfer {
         List<Bands.Band> bands = Bands.sample(photo);
         List<Optional<Frame>> others = bands.stream()
                 .map(band -> second.map(other -> other.rows(band.y(), band.frame().height()))).toList();
-        List<Optional<float[]>> darks = bands.stream().map(band -> dark.map(field -> rows(field, band))).toList();
+        List<Optional<float[][]>> darks = bands.stream().map(band -> dark.map(field -> rows(field, band))).toList();
         BlockResidual small = new BlockResidual(6, 2);
         int channels = photo.info().channels();
         QuietBlocks[] quiet = new QuietBlocks[channels];
@@ -104,11 +106,19 @@ public final class PhotonTransfer {
             }
         }
         return new PhotonTransfer(Arrays.stream(quiet).map(QuietBlocks::points).toList(),
-                Arrays.stream(quiet).mapToDouble(QuietBlocks::neighbourCorrelation).toArray());
+                Arrays.stream(quiet).mapToDouble(QuietBlocks::neighbourCorrelation).toArray(), rounding(photo, bands));
+    }
+
+    /** Variance in squared counts of the rounding to counts, and of the rounding of a JPEG. */
+    private static double[] rounding(PhotoFile photo, List<Bands.Band> bands) {
+        double[] variance = photo.quantisation()
+                .map(jpeg -> jpeg.variance(bands.stream().map(Bands.Band::frame).toList()))
+                .orElse(new double[photo.info().channels()]);
+        return Arrays.stream(variance).map(v -> v + NoiseModel.ROUNDING).toArray();
     }
 
     private static QuietBlocks quiet(BlockResidual residual, List<Bands.Band> bands, List<Optional<Frame>> others,
-            List<Optional<float[]>> darks, int channel, Encoding encoding, int top) {
+            List<Optional<float[][]>> darks, int channel, Encoding encoding, int top) {
         NoiseBlocks blocks = new NoiseBlocks(residual);
         for (int i = 0; i < bands.size(); i++) {
             blocks.add(bands.get(i).frame(), others.get(i).orElse(null), channel, encoding, top,
@@ -120,19 +130,19 @@ public final class PhotonTransfer {
         return QuietBlocks.of(blocks, Math.max(1, Math.min(MOST_GROUPS, blocks.count() / GROUP_BLOCKS)));
     }
 
-    private static float[] rows(ShadingField field, Bands.Band band) {
-        int length = band.frame().width() * band.frame().channels();
-        float[] all = new float[length * band.frame().height()];
-        float[] row = new float[length];
-        for (int y = 0; y < band.frame().height(); y++) {
-            field.row(band.y() + y, row);
-            System.arraycopy(row, 0, all, y * length, length);
+    /** The dark field of a band, channel after channel, row after row. */
+    private static float[][] rows(ShadingField field, Bands.Band band) {
+        Frame frame = band.frame();
+        float[][] all = new float[frame.channels() * frame.height()][frame.width()];
+        for (int i = 0; i < all.length; i++) {
+            field.row(band.y() + i % frame.height(), i / frame.height(), all[i]);
         }
         return all;
     }
 
     /**
-     * Joins the curves of two photos taken by the same camera with the same settings.
+     * Joins the curves of two photos taken by the same camera with the same settings. Means of several exposures have
+     * less noise than single ones and must not be joined with them.
      *
      * @param other curve with the same number of channels
      * @return all points of both
@@ -144,15 +154,17 @@ public final class PhotonTransfer {
         }
         List<List<Point>> joined = new ArrayList<>();
         double[] mean = new double[channels()];
+        double[] rounding = new double[channels()];
         for (int c = 0; c < channels(); c++) {
             List<Point> both = new ArrayList<>(points.get(c));
             both.addAll(other.points.get(c));
             joined.add(List.copyOf(both));
+            rounding[c] = Math.max(countVariance[c], other.countVariance[c]);
             double own = freedom(points.get(c));
             double others = freedom(other.points.get(c));
             mean[c] = (own * correlation[c] + others * other.correlation[c]) / (own + others);
         }
-        return new PhotonTransfer(List.copyOf(joined), mean);
+        return new PhotonTransfer(List.copyOf(joined), mean, rounding);
     }
 
     private static double freedom(List<Point> points) {
@@ -178,5 +190,13 @@ public final class PhotonTransfer {
      */
     public double correlation(int channel) {
         return correlation[channel];
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return variance of the counts by rounding, squared counts: 1/12, and for a JPEG the error of its coefficients
+     */
+    public double countVariance(int channel) {
+        return countVariance[channel];
     }
 }

@@ -4,10 +4,10 @@ import java.util.Arrays;
 import java.util.Optional;
 
 /**
- * The smooth part of a flat or dark frame: per channel a tensor product of cubic B-splines fitted by least squares to the
+ * The smooth part of a flat or dark frame: per channel a tensor product of cubic B-splines fitted robustly to the
  * means of small blocks, so that the frame's pixel noise is not printed into the photos that it corrects. How fine the
  * splines are is chosen by Mallows' Cp (C. L. Mallows, Technometrics 15, 1973): the smallest expected squared error, given
- * the scatter of neighbouring block means. Blocks that stand out (dust, hot pixels) do not count. Immutable.
+ * the scatter of neighbouring block means. Blocks that stand out (dust, hot pixels) hardly count. Immutable.
  */
 public final class ShadingField {
 
@@ -17,9 +17,9 @@ public final class ShadingField {
     private static final double LEAST_SIGNAL_TO_NOISE = 5;
 
     private final PhotoInfo info;
-    private final SplineFit[] fits;
+    private final SplineFit.Judged[] fits;
 
-    private ShadingField(PhotoInfo info, SplineFit[] fits) {
+    private ShadingField(PhotoInfo info, SplineFit.Judged[] fits) {
         this.info = info;
         this.fits = fits;
     }
@@ -47,7 +47,7 @@ public final class ShadingField {
         dark.ifPresent(means::subtract);
         ShadingField field = new ShadingField(info, fits(means));
         for (int c = 0; c < info.channels(); c++) {
-            double lowest = field.fits[c].lowest();
+            double lowest = field.fits[c].fit().lowest();
             if (!(lowest > LEAST_SIGNAL_TO_NOISE * means.noise(c)) || !(lowest > 0)) {
                 throw new PhotoException(info.path(), String.format(java.util.Locale.ROOT,
                         "is hardly brighter than the dark in channel %d (%.2g of full scale at its darkest); take the flat "
@@ -76,8 +76,8 @@ public final class ShadingField {
         return new ShadingField(photo.info(), fits(means));
     }
 
-    private static SplineFit[] fits(BlockMeans means) {
-        SplineFit[] fits = new SplineFit[means.channels()];
+    private static SplineFit.Judged[] fits(BlockMeans means) {
+        SplineFit.Judged[] fits = new SplineFit.Judged[means.channels()];
         Arrays.setAll(fits, c -> SplineFit.of(means, c));
         return fits;
     }
@@ -117,12 +117,11 @@ public final class ShadingField {
      * Evaluates the field along a row.
      *
      * @param y row, 0 at the top
-     * @param into filled with width x channels values, interleaved
+     * @param channel 0 and up
+     * @param into its first values, as many as the picture is wide, are filled
      */
-    public void row(int y, float[] into) {
-        for (int c = 0; c < fits.length; c++) {
-            fits[c].row(y, into, c, fits.length);
-        }
+    public void row(int y, int channel, float[] into) {
+        fits[channel].fit().row(y, into);
     }
 
     /**
@@ -130,7 +129,7 @@ public final class ShadingField {
      * @return mean of the field over the picture, a linear fraction of full scale
      */
     public double mean(int channel) {
-        return fits[channel].mean();
+        return fits[channel].fit().mean();
     }
 
     /**

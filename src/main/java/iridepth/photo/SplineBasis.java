@@ -1,5 +1,6 @@
 package iridepth.photo;
 
+import java.util.Arrays;
 import org.apache.commons.math3.linear.CholeskyDecomposition;
 import org.apache.commons.math3.linear.MatrixUtils;
 import org.apache.commons.math3.linear.RealMatrix;
@@ -15,6 +16,10 @@ final class SplineBasis {
 
     private final int length;
     private final int intervals;
+    /** First pixel of each interval, and the end. */
+    private final int[] starts;
+    /** Where in its interval each pixel's centre lies, 0 to 1. */
+    private final float[] fraction;
     private final RealMatrix blockMeans;
     private final RealMatrix projection;
 
@@ -26,6 +31,14 @@ final class SplineBasis {
     SplineBasis(int length, int block, int intervals) {
         this.length = length;
         this.intervals = intervals;
+        starts = new int[intervals + 1];
+        fraction = new float[intervals == 0 ? 0 : length];
+        for (int x = 0; x < fraction.length; x++) {
+            double u = (x + 0.5) / length * intervals;
+            int k = Math.min(intervals - 1, (int) u);
+            fraction[x] = (float) (u - k);
+            starts[k + 1] = x + 1;
+        }
         int blocks = (length + block - 1) / block;
         double[][] rows = new double[blocks][size()];
         for (int b = 0; b < blocks; b++) {
@@ -91,25 +104,20 @@ final class SplineBasis {
         return combined;
     }
 
-    /** Evaluates at every pixel: fills into[start], into[start + step], ... */
-    void evaluate(double[] c, float[] into, int start, int step) {
+    /** Evaluates at every pixel along the side. */
+    void evaluate(double[] c, float[] into) {
         if (intervals == 0) {
-            for (int x = 0; x < length; x++) {
-                into[start + x * step] = (float) c[0];
-            }
+            Arrays.fill(into, 0, length, (float) c[0]);
             return;
         }
-        double pitch = (double) intervals / length;
-        int x = 0;
         for (int k = 0; k < intervals; k++) {
             float a0 = (float) ((c[k] + 4 * c[k + 1] + c[k + 2]) / 6);
             float a1 = (float) ((c[k + 2] - c[k]) / 2);
             float a2 = (float) ((c[k] - 2 * c[k + 1] + c[k + 2]) / 2);
             float a3 = (float) ((-c[k] + 3 * c[k + 1] - 3 * c[k + 2] + c[k + 3]) / 6);
-            int end = k == intervals - 1 ? length : (int) Math.ceil((k + 1) / pitch - 0.5);
-            for (; x < end; x++) {
-                float t = (float) ((x + 0.5) * pitch - k);
-                into[start + x * step] = a0 + t * (a1 + t * (a2 + t * a3));
+            for (int x = starts[k]; x < starts[k + 1]; x++) {
+                float t = fraction[x];
+                into[x] = a0 + t * (a1 + t * (a2 + t * a3));
             }
         }
     }

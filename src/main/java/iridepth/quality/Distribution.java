@@ -7,10 +7,10 @@ import java.math.MathContext;
 /**
  * The distribution of thickness over a map, gathered value by value in memory that depends on the range alone.
  *
- * <p>Every value falls into a fine bin [i, i + 1) * {@value #BINS_PER_NM}<sup>-1</sup> nm, and is also added, rounded to
- * a quantum of at most 2<sup>-30</sup> of the range, to integer sums of values and squares. Integer sums have no order: any
- * split of a map into bands, gathered by any number of threads and combined in any order, gives the same bits. Count,
- * mean and variance are exact for the rounded values; percentiles are off by at most one fine bin, 0.05 nm.
+ * <p>Every value falls into a fine bin [i, i + 1) * 0.05 nm, and is also added, rounded to a quantum of at most
+ * 2<sup>-29</sup> of the range (of 0.05 nm if the range is less), to integer sums of values and squares. Integer sums have no
+ * order: any split of a map into bands, gathered by any number of threads and combined in any order, gives the same bits.
+ * Count, mean and variance are exact for the rounded values; percentiles are off by at most one fine bin, 0.05 nm.
  *
  * <p>NaN, 'no value', is skipped. A value outside the range is an error. Not safe for concurrent writers: give each thread
  * its own and {@link #combine} them.
@@ -203,7 +203,7 @@ public final class Distribution {
         return count == 0 ? Double.NaN : Math.max(0, upToUpper - countBelow(lower)) / count;
     }
 
-    /** Index of the first fine bin: its lower edge is at index / {@value #BINS_PER_NM} nm. */
+    /** Index of the first fine bin: its lower edge is at index / BINS_PER_NM nm. */
     long firstBin() {
         return firstBin;
     }

@@ -53,9 +53,8 @@ public record Uniformity(long count, double mean, double median, double standard
     public static Uniformity of(double... values) {
         double[] sorted = Arrays.stream(values).filter(v -> !Double.isNaN(v)).sorted().toArray();
         int n = sorted.length;
-        double mean = n == 0 ? Double.NaN : meanOf(sorted);
-        double squares = Arrays.stream(sorted).map(v -> (v - mean) * (v - mean)).sum();
-        return new Uniformity(n, mean, percentile(sorted, 50), n < 2 ? Double.NaN : Math.sqrt(squares / (n - 1)),
+        Sample sample = new Sample(sorted);
+        return new Uniformity(n, sample.mean(), percentile(sorted, 50), sample.standardDeviation(),
                 n == 0 ? Double.NaN : sorted[0], n == 0 ? Double.NaN : sorted[n - 1],
                 percentiles(percent -> percentile(sorted, percent)));
     }
@@ -74,11 +73,6 @@ public record Uniformity(long count, double mean, double median, double standard
 
     private static List<Percentile> percentiles(DoubleUnaryOperator percentile) {
         return PERCENTS.stream().map(p -> new Percentile(p, percentile.applyAsDouble(p))).toList();
-    }
-
-    private static double meanOf(double[] values) {
-        double rough = Arrays.stream(values).sum() / values.length;
-        return rough + Arrays.stream(values).map(v -> v - rough).sum() / values.length;
     }
 
     private static double percentile(double[] sorted, double percent) {

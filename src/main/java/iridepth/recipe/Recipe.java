@@ -24,9 +24,10 @@ import java.util.List;
  * @param pixelUm   size of a pixel in um, NaN to take it from the photo
  * @param excluded  regions to leave out
  * @param tolerance limits in nm, lower and upper, or null
+ * @param tables    tables of materials and lamps that it names, as read
  */
 public record Recipe(Path file, String title, Stack stack, ThicknessRange range, ViewSpec view, List<Light> lights,
-                     CameraSpec camera, double pixelUm, List<Region> excluded, double[] tolerance) {
+                     CameraSpec camera, double pixelUm, List<Region> excluded, double[] tolerance, List<Path> tables) {
     /**
      * Directions of view as the recipe gives them.
      *
@@ -72,7 +73,8 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
         double[] tolerance = tolerance(top.section("tolerance"));
         String title = top.text("title", file.getFileName().toString());
         top.finish();
-        return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance);
+        return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance,
+                List.copyOf(tables.read()));
     }
 
     static Stack stack(Section section, String key, Materials materials) {
@@ -127,6 +129,11 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
     }
 
     static Region region(Section section, String key, double[] row) {
+        for (double number : row) {
+            if (number != Math.rint(number)) {
+                throw section.error(key, section.path(key) + ": a region is [x, y, width, height] in whole pixels");
+            }
+        }
         try {
             return new Region((int) row[0], (int) row[1], (int) row[2], (int) row[3]);
         } catch (IllegalArgumentException e) {

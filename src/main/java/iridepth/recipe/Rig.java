@@ -8,8 +8,6 @@ import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.ShadingField;
 import iridepth.photo.SignalSource;
-import java.nio.file.Path;
-import java.util.List;
 import java.util.Optional;
 
 /**
@@ -72,12 +70,7 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
             double fullScale = Double.isNaN(camera.fullScale()) ? photo.info().maxCount() : camera.fullScale();
             return NoiseModel.of(camera.readNoise() / fullScale * camera.fullWell(), camera.fullWell());
         }
-        Path flat = camera.flat();
-        if (flat == null) {
-            return NoiseModel.fromPhoto(photo, encoding, dark);
-        }
-        try (PhotoFile file = PhotoFile.open(flat)) {
-            return NoiseModel.fromFlats(List.of(file), encoding, dark);
-        }
+        // A flat is often the mean of several exposures and so quieter than the photo: the photo's own noise is what counts.
+        return NoiseModel.fromPhoto(photo, encoding, dark);
     }
 }

@@ -4,6 +4,7 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import java.util.Arrays;
 import java.util.Random;
 import org.junit.jupiter.api.Test;
 
@@ -42,7 +43,7 @@ class DistributionTest {
         for (double value : values) {
             d.add(value);
         }
-        java.util.Arrays.sort(values);
+        Arrays.sort(values);
         for (int percent = 0; percent <= 100; percent++) {
             assertEquals(values[50 * percent], d.percentile(percent), 0.05);
         }
