@@ -68,6 +68,11 @@ record PageGrid(int width, int height, int factor) {
         void visit(int point, int pixel);
     }
 
+    /** Whether points lie in a row of the photo. */
+    boolean shows(int y) {
+        return y >= firstY() && (y - firstY()) % factor == 0;
+    }
+
     /**
      * Visits the points that lie in a block of whole rows.
      *
@@ -77,10 +82,10 @@ record PageGrid(int width, int height, int factor) {
     void visit(int firstRow, int lines, Visitor visitor) {
         int columns = columns();
         for (int line = 0; line < lines; line++) {
-            int y = firstRow + line - firstY();
-            if (y >= 0 && y % factor == 0) {
+            if (shows(firstRow + line)) {
+                int row = (firstRow + line - firstY()) / factor;
                 for (int i = 0; i < columns; i++) {
-                    visitor.visit(y / factor * columns + i, line * width + firstX() + i * factor);
+                    visitor.visit(row * columns + i, line * width + firstX() + i * factor);
                 }
             }
         }
