@@ -73,7 +73,7 @@ public final class Instrument {
         Encoding encoding = rig().encoding(photo);
         Channels wanted = Channels.of(photo, encoding);
         if (!wanted.equals(channels)) {
-            Setup made = Setup.known(recipe, photo, encoding);
+            Setup made = Setup.of(rig(), photo);
             reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;
