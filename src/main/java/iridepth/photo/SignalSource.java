@@ -4,10 +4,12 @@ import java.util.Arrays;
 import java.util.Optional;
 
 /**
- * A photo as linear signal: value = linear(count) - dark, divided by the flat where there is one, with its variance by
- * the noise model and its censoring at the ends of the scale. Rows may be asked for from several threads.
+ * A photo as linear signal: value = linear(count) - dark, divided by the flat where there is one, with its censoring at
+ * the ends of the scale and the variance of its noise. Rows may be asked for from several threads.
  */
 public final class SignalSource {
+
+    private static final int LIGHT_ROWS = 65;
 
     private final PhotoFile photo;
     private final Encoding encoding;
@@ -15,6 +17,8 @@ public final class SignalSource {
     private final Optional<ShadingField> flat;
     private final NoiseModel noise;
     private final int[] saturation;
+    private final double[] darkMean;
+    private final double[] flatMean;
 
     private SignalSource(PhotoFile photo, Encoding encoding, Optional<ShadingField> dark, Optional<ShadingField> flat,
             NoiseModel noise) {
@@ -24,6 +28,14 @@ public final class SignalSource {
         this.flat = flat;
         this.noise = noise;
         this.saturation = Saturation.of(photo, encoding);
+        this.darkMean = means(dark, photo.info().channels(), 0);
+        this.flatMean = means(flat, photo.info().channels(), 1);
+    }
+
+    private static double[] means(Optional<ShadingField> field, int channels, double otherwise) {
+        double[] means = new double[channels];
+        Arrays.setAll(means, c -> field.isPresent() ? field.get().mean(c) : otherwise);
+        return means;
     }
 
     /**
@@ -88,6 +100,18 @@ public final class SignalSource {
     }
 
     /**
+     * Reads the counts of a band of rows, to be converted row by row.
+     *
+     * @param frame 0 up to frames - 1
+     * @param y first row
+     * @param count how many rows
+     * @return their counts
+     */
+    public Frame counts(int frame, int y, int count) {
+        return photo.rows(frame, y, count);
+    }
+
+    /**
      * Converts rows that have been read.
      *
      * @param rows whole rows of the photo
@@ -95,48 +119,103 @@ public final class SignalSource {
      * @return their signal
      */
     public Signal convert(Frame rows, int y) {
+        Signal signal = Signal.blank(rows.width(), rows.height(), rows.channels());
+        Signal line = Signal.row(info());
         int width = rows.width();
-        int channels = rows.channels();
-        int length = rows.counts().length;
-        Signal signal = new Signal(width, rows.height(), channels, new float[length], new float[length], new byte[length]);
-        float[] darkRow = new float[width];
-        float[] flatRow = new float[width];
-        Arrays.fill(flatRow, 1);
         for (int row = 0; row < rows.height(); row++) {
-            for (int c = 0; c < channels; c++) {
-                if (dark.isPresent()) {
-                    dark.get().row(y + row, c, darkRow);
-                }
-                if (flat.isPresent()) {
-                    flat.get().row(y + row, c, flatRow);
-                }
-                convert(rows.counts(), row * width * channels + c, c, darkRow, flatRow, signal);
-            }
+            convert(rows, row, y + row, line);
+            System.arraycopy(line.value(), 0, signal.value(), row * line.value().length, line.value().length);
+            System.arraycopy(line.limit(), 0, signal.limit(), row * line.limit().length, line.limit().length);
+            System.arraycopy(line.light(), 0, signal.light(), row * width, width);
         }
         return signal;
     }
 
-    /** Converts one channel of a row that starts at a place in the arrays. */
-    private void convert(short[] counts, int start, int channel, float[] darkRow, float[] flatRow, Signal signal) {
+    /**
+     * Converts one row.
+     *
+     * @param rows rows of the photo
+     * @param row which of them
+     * @param y its place in the photo
+     * @param line receives its signal: of the photo's width, one row high
+     */
+    public void convert(Frame rows, int row, int y, Signal line) {
+        int width = rows.width();
+        int channels = rows.channels();
+        float[] light = line.light();
+        float[] darkRow = new float[width];
+        float[] flatRow = new float[width];
+        Arrays.fill(flatRow, 1);
+        Arrays.fill(light, flat.isPresent() ? 0 : 1);
+        for (int c = 0; c < channels; c++) {
+            if (dark.isPresent()) {
+                dark.get().row(y, c, darkRow);
+            }
+            if (flat.isPresent()) {
+                flat.get().row(y, c, flatRow);
+                float weight = (float) (1 / (channels * flatMean[c]));
+                for (int x = 0; x < width; x++) {
+                    light[x] += weight * flatRow[x];
+                }
+            }
+            convert(rows.counts(), row * width * channels, c, darkRow, flatRow, line);
+        }
+    }
+
+    /** Converts one channel of a row that starts at a place in the counts. */
+    private void convert(short[] counts, int start, int channel, float[] darkRow, float[] flatRow, Signal line) {
         float[] table = encoding.table(channel);
-        float[] slopes = encoding.slopes(channel);
-        float read = (float) noise.variance(channel, 0);
-        float gain = (float) noise.gain(channel);
-        float black = (float) noise.black(channel);
         int bottom = encoding.bottom();
         int top = saturation[channel];
-        float[] value = signal.value();
-        float[] variance = signal.variance();
-        byte[] limit = signal.limit();
-        int channels = signal.channels();
-        for (int x = 0, at = start; x < signal.width(); x++, at += channels) {
-            int count = counts[at] & 0xffff;
-            float light = table[count] - darkRow[x];
-            float slope = slopes[count];
-            float scale = 1 / flatRow[x];
-            value[at] = light * scale;
-            variance[at] = (read + gain * Math.max(0, light - black) + slope * slope * (1f / 12)) * scale * scale;
+        float[] value = line.value();
+        byte[] limit = line.limit();
+        int channels = line.channels();
+        for (int x = 0, at = channel; x < line.width(); x++, at += channels) {
+            int count = counts[start + at] & 0xffff;
+            value[at] = (table[count] - darkRow[x]) / flatRow[x];
             limit[at] = count >= top ? Signal.AT_LEAST : count <= bottom ? Signal.AT_MOST : Signal.MEASURED;
         }
+    }
+
+    /**
+     * Variance of the noise where a value is expected: by the noise model at the light that gives this value, with the
+     * rounding to counts, without the uncertainty of the flat itself. The light is taken to fall off alike in all channels.
+     *
+     * @param channel 0 and up
+     * @param value expected signal
+     * @param light light over its mean in the picture, above 0, and 1 without a flat; see {@link Signal#light}
+     * @return variance of the value, above 0
+     */
+    public double variance(int channel, double value, double light) {
+        double scale = flatMean[channel] * light;
+        double signal = value * scale;
+        return noise.variance(channel, signal, encoding.slope(channel, signal + darkMean[channel])) / (scale * scale);
+    }
+
+    /**
+     * @return the least and the most of {@link Signal#light} in the picture, on a grid of rows fine enough for a smooth field
+     */
+    public double[] lightRange() {
+        double[] range = {1, 1};
+        if (flat.isEmpty()) {
+            return range;
+        }
+        int channels = info().channels();
+        float[] row = new float[info().width()];
+        for (int i = 0; i < LIGHT_ROWS; i++) {
+            int y = (int) ((info().height() - 1L) * i / (LIGHT_ROWS - 1));
+            float[] light = new float[row.length];
+            for (int c = 0; c < channels; c++) {
+                flat.get().row(y, c, row);
+                for (int x = 0; x < row.length; x++) {
+                    light[x] += row[x] / (float) (channels * flatMean[c]);
+                }
+            }
+            for (float l : light) {
+                range[0] = Math.min(range[0], l);
+                range[1] = Math.max(range[1], l);
+            }
+        }
+        return range;
     }
 }

@@ -1,14 +1,12 @@
 package iridepth.reading;
 
 import iridepth.curve.ColourCurve;
+import iridepth.photo.Frame;
 import iridepth.photo.Region;
-import iridepth.photo.Signal;
 import iridepth.photo.SignalSource;
-import java.util.Arrays;
 import java.util.List;
 import java.util.function.LongConsumer;
 import java.util.stream.IntStream;
-import org.apache.commons.math3.distribution.ChiSquaredDistribution;
 
 /**
  * Reads the film thickness of every pixel of a photograph by maximum likelihood on a colour curve.
@@ -18,20 +16,12 @@ import org.apache.commons.math3.distribution.ChiSquaredDistribution;
  */
 public final class FilmReader {
     private static final int BAND = 64;
-    /** Share of good pixels that the off-curve test gives up. */
-    private static final double OFF_CURVE_PROBABILITY = 1e-4;
-    /** A channel is dark when its signal is within so many standard deviations of none. */
-    private static final double DARK_SIGMAS = 3;
-
     private final ColourCurve curve;
     private final List<Region> excluded;
-    private final double threshold;
 
     private FilmReader(ColourCurve curve, List<Region> excluded) {
         this.curve = curve;
         this.excluded = List.copyOf(excluded);
-        int freedom = Math.max(1, curve.channels() - 1);
-        this.threshold = new ChiSquaredDistribution(freedom).inverseCumulativeProbability(1 - OFF_CURVE_PROBABILITY);
     }
 
     /**
@@ -56,75 +46,35 @@ public final class FilmReader {
             throw new IllegalArgumentException("the photo has " + photo.info().channels() + " channels where the calibration has "
                     + curve.channels());
         }
-        ThicknessMap map = ThicknessMap.blank(photo.info().width(), photo.info().height());
-        for (int y = 0; y < photo.info().height(); y += BAND) {
-            int rows = Math.min(BAND, photo.info().height() - y);
-            Signal signal = photo.rows(frame, y, rows);
+        CurveIndex index = CurveIndex.of(curve, photo);
+        int width = photo.info().width();
+        int height = photo.info().height();
+        ThicknessMap map = ThicknessMap.blank(width, height);
+        PixelRow[] rows = new PixelRow[height];
+        JumpPenalty penalty = JumpPenalty.of(index);
+        PathSweep[] sweeps = new PathSweep[4];
+        for (int i = 0; i < 4; i++) {
+            sweeps[i] = new PathSweep(penalty, width, i % 2 == 0);
+        }
+        for (int y = 0; y < height; y += BAND) {
+            int count = Math.min(BAND, height - y);
+            Frame counts = photo.counts(frame, y, count);
             int top = y;
-            IntStream.range(0, rows).parallel().forEach(row -> readRow(signal, row, top + row, map));
-            progress.accept((long) (y + rows) * photo.info().width());
+            ThreadLocal<RowReader> readers = ThreadLocal.withInitial(() -> new RowReader(photo, excluded, index));
+            IntStream.range(0, count).parallel().forEach(row -> rows[top + row] = readers.get().read(counts, row, top + row));
+            IntStream.range(0, 2).parallel().forEach(i -> {
+                for (int row = 0; row < count; row++) {
+                    sweeps[i].advance(rows[top + row], rows[top + row].message(i));
+                }
+            });
+            progress.accept((long) (y + count) * width);
         }
+        IntStream.range(2, 4).parallel().forEach(i -> {
+            for (int row = height - 1; row >= 0; row--) {
+                sweeps[i].advance(rows[row], rows[row].message(i));
+            }
+        });
+        IntStream.range(0, height).parallel().forEach(row -> ReadRow.choose(rows[row], index).into(map, row));
         return map;
-    }
-
-    private void readRow(Signal signal, int row, int y, ThicknessMap map) {
-        CandidateSearch search = new ExhaustiveSearch(curve, threshold);
-        Misfit misfit = new Misfit(curve);
-        Candidates candidates = new Candidates();
-        double[] parts = new double[2];
-        boolean[] out = excludedColumns(y, map.width());
-        for (int x = 0; x < map.width(); x++) {
-            int target = y * map.width() + x;
-            int pixel = row * map.width() + x;
-            if (out[x]) {
-                continue;
-            }
-            if (clipped(signal, pixel)) {
-                map.state()[target] = State.CLIPPED.code();
-                continue;
-            }
-            search.find(signal.value(), signal.variance(), signal.limit(), pixel, candidates);
-            int best = candidates.likeliest();
-            if (best < 0) {
-                map.state()[target] = (dark(signal, pixel) ? State.DARK : State.OFF_CURVE).code();
-                continue;
-            }
-            misfit.load(signal.value(), signal.variance(), signal.limit(), pixel);
-            misfit.uncertainty(candidates.thickness(best), parts);
-            map.thickness()[target] = (float) candidates.thickness(best);
-            map.random()[target] = (float) parts[0];
-            map.systematic()[target] = (float) parts[1];
-            map.state()[target] = State.READ.code();
-        }
-    }
-
-    private boolean[] excludedColumns(int y, int width) {
-        boolean[] out = new boolean[width];
-        for (Region region : excluded) {
-            if (y >= region.y() && y < region.y() + region.height()) {
-                Arrays.fill(out, Math.min(width, Math.max(0, region.x())),
-                        Math.min(width, Math.max(0, region.x() + region.width())), true);
-            }
-        }
-        return out;
-    }
-
-    private boolean clipped(Signal signal, int pixel) {
-        for (int c = 0; c < curve.channels(); c++) {
-            if (signal.limit()[pixel * curve.channels() + c] <= 0) {
-                return false;
-            }
-        }
-        return true;
-    }
-
-    private boolean dark(Signal signal, int pixel) {
-        for (int c = 0; c < curve.channels(); c++) {
-            int at = pixel * curve.channels() + c;
-            if (signal.value()[at] > DARK_SIGMAS * Math.sqrt(signal.variance()[at])) {
-                return false;
-            }
-        }
-        return true;
     }
 }

@@ -6,10 +6,10 @@ import iridepth.photo.NoiseModel;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.Region;
+import iridepth.photo.RegionStatistics;
 import iridepth.photo.ShadingField;
 import iridepth.photo.SignalSource;
-import java.nio.file.Path;
-import java.util.List;
 import java.util.Optional;
 
 /**
@@ -66,18 +66,21 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
         return SignalSource.of(photo, encoding, dark, flat, noise(photo, encoding));
     }
 
+    /**
+     * What a region of a photo of this rig amounts to, channel by channel. The means carry their own scatter, so that no noise model
+     * enters.
+     */
+    public RegionStatistics[] patch(PhotoFile photo, Region region) {
+        return RegionStatistics.of(SignalSource.of(photo, encoding(photo.info()), dark, flat, NoiseModel.of(0, 1)).region(0, region));
+    }
+
     private NoiseModel noise(PhotoFile photo, Encoding encoding) {
         CameraSpec camera = recipe.camera();
         if (!Double.isNaN(camera.fullWell())) {
             double fullScale = Double.isNaN(camera.fullScale()) ? photo.info().maxCount() : camera.fullScale();
             return NoiseModel.of(camera.readNoise() / fullScale * camera.fullWell(), camera.fullWell());
         }
-        Path flat = camera.flat();
-        if (flat == null) {
-            return NoiseModel.fromPhoto(photo, encoding, dark);
-        }
-        try (PhotoFile file = PhotoFile.open(flat)) {
-            return NoiseModel.fromFlats(List.of(file), encoding, dark);
-        }
+        // A flat is often the mean of several exposures and so quieter than the photo: the photo's own noise is what counts.
+        return NoiseModel.fromPhoto(photo, encoding, dark);
     }
 }

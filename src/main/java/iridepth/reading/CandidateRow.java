@@ -1,0 +1,106 @@
+package iridepth.reading;
+
+import java.util.Arrays;
+
+/**
+ * The candidates of a row of pixels: thicknesses at which the curve passes close to a pixel's signal, in order of rising
+ * thickness, each with its cost (twice the negative log likelihood up to a constant). Those of a pixel stand together, pixel
+ * after pixel.
+ *
+ * <p>A container to be filled anew: {@link #clear}, then for each pixel any number of {@link #add} and one {@link #close}.
+ */
+final class CandidateRow {
+    /** Most that are kept for a pixel; the costliest are left out. */
+    static final int MOST = 120;
+
+    private float[] thickness;
+    private float[] cost;
+    private int size;
+    private int first;
+    private boolean explained;
+
+    CandidateRow(int width) {
+        this.thickness = new float[2 * width + MOST];
+        this.cost = new float[2 * width + MOST];
+    }
+
+    void clear() {
+        size = 0;
+        first = 0;
+        explained = false;
+    }
+
+    /**
+     * Adds a candidate to the pixel in work.
+     *
+     * @param explains whether it passes the off-curve test
+     */
+    void add(float thicknessNm, float itsCost, boolean explains) {
+        explained |= explains;
+        if (size == thickness.length) {
+            thickness = Arrays.copyOf(thickness, 2 * size);
+            cost = Arrays.copyOf(cost, 2 * size);
+        }
+        if (size - first == MOST) {
+            dropCostliest();
+        }
+        thickness[size] = thicknessNm;
+        cost[size++] = itsCost;
+    }
+
+    /** Adds a candidate to the pixel in work unless it is the one added last. */
+    void addOnce(float thicknessNm, float itsCost, boolean explains) {
+        if (size == first || thicknessNm > thickness[size - 1]) {
+            add(thicknessNm, itsCost, explains);
+        }
+    }
+
+    private void dropCostliest() {
+        int worst = first;
+        for (int k = first + 1; k < size; k++) {
+            worst = cost[k] > cost[worst] ? k : worst;
+        }
+        System.arraycopy(thickness, worst + 1, thickness, worst, size - worst - 1);
+        System.arraycopy(cost, worst + 1, cost, worst, size - worst - 1);
+        size--;
+    }
+
+    /** Ends the pixel in work; how many candidates it has. */
+    int close() {
+        int count = size - first;
+        first = size;
+        explained = false;
+        return count;
+    }
+
+    /** Takes back the candidates of the pixel in work. */
+    void withdraw() {
+        size = first;
+        explained = false;
+    }
+
+    /** Number of candidates so far. */
+    int size() {
+        return size;
+    }
+
+    /** Whether a candidate of the pixel in work passes the off-curve test. */
+    boolean explained() {
+        return explained;
+    }
+
+    /** Thickness of a candidate by its place in the row, nm. */
+    float thickness(int place) {
+        return thickness[place];
+    }
+
+    /** Cost of a candidate by its place in the row. */
+    float cost(int place) {
+        return cost[place];
+    }
+
+    /** A copy of all thicknesses. */
+    float[] thicknesses() {
+        return Arrays.copyOf(thickness, size);
+    }
+}

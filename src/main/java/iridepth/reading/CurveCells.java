@@ -1,0 +1,111 @@
+package iridepth.reading;
+
+import iridepth.curve.ColourCurve;
+
+/**
+ * A grid over channel space that tells for every cell which runs of the curve can lie within the chi-square threshold of a
+ * pixel in it.
+ *
+ * <p>chi^2 = r^T C^-1 r bounds a weighted sum of residuals, |w^T r| <= sqrt(chi^2 w^T C w) (Cauchy and Schwarz), so that the
+ * curve between two samples can only explain pixels in the box around it whose half-widths are these bounds, widened by how far
+ * the curve leaves its chord. Every cell that such a box touches lists the piece. A pixel outside the grid has no candidates.
+ *
+ * <p>A run is straight when a pixel within the threshold of it sees one minimum of chi-square along it. In the metric of the
+ * noise and by arc length, half the second derivative of chi-square is 1 - k n . r, with k the curvature, n the normal and r the
+ * residual. A pixel within rho of a curve of length l has n . r < rho + k l^2 / 2 all along, so that chi-square is convex where
+ * k (rho + k l^2 / 2) < 1. And the curve must not come to a halt in between, as that of one channel does at each extremum.
+ */
+final class CurveCells {
+    private static final int[] MOST_CELLS = {8192, 512, 96};
+    /** Share of the highest speed along a run below which the curve comes to a halt. */
+    private static final double SLOW = 0.3;
+    /** Bound of the curvature condition: 1, less a margin for other levels of light. */
+    private static final double CONVEX = 0.7;
+
+    private final CellFrame frame;
+    /** [cell]: where its runs begin, one more entry at the end. */
+    private final int[] start;
+    /** The runs; see {@link #runs()}. */
+    private final int[] runs;
+
+    private CurveCells(CellFrame frame, int[] start, int[] runs) {
+        this.frame = frame;
+        this.start = start;
+        this.runs = runs;
+    }
+
+    /**
+     * Builds the grid.
+     *
+     * @param light     the least light that a pixel has, where noise is greatest
+     * @param table     the samples to which runs refer
+     * @param threshold chi-square of the farthest candidates
+     */
+    static CurveCells of(ColourCurve curve, ExpectedNoise noise, double light, TangentTable table, double threshold) {
+        CellAxes axes = CellAxes.of(curve, noise);
+        CurveBoxes boxes = CurveBoxes.of(curve, noise, light, table, axes, threshold);
+        double[] edge = new double[axes.count()];
+        for (int i = 0; i < edge.length; i++) {
+            double finest = (boxes.most(i) - boxes.least(i)) / MOST_CELLS[edge.length - 1];
+            edge[i] = Math.max(boxes.halfWidth(i), finest);
+        }
+        CellFrame frame = new CellFrame(axes, boxes.least(), boxes.most(), edge);
+        CellRuns lists = new CellRuns(frame.size());
+        for (int k = 0; k + 1 < table.size(); k++) {
+            mark(frame, boxes, k, lists);
+        }
+        return new CurveCells(frame, lists.starts(), lists.packed((first, last) -> slowness(table, first, last, threshold)));
+    }
+
+    private static float slowness(TangentTable table, int first, int last, double threshold) {
+        double length = 0;
+        double curvature = 0;
+        double slowest = Double.POSITIVE_INFINITY;
+        double fastest = 0;
+        for (int k = first; k <= last; k++) {
+            double speed = Math.sqrt(table.information(k));
+            length += speed;
+            slowest = Math.min(slowest, speed);
+            fastest = Math.max(fastest, speed);
+            curvature = Math.max(curvature, table.curvature(k));
+        }
+        if (slowest > SLOW * fastest && curvature * (Math.sqrt(threshold) + curvature * length * length / 2) < CONVEX) {
+            return 0;
+        }
+        return (float) (1 / fastest);
+    }
+
+    private static void mark(CellFrame frame, CurveBoxes boxes, int k, CellRuns lists) {
+        int[] first = new int[CellAxes.MOST];
+        int[] last = new int[CellAxes.MOST];
+        for (int i = 0; i < boxes.axes(); i++) {
+            first[i] = frame.place(i, boxes.low(k, i));
+            last[i] = frame.place(i, boxes.high(k, i));
+        }
+        for (int a = first[0]; a <= last[0]; a++) {
+            for (int b = first[1]; b <= last[1]; b++) {
+                for (int c = first[2]; c <= last[2]; c++) {
+                    lists.add((a * frame.size(1) + b) * frame.size(2) + c, k);
+                }
+            }
+        }
+    }
+
+    /** The cell of a pixel whose values begin at a place, or -1 outside the grid. */
+    int cell(float[] values, int at) {
+        return frame.cell(values, at);
+    }
+
+    /** Where the runs of a cell begin in {@link #runs}; those of cell + 1 begin where they end. */
+    int start(int cell) {
+        return start[cell];
+    }
+
+    /**
+     * {@link CellRuns#PACKED} values a run: first sample, last sample, and the bits of a float that is 0 where the run is
+     * straight, else the samples that the curve takes at least to pass one standard deviation of the noise.
+     */
+    int[] runs() {
+        return runs;
+    }
+}

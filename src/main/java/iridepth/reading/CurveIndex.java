@@ -1,0 +1,47 @@
+package iridepth.reading;
+
+import iridepth.curve.ColourCurve;
+import iridepth.photo.SignalSource;
+import java.util.stream.IntStream;
+import org.apache.commons.math3.distribution.ChiSquaredDistribution;
+
+/**
+ * Everything about a curve and its noise that can be worked out before the first pixel. Immutable; serves all threads.
+ *
+ * @param curve      the colour curve
+ * @param noise      the expected noise
+ * @param levels     levels of light in the picture
+ * @param threshold  chi-square of the farthest candidates, which one good pixel in a million exceeds
+ * @param acceptance chi-square above which a thickness does not explain a pixel, which one good pixel in ten thousand exceeds
+ * @param tables     the curve as tangents, one table for each level
+ * @param cells      which parts of it can explain a pixel
+ */
+record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, double threshold, double acceptance,
+                  TangentTable[] tables, CurveCells cells) {
+    private static final double CANDIDATE_PROBABILITY = 1e-6;
+    private static final double OFF_CURVE_PROBABILITY = 1e-4;
+
+    static CurveIndex of(ColourCurve curve, ExpectedNoise noise, LightLevels levels) {
+        ChiSquaredDistribution chiSquare = new ChiSquaredDistribution(Math.max(1, curve.channels() - 1));
+        double threshold = chiSquare.inverseCumulativeProbability(1 - CANDIDATE_PROBABILITY);
+        double acceptance = chiSquare.inverseCumulativeProbability(1 - OFF_CURVE_PROBABILITY);
+        CurveSampling sampling = CurveSampling.of(curve, noise, levels.light(levels.count() - 1));
+        TangentTable[] tables = new TangentTable[levels.count()];
+        IntStream.range(0, tables.length).parallel()
+                .forEach(i -> tables[i] = TangentTable.of(curve, noise, levels.light(i), sampling));
+        CurveCells cells = CurveCells.of(curve, noise, levels.light(0), tables[0], threshold);
+        return new CurveIndex(curve, noise, levels, threshold, acceptance, tables, cells);
+    }
+
+    /** The index of a photo's signal. */
+    static CurveIndex of(ColourCurve curve, SignalSource photo) {
+        double[] light = photo.lightRange();
+        return of(curve, photo::variance, LightLevels.of(light[0], light[1]));
+    }
+
+    /** Whether a candidate passes the off-curve test. */
+    boolean explains(float thicknessNm, float cost, int level) {
+        TangentTable table = tables[level];
+        return cost - table.logDeterminant(table.nearest(thicknessNm)) <= acceptance;
+    }
+}
