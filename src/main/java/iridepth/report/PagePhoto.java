@@ -1,13 +1,19 @@
 package iridepth.report;
 
 import iridepth.colour.Srgb;
+import iridepth.photo.Encoding;
+import iridepth.photo.NoiseModel;
+import iridepth.photo.PhotoFile;
+import iridepth.photo.PhotoInfo;
 import iridepth.photo.Signal;
+import iridepth.photo.SignalSource;
 import java.awt.image.BufferedImage;
 import java.io.ByteArrayOutputStream;
 import java.io.IOException;
 import java.io.UncheckedIOException;
 import java.util.Arrays;
 import java.util.Base64;
+import java.util.Optional;
 import javax.imageio.IIOImage;
 import javax.imageio.ImageIO;
 import javax.imageio.ImageWriteParam;
@@ -22,6 +28,7 @@ public final class PagePhoto {
     /** Bytes up to which the picture is kept without loss. */
     private static final int MOST_PNG = 1_000_000;
     private static final float JPEG_QUALITY = 0.9f;
+    private static final int BAND = 64;
     private static final double LIGHTEST_SHARE = 0.998;
     private static final double LIGHTEST = 0.95;
 
@@ -45,6 +52,23 @@ public final class PagePhoto {
      */
     public static PagePhoto of(int width, int height, boolean brightened) {
         return new PagePhoto(PageGrid.of(width, height), brightened);
+    }
+
+    /**
+     * The picture of a whole photo, without flat and dark.
+     *
+     * @param photo      the open photo; stays the caller's to close
+     * @param encoding   how its counts stand for light
+     * @param brightened as for {@link #of(int, int, boolean)}
+     */
+    public static PagePhoto of(PhotoFile photo, Encoding encoding, boolean brightened) {
+        PhotoInfo info = photo.info();
+        SignalSource signal = SignalSource.of(photo, encoding, Optional.empty(), Optional.empty(), NoiseModel.of(0, 1));
+        PagePhoto picture = of(info.width(), info.height(), brightened);
+        for (int y = 0; y < info.height(); y += BAND) {
+            picture.add(y, signal.rows(0, y, Math.min(BAND, info.height() - y)));
+        }
+        return picture;
     }
 
     /**

@@ -76,6 +76,7 @@ record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
         photograph.put("height", info.height());
         photograph.put("pixel_um", instrument.pixelUm(info));
         summary.put("photo", photograph);
+        summary.put("encoding", recipe().camera().encoding());
         summary.put("stack", recipe().stack().toString());
         summary.put("range_nm", List.of(recipe().range().fromNm(), recipe().range().toNm()));
         Map<String, Object> counts = new LinkedHashMap<>();
