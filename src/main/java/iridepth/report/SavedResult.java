@@ -136,6 +136,23 @@ public record SavedResult(Path folder, JsonNode summary) {
         return curve.divide(thickness(), map(MapFolder.UNCERTAINTY), correlated > 1 ? correlated : 1);
     }
 
+    /** The map as a figure. */
+    public MapFigure figure() {
+        NumberImage nm = NumberImage.open(folder.resolve(MapFolder.THICKNESS));
+        NumberImage states = NumberImage.open(folder.resolve(MapFolder.STATE));
+        MapCells cells = MapCells.of(nm.width(), nm.height(), MapFigure.MOST_CELLS);
+        float[] row = new float[nm.width()];
+        byte[] codes = new byte[nm.width()];
+        for (int y = 0; y < nm.height(); y++) {
+            for (int x = 0; x < row.length; x++) {
+                row[x] = nm.at(x, y);
+                codes[x] = (byte) states.at(x, y);
+            }
+            cells.add(y, row, codes);
+        }
+        return MapFigure.of(title(), cells, pixelUm());
+    }
+
     private Field map(String name) {
         NumberImage image = NumberImage.open(folder.resolve(name));
         return Field.view(image.width(), image.height(), image::at);
