@@ -102,6 +102,16 @@ public record SavedResult(Path folder, JsonNode summary) {
         return node.asText("");
     }
 
+    /** The thickness below which a percentage of the pixels lies, nm; NaN if the summary does not tell it. */
+    public double percentile(double percent) {
+        for (JsonNode each : summary.path("thickness").path("percentiles")) {
+            if (each.path("percent").asDouble() == percent) {
+                return each.path("value").asDouble(Double.NaN);
+            }
+        }
+        return Double.NaN;
+    }
+
     /** Edge of a pixel in um, NaN if unknown. */
     public double pixelUm() {
         return number("photo", "pixel_um");
