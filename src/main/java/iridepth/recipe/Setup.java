@@ -2,23 +2,22 @@ package iridepth.recipe;
 
 import iridepth.calibration.Calibration;
 import iridepth.calibration.FitInput;
+import iridepth.calibration.InputUncertainty;
 import iridepth.calibration.ResponseFit;
 import iridepth.calibration.StepSignal;
 import iridepth.colour.Light;
 import iridepth.colour.Xyz;
 import iridepth.curve.ColourCurve;
 import iridepth.curve.EffectiveResponses;
-import iridepth.optics.Reflectance;
-import iridepth.optics.Stack;
 import iridepth.optics.View;
 import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
-import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
+import java.util.function.Function;
 
 /**
  * What a recipe makes of the photos of a rig: the channels' responses and the colour curve.
@@ -52,6 +51,9 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         try {
             FitInput input = FitInput.of(channels, recipe.lights().get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()),
                     view, recipe.range(), steps);
+            if (recipe.inputs().isPresent()) {
+                input = input.withInputs(recipe.inputs().get());
+            }
             if (camera.sensitivities() != null) {
                 input = input.withSensitivities(sensitivities(recipe, photo));
             }
@@ -64,25 +66,16 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
     }
 
     /**
-     * The set-up where the recipe itself fixes the responses: a colour-managed file, or a sensor of known sensitivities.
+     * The set-up where the recipe itself fixes the responses: a colour-managed file, or a sensor of known sensitivities. Systematic
+     * errors enter only as far as the recipe states how well its inputs are known.
      *
      * @throws RecipeException if the recipe does not fix them
      * @throws PhotoException  if the photo or a table contradicts it
      */
     public static Setup known(Recipe recipe, PhotoInfo photo, Encoding encoding) {
-        View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
-        EffectiveResponses responses = responses(recipe, photo, encoding, recipe.lights().get(0));
-        Stack flat = recipe.camera().flatStack();
-        if (flat == null) {
-            double[] factor = new double[responses.count()];
-            Arrays.fill(factor, 1 / recipe.camera().whiteReflectance());
-            responses = responses.scaled(factor);
-        } else {
-            responses = responses.relativeTo(Reflectance.of(flat, view).spectrum(0));
-        }
-        ColourCurve curve = ColourCurve.of(responses, Reflectance.of(recipe.stack(), view), recipe.range(),
-                recipe.range().step(recipe.stack()));
-        return new Setup(view, curve, Optional.empty());
+        Function<Light, EffectiveResponses> responses = light -> responses(recipe, photo, encoding, light);
+        KnownCurve known = new KnownCurve(recipe, responses);
+        return new Setup(known.view(), known.curve(recipe.inputs().orElse(InputUncertainty.NONE)), Optional.empty());
     }
 
     private static EffectiveResponses responses(Recipe recipe, PhotoInfo photo, Encoding encoding, Light light) {

@@ -37,6 +37,7 @@ public final class MapFolder implements AutoCloseable {
     private final TiffWriter uncertainty;
     private final TiffWriter state;
     private final MapCells cells;
+    private final PageMap page;
     private final Distribution distribution;
     private final UncertaintyCurve.Gathering parts;
     private final long[] counts = new long[State.values().length];
@@ -51,6 +52,7 @@ public final class MapFolder implements AutoCloseable {
         this.uncertainty = MapTiff.nanometres(folder.file(UNCERTAINTY), width, height, pixelUm);
         this.state = MapTiff.states(folder.file(STATE), width, height, pixelUm);
         this.cells = MapCells.of(width, height, MapFigure.MOST_CELLS);
+        this.page = PageMap.of(width, height, pixelUm, 0);
         this.distribution = Distribution.over(fromNm, toNm);
         this.parts = new UncertaintyCurve.Gathering(fromNm, toNm);
     }
@@ -95,6 +97,7 @@ public final class MapFolder implements AutoCloseable {
         uncertainty.writeRows(firstRow, combined);
         state.writeRows(firstRow, codes);
         cells.add(firstRow, nm, codes);
+        page.add(firstRow, nm, combined, codes);
     }
 
     /** How many pixels are in each state. */
@@ -109,6 +112,11 @@ public final class MapFolder implements AutoCloseable {
     /** Pixels that have a thickness. */
     public long read() {
         return distribution.count();
+    }
+
+    /** The readings as the report page shows them. */
+    public PageMap page() {
+        return page;
     }
 
     /** The thicknesses. */

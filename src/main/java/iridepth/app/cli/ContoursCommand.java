@@ -1,8 +1,10 @@
 package iridepth.app.cli;
 
 import iridepth.photo.Encoding;
+import iridepth.photo.NoiseModel;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoFile;
+import iridepth.photo.SignalSource;
 import iridepth.quality.Contour;
 import iridepth.quality.Contours;
 import iridepth.quality.Field;
@@ -14,6 +16,7 @@ import java.io.PrintWriter;
 import java.nio.file.Path;
 import java.util.List;
 import java.util.Locale;
+import java.util.Optional;
 import java.util.concurrent.Callable;
 import java.util.stream.LongStream;
 import picocli.CommandLine.Command;
@@ -92,7 +95,8 @@ final class ContoursCommand implements Callable<Integer> {
                         + "map " + result + " is " + map.width() + " x " + map.height() + "; give the photo that it was read from");
             }
             boolean linear = saved.text("encoding").equals("linear");
-            return PagePhoto.of(file, linear ? Encoding.linear(file.info().maxCount()) : Encoding.managed(file.info()), linear);
+            Encoding encoding = linear ? Encoding.linear(file.info().maxCount()) : Encoding.managed(file.info());
+            return PagePhoto.of(SignalSource.of(file, encoding, Optional.empty(), Optional.empty(), NoiseModel.of(0, 1)), 0, linear);
         }
     }
 
