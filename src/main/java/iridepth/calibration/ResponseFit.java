@@ -144,9 +144,7 @@ public final class ResponseFit {
         }
         double index = input.inputs().relativeIndex();
         if (index > 0) {
-            Material film = input.stack().film();
-            Material denser = new Material(film.name(), film.description(), film.source(), film.n().times(1 + index), film.k(),
-                    film.firstNm(), film.lastNm());
+            Material denser = denser(input.stack().film(), index);
             result.add(variation("film index", corrected.withStack(input.stack().withFilm(denser)), bestPrior, level, base, mean));
         }
         if (input.inputs().lampK() > 0) {
@@ -165,8 +163,14 @@ public final class ResponseFit {
         return new Variation(name, new ResponseModel(input.channels(), moved.carriers(), p, moved.stack(), moved.view()));
     }
 
+    /** A material with its index raised by a fraction of it. */
+    static Material denser(Material film, double fraction) {
+        return new Material(film.name(), film.description(), film.source(), film.n().times(1 + fraction), film.k(), film.firstNm(),
+                film.lastNm());
+    }
+
     /** A light as if its lamp were hotter than one of 3200 K by some kelvin: multiplied by the ratio of the two black bodies. */
-    private static Light hotter(Light light, double kelvin) {
+    static Light hotter(Light light, double kelvin) {
         Spectrum hot = Light.blackbody(3200 + kelvin).power();
         Spectrum cool = Light.blackbody(3200).power();
         return new Light(light.name(), Spectrum.sample(nm -> {
