@@ -16,6 +16,9 @@ public record InputUncertainty(double numericalAperture, double lampK, double re
      */
     public static final InputUncertainty DEFAULT = new InputUncertainty(0.03, 200, 0.002, 0.001);
 
+    /** Inputs taken as exact, but for the smallest flat residual. */
+    public static final InputUncertainty NONE = new InputUncertainty(0, 0, 0, 1e-5);
+
     /**
      * Checks the values.
      *

@@ -144,11 +144,11 @@ public final class ResponseFit {
         }
         double index = input.inputs().relativeIndex();
         if (index > 0) {
-            Material denser = denser(input.stack().film(), index);
+            Material denser = input.stack().film().denser(1 + index);
             result.add(variation("film index", corrected.withStack(input.stack().withFilm(denser)), bestPrior, level, base, mean));
         }
         if (input.inputs().lampK() > 0) {
-            List<Light> hotter = input.lights().stream().map(l -> hotter(l, input.inputs().lampK())).toList();
+            List<Light> hotter = input.lights().stream().map(l -> l.hotter(input.inputs().lampK())).toList();
             result.add(variation("lamp", corrected.withLights(hotter), bestPrior, level, base, mean));
         }
         return result;
@@ -161,21 +161,5 @@ public final class ResponseFit {
             p[k] += mean[k] - base[k];
         }
         return new Variation(name, new ResponseModel(input.channels(), moved.carriers(), p, moved.stack(), moved.view()));
-    }
-
-    /** A material with its index raised by a fraction of it. */
-    static Material denser(Material film, double fraction) {
-        return new Material(film.name(), film.description(), film.source(), film.n().times(1 + fraction), film.k(), film.firstNm(),
-                film.lastNm());
-    }
-
-    /** A light as if its lamp were hotter than one of 3200 K by some kelvin: multiplied by the ratio of the two black bodies. */
-    static Light hotter(Light light, double kelvin) {
-        Spectrum hot = Light.blackbody(3200 + kelvin).power();
-        Spectrum cool = Light.blackbody(3200).power();
-        return new Light(light.name(), Spectrum.sample(nm -> {
-            int i = (int) Math.round(nm) - iridepth.spectrum.Grid.FIRST_NM;
-            return light.power().at(i) * hot.at(i) / cool.at(i);
-        }), light.held());
     }
 }

@@ -142,10 +142,10 @@ record StepModel(FitInput input, List<Spectrum> supposed, ChannelNoise noise, do
             moved.add(input.withView(Aperture.scaled(input.view(), 1 + inputs.numericalAperture() / aperture)));
         }
         if (inputs.relativeIndex() > 0) {
-            moved.add(input.withStack(input.stack().withFilm(ResponseFit.denser(input.stack().film(), inputs.relativeIndex()))));
+            moved.add(input.withStack(input.stack().withFilm(input.stack().film().denser(1 + inputs.relativeIndex()))));
         }
         if (inputs.lampK() > 0) {
-            moved.add(input.withLights(input.lights().stream().map(l -> ResponseFit.hotter(l, inputs.lampK())).toList()));
+            moved.add(input.withLights(input.lights().stream().map(l -> l.hotter(inputs.lampK())).toList()));
         }
         return moved;
     }

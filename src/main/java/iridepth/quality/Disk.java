@@ -6,12 +6,7 @@ package iridepth.quality;
  * @param centre it may lie between pixels or outside the map
  * @param radius pixels, positive
  */
-public record Disk(Position centre, double radius) {
-
-    /** Takes a pixel. */
-    interface PixelAction {
-        void accept(int x, int y);
-    }
+public record Disk(Position centre, double radius) implements Area {
 
     public Disk {
         if (!(radius > 0 && radius < Double.POSITIVE_INFINITY)) {
@@ -26,8 +21,8 @@ public record Disk(Position centre, double radius) {
         return sum.average();
     }
 
-    /** Visits the pixels of a field that lie in the disk, row after row. */
-    void forEachPixel(Field field, PixelAction action) {
+    @Override
+    public void forEachPixel(Field field, PixelAction action) {
         int top = (int) Math.max(0, Math.ceil(centre.y() - radius));
         int bottom = (int) Math.min(field.height() - 1, Math.floor(centre.y() + radius));
         for (int y = top; y <= bottom; y++) {

@@ -1,13 +1,18 @@
 package iridepth.recipe;
 
+import iridepth.colour.Light;
+import iridepth.optics.Material;
 import iridepth.photo.Encoding;
 import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
 import iridepth.reading.FilmReader;
 import java.nio.file.Path;
+import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Locale;
 import java.util.Map;
 
 /**
@@ -73,7 +78,7 @@ public final class Instrument {
         Encoding encoding = rig().encoding(photo);
         Channels wanted = Channels.of(photo, encoding);
         if (!wanted.equals(channels)) {
-            Setup made = Setup.known(recipe, photo, encoding);
+            Setup made = Setup.of(rig(), photo);
             reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;
@@ -85,6 +90,16 @@ public final class Instrument {
     public synchronized FilmReader reader(PhotoInfo photo) {
         setup(photo);
         return reader;
+    }
+
+    /** What a user should know of the tables that the recipe uses, a line each. */
+    public List<String> notes() {
+        List<String> notes = new ArrayList<>();
+        recipe.stack().media().stream().filter(Material::isHeld).distinct().forEach(m -> notes.add(String.format(Locale.ROOT,
+                "the index of %s is tabulated for %.0f-%.0f nm; beyond, its end value is held", m.name(), m.firstNm(), m.lastNm())));
+        recipe.lights().stream().filter(Light::held).forEach(l -> notes.add("the table of the light " + l.name()
+                + " stops short of 380-780 nm; beyond, its end value is held"));
+        return notes;
     }
 
     /** Edge of a photo's pixels in um by the recipe, else by the photo; NaN if neither tells. */

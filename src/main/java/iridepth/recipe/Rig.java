@@ -6,6 +6,8 @@ import iridepth.photo.NoiseModel;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.Region;
+import iridepth.photo.RegionStatistics;
 import iridepth.photo.ShadingField;
 import iridepth.photo.SignalSource;
 import java.util.Optional;
@@ -62,6 +64,14 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
     public SignalSource signal(PhotoFile photo) {
         Encoding encoding = encoding(photo.info());
         return SignalSource.of(photo, encoding, dark, flat, noise(photo, encoding));
+    }
+
+    /**
+     * What a region of a photo of this rig amounts to, channel by channel. The means carry their own scatter, so that no noise model
+     * enters.
+     */
+    public RegionStatistics[] patch(PhotoFile photo, Region region) {
+        return RegionStatistics.of(SignalSource.of(photo, encoding(photo.info()), dark, flat, NoiseModel.of(0, 1)).region(0, region));
     }
 
     private NoiseModel noise(PhotoFile photo, Encoding encoding) {

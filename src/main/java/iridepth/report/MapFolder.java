@@ -36,6 +36,7 @@ public final class MapFolder implements AutoCloseable {
     private final TiffWriter uncertainty;
     private final TiffWriter state;
     private final MapCells cells;
+    private final PageMap page;
     private final Distribution distribution;
     private final UncertaintyCurve.Gathering parts;
     private final long[] counts = new long[State.values().length];
@@ -50,6 +51,7 @@ public final class MapFolder implements AutoCloseable {
         this.uncertainty = MapTiff.nanometres(folder.file(UNCERTAINTY), width, height, pixelUm);
         this.state = MapTiff.states(folder.file("state.tif"), width, height, pixelUm);
         this.cells = MapCells.of(width, height, MapFigure.MOST_CELLS);
+        this.page = PageMap.of(width, height, pixelUm, 0);
         this.distribution = Distribution.over(fromNm, toNm);
         this.parts = new UncertaintyCurve.Gathering(fromNm, toNm);
     }
@@ -94,6 +96,7 @@ public final class MapFolder implements AutoCloseable {
         uncertainty.writeRows(firstRow, combined);
         state.writeRows(firstRow, codes);
         cells.add(firstRow, nm, codes);
+        page.add(firstRow, nm, combined, codes);
     }
 
     /** How many pixels are in each state. */
@@ -108,6 +111,11 @@ public final class MapFolder implements AutoCloseable {
     /** Pixels that have a thickness. */
     public long read() {
         return distribution.count();
+    }
+
+    /** The readings as the report page shows them. */
+    public PageMap page() {
+        return page;
     }
 
     /** The thicknesses. */

@@ -5,7 +5,6 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.List;
-import java.util.Locale;
 import java.util.Map;
 
 /** What the script of a page works on: a description as JSON, and the planes of numbers. */
@@ -62,7 +61,7 @@ final class PageData {
         if (count == 0) {
             return new double[] {0, 1};
         }
-        Arrays.sort(sorted, 0, count);
+        Arrays.parallelSort(sorted, 0, count);
         double low = fromZero ? 0 : sorted[(int) (stray * (count - 1))];
         double high = sorted[count - 1 - (int) (stray * (count - 1))];
         double step = Ticks.step(Math.max((high - low) / 20, fromZero ? 1e-3 : 0.05));
@@ -101,15 +100,16 @@ final class PageData {
     /** The planes by name, packed as {@link PagePlane} says. */
     Map<String, String> planes() {
         PageMap map = content.map();
-        int columns = map.grid().columns();
-        Map<String, String> planes = new LinkedHashMap<>();
-        planes.put("thickness", PagePlane.pack(PagePlane.exact(map.thickness()), columns));
-        planes.put("uncertainty", PagePlane.pack(PagePlane.stepped(map.uncertainty(), UNCERTAINTY_STEP), columns));
-        planes.put("state", PagePlane.pack(PagePlane.codes(map.state()), columns));
+        Map<String, int[]> values = new LinkedHashMap<>();
+        values.put("thickness", PagePlane.exact(map.thickness()));
+        values.put("uncertainty", PagePlane.stepped(map.uncertainty(), UNCERTAINTY_STEP));
+        values.put("state", PagePlane.codes(map.state()));
         for (int k = 0; k < map.alternatives().length; k++) {
-            planes.put(String.format(Locale.ROOT, "alternative-%d", k),
-                    PagePlane.pack(PagePlane.stepped(map.alternatives()[k], ALTERNATIVE_STEP), columns));
+            values.put("alternative-" + k, PagePlane.stepped(map.alternatives()[k], ALTERNATIVE_STEP));
         }
+        List<String> packed = values.values().parallelStream().map(plane -> PagePlane.pack(plane, map.grid().columns())).toList();
+        Map<String, String> planes = new LinkedHashMap<>();
+        values.keySet().forEach(name -> planes.put(name, packed.get(planes.size())));
         return planes;
     }
 }

@@ -11,8 +11,8 @@ package iridepth.report;
 record PageGrid(int width, int height, int factor) {
     /** Points along a row or column at most. */
     static final int LONGEST = 1200;
-    /** Points in all at most; with this a page stays below 8 MB. */
-    static final int MOST = 800_000;
+    /** Points in all at most; with this the page of a noisy film stays below 8 MB. */
+    static final int MOST = 700_000;
 
     PageGrid {
         if (width < 1 || height < 1 || factor < 1) {
@@ -68,6 +68,11 @@ record PageGrid(int width, int height, int factor) {
         void visit(int point, int pixel);
     }
 
+    /** Whether points lie in a row of the photo. */
+    boolean shows(int y) {
+        return y >= firstY() && (y - firstY()) % factor == 0;
+    }
+
     /**
      * Visits the points that lie in a block of whole rows.
      *
@@ -77,10 +82,10 @@ record PageGrid(int width, int height, int factor) {
     void visit(int firstRow, int lines, Visitor visitor) {
         int columns = columns();
         for (int line = 0; line < lines; line++) {
-            int y = firstRow + line - firstY();
-            if (y >= 0 && y % factor == 0) {
+            if (shows(firstRow + line)) {
+                int row = (firstRow + line - firstY()) / factor;
                 for (int i = 0; i < columns; i++) {
-                    visitor.visit(y / factor * columns + i, line * width + firstX() + i * factor);
+                    visitor.visit(row * columns + i, line * width + firstX() + i * factor);
                 }
             }
         }

@@ -5,7 +5,7 @@ import java.util.BitSet;
 
 /**
  * The readings that a page shows, gathered while a map is being read. Rows may come in any order and from several threads.
- * Of a map of more than 800 000 pixels, or more than 1200 in a row or column, one pixel of each block is kept, the middle one,
+ * Of a map of more than 700 000 pixels, or more than 1200 in a row or column, one pixel of each block is kept, the middle one,
  * with exactly what was read there; memory is bounded accordingly. States are counted over all pixels.
  */
 public final class PageMap {
@@ -42,15 +42,15 @@ public final class PageMap {
      * @param width        pixels per row
      * @param height       rows
      * @param pixelUm      edge of a pixel in um, or NaN if unknown
-     * @param alternatives how many other candidates a pixel may have, 0 to 4
-     * @throws IllegalArgumentException if the map is empty, the pixel size not above 0, or the alternatives more than 4
+     * @param alternatives how many other candidates a pixel may have, 0 to 3
+     * @throws IllegalArgumentException if the map is empty, the pixel size not above 0, or the alternatives more than 3
      */
     public static PageMap of(int width, int height, double pixelUm, int alternatives) {
         if (pixelUm <= 0 || Double.isInfinite(pixelUm)) {
             throw new IllegalArgumentException("a pixel size of " + pixelUm + " um: give one above 0, or NaN if unknown");
         }
-        if (alternatives < 0 || alternatives > 4) {
-            throw new IllegalArgumentException(alternatives + " other candidates per pixel: a page shows 0 to 4");
+        if (alternatives < 0 || alternatives > 3) {
+            throw new IllegalArgumentException(alternatives + " other candidates per pixel: a page shows 0 to 3");
         }
         return new PageMap(PageGrid.of(width, height), pixelUm, alternatives);
     }

@@ -1,13 +1,18 @@
 package iridepth.report;
 
 import iridepth.colour.Srgb;
+import iridepth.photo.Frame;
+import iridepth.photo.PhotoException;
+import iridepth.photo.PhotoInfo;
 import iridepth.photo.Signal;
+import iridepth.photo.SignalSource;
 import java.awt.image.BufferedImage;
 import java.io.ByteArrayOutputStream;
 import java.io.IOException;
 import java.io.UncheckedIOException;
 import java.util.Arrays;
 import java.util.Base64;
+import java.util.stream.IntStream;
 import javax.imageio.IIOImage;
 import javax.imageio.ImageIO;
 import javax.imageio.ImageWriteParam;
@@ -19,9 +24,11 @@ import javax.imageio.stream.MemoryCacheImageOutputStream;
  * those of sRGB, and the signal of a linear file is brightened until the lightest pixels are nearly white.
  */
 public final class PagePhoto {
-    /** Bytes up to which the picture is kept without loss. */
-    private static final int MOST_PNG = 1_000_000;
-    private static final float JPEG_QUALITY = 0.9f;
+    /** Points up to which the picture is kept without loss. */
+    private static final int MOST_PNG = 350_000;
+    private static final float JPEG_QUALITY = 0.85f;
+    private static final int BAND = 64;
+    private static final int MOST_SORTED = 100_000;
     private static final double LIGHTEST_SHARE = 0.998;
     private static final double LIGHTEST = 0.95;
 
@@ -45,6 +52,30 @@ public final class PagePhoto {
      */
     public static PagePhoto of(int width, int height, boolean brightened) {
         return new PagePhoto(PageGrid.of(width, height), brightened);
+    }
+
+    /**
+     * The picture of a frame of a photo. Converts only the rows that are shown.
+     *
+     * @param brightened as above
+     * @throws PhotoException if the photo is damaged
+     */
+    public static PagePhoto of(SignalSource source, int frame, boolean brightened) {
+        PhotoInfo info = source.info();
+        PagePhoto picture = of(info.width(), info.height(), brightened);
+        PageGrid grid = picture.grid;
+        IntStream.range(0, (info.height() + BAND - 1) / BAND).parallel().forEach(band -> {
+            int top = band * BAND;
+            Frame counts = source.counts(frame, top, Math.min(BAND, info.height() - top));
+            Signal line = Signal.row(info);
+            for (int row = 0; row < counts.height(); row++) {
+                if (grid.shows(top + row)) {
+                    source.convert(counts, row, top + row, line);
+                    picture.add(top + row, line);
+                }
+            }
+        });
+        return picture;
     }
 
     /**
@@ -86,18 +117,21 @@ public final class PagePhoto {
     }
 
     private double gain() {
-        float[] sorted = light.clone();
+        int stride = light.length / MOST_SORTED + 1;
+        float[] sorted = new float[(light.length + stride - 1) / stride];
+        for (int i = 0; i < sorted.length; i++) {
+            sorted[i] = light[i * stride];
+        }
         Arrays.sort(sorted);
         float lightest = sorted[(int) (LIGHTEST_SHARE * (sorted.length - 1))];
         return lightest > 0 ? LIGHTEST / lightest : 1;
     }
 
-    /** The picture as a data URI (RFC 2397): PNG where that is small, else JPEG. */
+    /** The picture as a data URI (RFC 2397): PNG where it has few points, else JPEG. */
     String dataUri() {
         try {
             BufferedImage image = picture();
-            byte[] png = PngWriter.encode(image);
-            return png.length <= MOST_PNG ? uri("image/png", png) : uri("image/jpeg", jpeg(image));
+            return grid.points() <= MOST_PNG ? uri("image/png", PngWriter.encode(image)) : uri("image/jpeg", jpeg(image));
         } catch (IOException e) {
             throw new UncheckedIOException("writing to memory cannot fail", e);
         }

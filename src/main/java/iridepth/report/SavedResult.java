@@ -3,7 +3,7 @@ package iridepth.report;
 import com.fasterxml.jackson.core.JacksonException;
 import com.fasterxml.jackson.databind.JsonNode;
 import com.fasterxml.jackson.databind.ObjectMapper;
-import iridepth.photo.FloatImage;
+import iridepth.photo.NumberImage;
 import iridepth.photo.PhotoException;
 import iridepth.quality.Field;
 import iridepth.quality.MeasuredField;
@@ -137,7 +137,7 @@ public record SavedResult(Path folder, JsonNode summary) {
     }
 
     private Field map(String name) {
-        FloatImage image = FloatImage.open(folder.resolve(name));
+        NumberImage image = NumberImage.open(folder.resolve(name));
         return Field.view(image.width(), image.height(), image::at);
     }
 }

@@ -11,9 +11,11 @@ const LAYERS = {
 const HATCH_PERIOD = 8;
 const HATCH_WIDTH = 2;
 
-/** Ink of the hatch on a colour: light on dark, dark on light. */
+/** Colour of the hatch on a colour: lighter on dark, darker on light, so that the colour still shows. */
 function hatchOn(rgb) {
-  return 0.3 * (rgb >> 16 & 255) + 0.6 * (rgb >> 8 & 255) < 110 ? 0xffffff : 0x000000;
+  const ink = 0.3 * (rgb >> 16 & 255) + 0.6 * (rgb >> 8 & 255) < 110 ? 255 : 0;
+  const mixed = shift => Math.round(0.4 * (rgb >> shift & 255) + 0.6 * ink);
+  return mixed(16) << 16 | mixed(8) << 8 | mixed(0);
 }
 
 /** Colour of every point of a layer, 0xRRGGBB. */
@@ -35,8 +37,8 @@ function layerColours(map, layer) {
   return colours;
 }
 
-/** Paints a layer, each point as a square of `scale` dots; doubtful points of thickness and uncertainty are hatched. */
-function paintLayer(canvas, map, photo, layer, scale) {
+/** Paints a layer, each point as a square of `scale` dots; doubtful points of thickness and uncertainty may be hatched. */
+function paintLayer(canvas, map, photo, layer, scale, hatch) {
   canvas.width = map.columns * scale;
   canvas.height = map.rows * scale;
   const context = canvas.getContext('2d');
@@ -47,7 +49,7 @@ function paintLayer(canvas, map, photo, layer, scale) {
   }
   const image = context.createImageData(canvas.width, canvas.height);
   const colours = layerColours(map, layer);
-  const hatched = layer !== 'state';
+  const hatched = hatch && layer !== 'state';
   for (let y = 0, at = 0; y < canvas.height; y++) {
     const base = Math.floor(y / scale) * map.columns;
     for (let x = 0; x < canvas.width; x++, at += 4) {
@@ -68,7 +70,7 @@ function paintLayer(canvas, map, photo, layer, scale) {
 /** Paints a layer small. */
 function paintThumbnail(canvas, map, photo, layer, width) {
   const whole = document.createElement('canvas');
-  paintLayer(whole, map, photo, layer, 1);
+  paintLayer(whole, map, photo, layer, 1, false);
   canvas.width = width;
   canvas.height = Math.max(1, Math.round(width * map.rows / map.columns));
   const context = canvas.getContext('2d');

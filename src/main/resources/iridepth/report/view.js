@@ -31,7 +31,7 @@ class MapView {
   }
 
   show(layer) {
-    paintLayer(this.canvas, this.map, this.photo, layer, this.scale);
+    paintLayer(this.canvas, this.map, this.photo, layer, this.scale, true);
   }
 
   /** The point under a pointer. */

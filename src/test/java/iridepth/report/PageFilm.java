@@ -69,7 +69,7 @@ final class PageFilm {
             value[3 * i + 2] = 0.5f;
         }
         PagePhoto photo = PagePhoto.of(WIDTH, HEIGHT, false);
-        photo.add(0, new Signal(WIDTH, HEIGHT, 3, value, new float[value.length], new byte[value.length]));
+        photo.add(0, new Signal(WIDTH, HEIGHT, 3, value, new float[WIDTH * HEIGHT], new byte[value.length]));
         return photo;
     }
 

@@ -4,19 +4,25 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import iridepth.photo.Encoding;
+import iridepth.photo.NoiseModel;
+import iridepth.photo.PhotoFile;
 import iridepth.photo.Signal;
+import iridepth.photo.SignalSource;
 import java.awt.image.BufferedImage;
 import java.io.ByteArrayInputStream;
 import java.io.IOException;
+import java.nio.file.Path;
 import java.util.Arrays;
 import java.util.Base64;
+import java.util.Optional;
 import java.util.Random;
 import javax.imageio.ImageIO;
 import org.junit.jupiter.api.Test;
 
 class PagePhotoTest {
     private static Signal signal(int width, int height, int channels, float... value) {
-        return new Signal(width, height, channels, value, new float[value.length], new byte[value.length]);
+        return new Signal(width, height, channels, value, new float[width * height], new byte[value.length]);
     }
 
     private static BufferedImage decoded(PagePhoto photo) throws IOException {
@@ -73,5 +79,20 @@ class PagePhotoTest {
         PagePhoto photo = PagePhoto.of(3, 1, true);
         assertThrows(IllegalArgumentException.class, () -> photo.add(0, signal(2, 1, 1, 0, 0)));
         assertThrows(IllegalArgumentException.class, () -> photo.add(1, signal(3, 1, 1, 0, 0, 0)));
+    }
+
+    @Test
+    void photoFileIsShownInItsOwnColours() throws IOException {
+        Path file = Path.of("test-images/P1-oxide-wedge/photo.png");
+        BufferedImage expected = ImageIO.read(file.toFile());
+        try (PhotoFile open = PhotoFile.open(file)) {
+            SignalSource source = SignalSource.of(open, Encoding.srgb(8), Optional.empty(), Optional.empty(), NoiseModel.of(1, 1e4));
+            BufferedImage shown = PagePhoto.of(source, 0, false).picture();
+            for (int y = 0; y < expected.getHeight(); y += 7) {
+                for (int x = 0; x < expected.getWidth(); x += 3) {
+                    assertEquals(expected.getRGB(x, y) & 0xFFFFFF, shown.getRGB(x, y) & 0xFFFFFF);
+                }
+            }
+        }
     }
 }

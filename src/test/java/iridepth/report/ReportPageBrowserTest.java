@@ -5,6 +5,10 @@ import static org.junit.jupiter.api.Assertions.assertFalse;
 import static org.junit.jupiter.api.Assertions.assertNull;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import iridepth.quality.Field;
+import iridepth.quality.MeasuredField;
+import iridepth.quality.Position;
+import iridepth.quality.Profile;
 import java.io.IOException;
 import java.nio.file.Path;
 import java.util.ArrayList;
@@ -26,6 +30,11 @@ import org.openqa.selenium.interactions.Actions;
 class ReportPageBrowserTest {
     @TempDir
     static Path folder;
+
+    private static final MeasuredField FIELD = MeasuredField.of(
+            Field.view(PageFilm.WIDTH, PageFilm.HEIGHT, (x, y) -> PageFilm.state(x, y).hasThickness() ? PageFilm.thickness(x, y)
+                    : Double.NaN),
+            Field.view(PageFilm.WIDTH, PageFilm.HEIGHT, PageFilm::uncertainty), Field.constant(PageFilm.WIDTH, PageFilm.HEIGHT, 0));
 
     private static HeadlessBrowser browser;
     private static Path page;
@@ -145,11 +154,13 @@ class ReportPageBrowserTest {
         return rows;
     }
 
-    /** Bilinear interpolation of a plane gives the plane, so that every sample is known beforehand. */
+    /** Bilinear interpolation of a plane gives the plane, so that every sample is known beforehand; the command agrees. */
     private static void assertProfile(int x0, int y0, int x1, int y1) {
         List<double[]> rows = profile();
         double length = Math.hypot(x1 - x0, y1 - y0);
         assertEquals((int) Math.floor(length) + (length == Math.floor(length) ? 1 : 2), rows.size());
+        List<Profile.Point> points = Profile.along(FIELD, new Position(x0, y0), new Position(x1, y1), 1).points();
+        assertEquals(points.size(), rows.size());
         for (int k = 0; k < rows.size(); k++) {
             double distance = Math.min(k, length);
             double x = x0 + (x1 - x0) * distance / length;
@@ -162,6 +173,8 @@ class ReportPageBrowserTest {
             boolean hole = x > 59 && x < 70 && y > 9 && y < 20;
             assertEquals(hole ? Double.NaN : 100 + 1.25 * x + 0.375 * y, row[4], 1e-4);
             assertEquals(hole ? Double.NaN : 0.5 + 0.0078125 * x, row[5], 1.5e-4);
+            assertEquals(points.get(k).average().thickness(), row[4], 1e-4);
+            assertEquals(points.get(k).average().standardUncertainty(), row[5], 1.5e-4);
         }
     }
 

@@ -65,7 +65,7 @@ class ReportPageSizeTest {
                 }
             }
             map.add(top, nm, sigma, codes, lower, upper);
-            photo.add(top, new Signal(WIDTH, BAND, 3, light, new float[light.length], new byte[light.length]));
+            photo.add(top, new Signal(WIDTH, BAND, 3, light, new float[size], new byte[light.length]));
         }
         page = folder.resolve("large.html");
         PageContent bare = PageFilm.bare();

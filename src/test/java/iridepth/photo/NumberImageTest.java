@@ -6,8 +6,8 @@ import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import ij.ImagePlus;
 import ij.io.FileSaver;
-import ij.measure.Calibration;
 import ij.process.ByteProcessor;
+import ij.process.ColorProcessor;
 import ij.process.FloatProcessor;
 import java.io.IOException;
 import java.nio.file.Files;
@@ -17,7 +17,7 @@ import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 
 /** Files written by ImageJ, a program apart, are read as it wrote them. */
-class FloatImageTest {
+class NumberImageTest {
     @TempDir
     private Path folder;
 
@@ -29,26 +29,20 @@ class FloatImageTest {
 
     private Path map() {
         ImagePlus image = new ImagePlus("map", new FloatProcessor(3, 2, new float[] {1.5f, -2, Float.NaN, 4, 1e-20f, 6}));
-        Calibration scale = new Calibration();
-        scale.setUnit("um");
-        scale.pixelWidth = 0.65;
-        scale.pixelHeight = 0.65;
-        image.setCalibration(scale);
         return saved("map.tif", image);
     }
 
     private String refusal(Path file) {
-        String message = assertThrows(PhotoException.class, () -> FloatImage.open(file)).getMessage();
+        String message = assertThrows(PhotoException.class, () -> NumberImage.open(file)).getMessage();
         assertEquals(1, message.lines().count());
         return message;
     }
 
     @Test
-    void numbersAndScaleAreThoseThatWereSaved() {
-        FloatImage image = FloatImage.open(map());
+    void numbersAreThoseThatWereSaved() {
+        NumberImage image = NumberImage.open(map());
         assertEquals(3, image.width());
         assertEquals(2, image.height());
-        assertEquals(0.65, image.pixelUm(), 1e-6);
         assertEquals(1.5f, image.at(0, 0));
         assertEquals(-2f, image.at(1, 0));
         assertTrue(Float.isNaN(image.at(2, 0)));
@@ -58,11 +52,20 @@ class FloatImageTest {
     }
 
     @Test
+    void codesOfEightBitsAreWholeNumbers() {
+        NumberImage image = NumberImage.open(saved("codes.tif", new ImagePlus("", new ByteProcessor(2, 2,
+                new byte[] {0, 5, 127, (byte) 200}))));
+        assertEquals(5, image.at(1, 0));
+        assertEquals(127, image.at(0, 1));
+        assertEquals(200, image.at(1, 1));
+    }
+
+    @Test
     void whatIsNoMapIsRefused() throws IOException {
         assertTrue(refusal(folder.resolve("none.tif")).contains("no such file"));
         assertTrue(refusal(Files.writeString(folder.resolve("a.tif"), "thickness")).contains("not a TIFF"));
         assertTrue(refusal(Files.writeString(folder.resolve("b.tif"), "II")).contains("truncated"));
-        assertTrue(refusal(saved("bytes.tif", new ImagePlus("", new ByteProcessor(3, 2)))).contains("32-bit floating-point"));
+        assertTrue(refusal(saved("rgb.tif", new ImagePlus("", new ColorProcessor(3, 2)))).contains("32-bit floating-point"));
         byte[] whole = Files.readAllBytes(map());
         Path half = Files.write(folder.resolve("half.tif"), Arrays.copyOf(whole, whole.length - 5));
         assertTrue(refusal(half).contains("truncated"));

@@ -10,11 +10,11 @@ import java.nio.file.Path;
 import java.nio.file.StandardOpenOption;
 
 /**
- * A picture of 32-bit IEEE 754 numbers, one a pixel, in a TIFF or BigTIFF file without compression whose rows follow each other
- * without gaps. The file is mapped into memory, so that a large picture takes no room of the program's own. Safe for several
- * threads.
+ * A picture of one number a pixel, 32-bit IEEE 754 or a whole number of 8 bits, in a TIFF or BigTIFF file without compression
+ * whose rows follow each other without gaps. The file is mapped into memory, so that a large picture takes no room of the
+ * program's own. Safe for several threads.
  */
-public final class FloatImage {
+public final class NumberImage {
 
     private static final int FLOAT_BYTES = 4;
     private static final int IEEE = 3;
@@ -23,14 +23,14 @@ public final class FloatImage {
 
     private final int width;
     private final int height;
-    private final double pixelUm;
+    private final int bytes;
     private final int windowRows;
     private final ByteBuffer[] windows;
 
-    private FloatImage(int width, int height, double pixelUm, int windowRows, ByteBuffer[] windows) {
+    private NumberImage(int width, int height, int bytes, int windowRows, ByteBuffer[] windows) {
         this.width = width;
         this.height = height;
-        this.pixelUm = pixelUm;
+        this.bytes = bytes;
         this.windowRows = windowRows;
         this.windows = windows;
     }
@@ -40,7 +40,7 @@ public final class FloatImage {
      *
      * @throws PhotoException if it is missing, damaged or of another kind
      */
-    public static FloatImage open(Path path) {
+    public static NumberImage open(Path path) {
         if (!Files.isRegularFile(path)) {
             throw new PhotoException(path, "there is no such file; check the path");
         }
@@ -57,16 +57,18 @@ public final class FloatImage {
         }
     }
 
-    private static FloatImage open(Path path, FileChannel channel, TiffDirectory tags) throws IOException {
-        boolean numbers = tags.integer(TiffDirectory.SAMPLE_FORMAT, 1) == IEEE
-                && tags.integer(TiffDirectory.BITS_PER_SAMPLE, 1) == 8 * FLOAT_BYTES
-                && tags.integer(TiffDirectory.SAMPLES_PER_PIXEL, 1) == 1;
-        if (!numbers || tags.integer(TiffDirectory.COMPRESSION, 1) != 1) {
-            throw new PhotoException(path, "is not a map of 32-bit floating-point numbers without compression; save it as one");
+    private static NumberImage open(Path path, FileChannel channel, TiffDirectory tags) throws IOException {
+        long bits = tags.integer(TiffDirectory.BITS_PER_SAMPLE, 1);
+        boolean ieee = tags.integer(TiffDirectory.SAMPLE_FORMAT, 1) == IEEE;
+        boolean numbers = ieee ? bits == 8 * FLOAT_BYTES : bits == 8;
+        if (!numbers || tags.integer(TiffDirectory.SAMPLES_PER_PIXEL, 1) != 1 || tags.integer(TiffDirectory.COMPRESSION, 1) != 1) {
+            throw new PhotoException(path, "is not a map of 32-bit floating-point or 8-bit numbers without compression; save it "
+                    + "as one");
         }
+        int bytes = ieee ? FLOAT_BYTES : 1;
         long width = tags.integer(TiffDirectory.IMAGE_WIDTH, 0);
         long height = tags.integer(TiffDirectory.IMAGE_LENGTH, 0);
-        long rowBytes = FLOAT_BYTES * width;
+        long rowBytes = bytes * width;
         if (width < 1 || height < 1 || height > Integer.MAX_VALUE || rowBytes > WINDOW) {
             throw new PhotoException(path, "is " + width + " x " + height + " pixels large, which cannot be read");
         }
@@ -78,10 +80,10 @@ public final class FloatImage {
         ByteBuffer[] windows = new ByteBuffer[(int) ((height + rows - 1) / rows)];
         for (int i = 0; i < windows.length; i++) {
             long first = (long) i * rows;
-            long bytes = Math.min(rows, height - first) * rowBytes;
-            windows[i] = channel.map(MapMode.READ_ONLY, start + first * rowBytes, bytes).order(tags.order());
+            long size = Math.min(rows, height - first) * rowBytes;
+            windows[i] = channel.map(MapMode.READ_ONLY, start + first * rowBytes, size).order(tags.order());
         }
-        return new FloatImage((int) width, (int) height, PixelPitch.of(tags), rows, windows);
+        return new NumberImage((int) width, (int) height, bytes, rows, windows);
     }
 
     /** Where the rows begin; refuses strips that do not follow each other, and tiles. */
@@ -108,17 +110,14 @@ public final class FloatImage {
         return height;
     }
 
-    /** @return pitch of the pixels in um, NaN when the file does not say */
-    public double pixelUm() {
-        return pixelUm;
-    }
-
     /**
      * @param x column, 0 up to width - 1
      * @param y row, 0 up to height - 1
      * @return the number there
      */
     public float at(int x, int y) {
-        return windows[y / windowRows].getFloat(FLOAT_BYTES * (y % windowRows * width + x));
+        ByteBuffer window = windows[y / windowRows];
+        int at = bytes * (y % windowRows * width + x);
+        return bytes == 1 ? window.get(at) & 0xff : window.getFloat(at);
     }
 }
