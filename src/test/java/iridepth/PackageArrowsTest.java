@@ -11,7 +11,7 @@ import org.junit.jupiter.api.Test;
 class PackageArrowsTest {
     /** Each may use only those before it. */
     private static final List<String> ORDER = List.of("spectrum", "optics", "colour", "curve", "photo", "calibration", "reading",
-            "quality", "report", "recipe", "app");
+            "planning", "quality", "report", "recipe", "app");
 
     @Test
     void eachPackageUsesOnlyThoseAboveItInTheTable() {

@@ -67,6 +67,20 @@ public record Light(String name, Spectrum power, boolean held) {
     }
 
     /**
+     * This light as if its lamp were hotter by some kelvin: multiplied by the ratio of black bodies, one hotter by that much than
+     * the other of 3200 K.
+     */
+    public Light hotter(double kelvin) {
+        Spectrum hot = blackbody(3200 + kelvin).power();
+        Spectrum cool = blackbody(3200).power();
+        double[] moved = power.toArray();
+        for (int i = 0; i < moved.length; i++) {
+            moved[i] *= hot.at(i) / cool.at(i);
+        }
+        return new Light(name, Spectrum.of(moved), held);
+    }
+
+    /**
      * CIE daylight of a correlated colour temperature, S0 + M1 S1 + M2 S2 (CIE 015:2018, 4.1.2).
      *
      * @param temperatureK 4000 to 25000 K

@@ -47,6 +47,7 @@ public record ColourChart(Stack stack, Light light, Observer observer, White whi
 
     /** Thickness step over which the sensitivity is taken, nm. */
     private static final double SENSITIVITY_STEP_NM = 0.5;
+    private static final double SHOWN_BRIGHTEST = 0.75;
 
     /**
      * Computes a chart.
@@ -55,7 +56,7 @@ public record ColourChart(Stack stack, Light light, Observer observer, White whi
      * @param view     directions of view
      * @param range    thicknesses
      * @param stepNm   spacing of the rows, nm
-     * @param exposure factor on the sRGB brightness, or NaN to have the brightest film at Y = 0.9
+     * @param exposure factor on the sRGB brightness, or NaN to have the brightest film at Y = 0.75, which leaves room for vivid colours in the gamut
      * @throws IllegalArgumentException if the step does not fit or the bare stack is too dark to adapt to
      */
     public static ColourChart of(Stack stack, View view, Light light, Observer observer, White white, ThicknessRange range,
@@ -79,7 +80,7 @@ public record ColourChart(Stack stack, Light light, Observer observer, White whi
             colours.add(xyz(reflectance, range.fromNm() + k * stepNm, light, observer));
             brightest = Math.max(brightest, colours.get(k).y() / adopted.y());
         }
-        double gain = Double.isNaN(exposure) ? 0.9 / brightest : exposure;
+        double gain = Double.isNaN(exposure) ? SHOWN_BRIGHTEST / brightest : exposure;
         double[][] toScreen = Adaptation.matrix(adopted, Srgb.WHITE);
         List<Row> result = new ArrayList<>();
         for (int k = 0; k < rows; k++) {

@@ -63,6 +63,30 @@ public final class ColourCurve {
     }
 
     /**
+     * This curve with some of its channels.
+     *
+     * @param chosen which channels, in the new order
+     * @throws IndexOutOfBoundsException if there is no such channel
+     */
+    public ColourCurve select(int... chosen) {
+        int count = chosen.length;
+        double[] itsSignal = new double[size * count];
+        double[] itsSlope = new double[size * count];
+        double[] itsCovariance = new double[covariance.length == 0 ? 0 : size * count * count];
+        for (int k = 0; k < size; k++) {
+            for (int i = 0; i < count; i++) {
+                itsSignal[k * count + i] = signal(k, chosen[i]);
+                itsSlope[k * count + i] = slope(k, chosen[i]);
+                for (int j = 0; j < count && itsCovariance.length > 0; j++) {
+                    itsCovariance[(k * count + i) * count + j] = covariance(k, chosen[i], chosen[j]);
+                }
+            }
+        }
+        List<String> names = Arrays.stream(chosen).mapToObj(channels::get).toList();
+        return new ColourCurve(names, fromNm, stepNm, size, itsSignal, itsSlope, itsCovariance);
+    }
+
+    /**
      * This curve with the covariance of its systematic errors.
      *
      * @param covariance [(sample * channels + row) * channels + column], symmetric and not negative definite; copied

@@ -79,6 +79,24 @@ public record EffectiveResponses(List<String> channels, List<Spectrum> response)
         return Matrix3.inverse(toXyz);
     }
 
+    /**
+     * The channels of several photos of one field, each under its own light, as the channels of one.
+     *
+     * @param parts  responses under each light
+     * @param lights what to call the lights; a channel becomes, say, "green, 546 nm"
+     */
+    public static EffectiveResponses jointly(List<EffectiveResponses> parts, List<String> lights) {
+        List<String> names = new ArrayList<>();
+        List<Spectrum> all = new ArrayList<>();
+        for (int l = 0; l < parts.size(); l++) {
+            for (String channel : parts.get(l).channels) {
+                names.add(channel + ", " + lights.get(l));
+            }
+            all.addAll(parts.get(l).response);
+        }
+        return new EffectiveResponses(names, all);
+    }
+
     /** Number of channels. */
     public int count() {
         return channels.size();

@@ -99,6 +99,11 @@ public record Material(String name, String description, String source, Spectrum 
                 Grid.FIRST_NM, Grid.LAST_NM);
     }
 
+    /** This medium with n multiplied by a factor. */
+    public Material denser(double factor) {
+        return new Material(name, description, source, n.times(factor), k, firstNm, lastNm);
+    }
+
     /** Whether part of the grid lies outside the source's range, where the end value is held. */
     public boolean isHeld() {
         return firstNm > Grid.FIRST_NM || lastNm < Grid.LAST_NM;

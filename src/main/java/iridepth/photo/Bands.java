@@ -16,6 +16,8 @@ final class Bands {
     /** Samples (pixels x channels) read at most, about. */
     private static final int MOST_SAMPLES = 3_000_000;
     private static final int ROWS = 32;
+    /** Bands begin where blocks of JPEG files begin. */
+    private static final int ALIGNMENT = 16;
 
     private Bands() {
     }
@@ -31,7 +33,7 @@ final class Bands {
         }
         List<Band> bands = new ArrayList<>();
         for (int i = 0; i < wanted; i++) {
-            int y = (int) ((long) (info.height() - ROWS) * i / (wanted - 1));
+            int y = (int) ((long) (info.height() - ROWS) * i / (wanted - 1)) / ALIGNMENT * ALIGNMENT;
             bands.add(new Band(y, photo.rows(y, ROWS)));
         }
         return bands;

@@ -7,6 +7,7 @@ import java.io.IOException;
 import java.util.ArrayList;
 import java.util.Iterator;
 import java.util.List;
+import java.util.Optional;
 import javax.imageio.IIOException;
 import javax.imageio.ImageIO;
 import javax.imageio.ImageReader;
@@ -17,6 +18,7 @@ final class DecodedPhoto implements PhotoReader {
 
     private final PhotoInfo info;
     private final String format;
+    private final Optional<JpegQuantisation> quantisation;
     private byte[] file;
     private short[] counts;
 
@@ -24,16 +26,23 @@ final class DecodedPhoto implements PhotoReader {
      * @param info what the header says
      * @param format name of the format for ImageIO
      * @param file bytes of the file, without anything that would make the decoder convert colours
+     * @param quantisation of a JPEG
      */
-    DecodedPhoto(PhotoInfo info, String format, byte[] file) {
+    DecodedPhoto(PhotoInfo info, String format, byte[] file, Optional<JpegQuantisation> quantisation) {
         this.info = info;
         this.format = format;
         this.file = file;
+        this.quantisation = quantisation;
     }
 
     @Override
     public PhotoInfo info() {
         return info;
+    }
+
+    @Override
+    public Optional<JpegQuantisation> quantisation() {
+        return quantisation;
     }
 
     @Override
@@ -63,7 +72,7 @@ final class DecodedPhoto implements PhotoReader {
         } catch (IndexOutOfBoundsException | IllegalArgumentException e) {
             throw new IIOException(String.valueOf(e.getMessage()), e);
         } catch (IIOException e) {
-            if (e.getCause() instanceof EOFException || String.valueOf(e.getMessage()).contains("Premature end")) {
+            if (e.getCause() instanceof EOFException || String.valueOf(e.getMessage()).matches("(?i).*(truncated|premature end).*")) {
                 throw new EOFException();
             }
             throw e;

@@ -1,5 +1,9 @@
 package iridepth.photo;
 
+import iridepth.colour.Adaptation;
+import iridepth.colour.Matrix3;
+import iridepth.colour.Srgb;
+import iridepth.colour.Xyz;
 import java.util.Optional;
 import java.util.function.DoubleUnaryOperator;
 
@@ -11,9 +15,6 @@ import java.util.function.DoubleUnaryOperator;
  * chromatic adaptation matrix.
  */
 public final class Encoding {
-
-    /** Chromaticities x, y of red, green, blue and white of sRGB: IEC 61966-2-1:1999, table 1. */
-    private static final double[][] SRGB_XY = {{0.64, 0.33}, {0.30, 0.60}, {0.15, 0.06}, {0.3127, 0.3290}};
 
     private final DoubleUnaryOperator[] curves;
     private final double fullScale;
@@ -75,11 +76,15 @@ public final class Encoding {
      */
     public static Encoding srgb(int bitDepth) {
         int top = top(bitDepth);
-        double[][] own = Primaries.toXyz(SRGB_XY);
-        double[][] adaptation = Primaries.bradford(Primaries.white(SRGB_XY[3]), IccProfile.d50());
-        DoubleUnaryOperator curve = v -> v <= 0.04045 ? v / 12.92 : Math.pow((v + 0.055) / 1.055, 2.4);
+        double[][] adaptation = Adaptation.matrix(Srgb.WHITE, Xyz.of(IccProfile.d50()));
+        DoubleUnaryOperator curve = Srgb::decode;
         return new Encoding(new DoubleUnaryOperator[] {curve}, top, top + 1,
-                Optional.of(Primaries.times(adaptation, own)), Optional.of(adaptation));
+                Optional.of(Matrix3.times(adaptation, Srgb.TO_XYZ)), Optional.of(adaptation));
+    }
+
+    /** @return the encoding of a colour-managed photo: by its embedded profile, or sRGB if it has none */
+    public static Encoding managed(PhotoInfo photo) {
+        return photo.profile().map(profile -> of(profile, photo.bitDepth())).orElseGet(() -> srgb(photo.bitDepth()));
     }
 
     /**
@@ -116,8 +121,8 @@ public final class Encoding {
             throw new PhotoException(photo.path(), "has 16 bit, but its encoding is one for 8 bit; give the encoding of this photo");
         }
         if (curves.length > 1 && curves.length != photo.channels()) {
-            throw new PhotoException(photo.path(), "has " + photo.channels() + " channels, but its colour profile has "
-                    + curves.length + "; export the photo again");
+            throw new PhotoException(photo.path(), "its colour profile is for " + curves.length
+                    + " channels, but it has " + photo.channels() + "; export the photo again");
         }
     }
 

@@ -22,6 +22,7 @@ final class JpegPhoto {
     private static final byte[] ICC = "ICC_PROFILE\0".getBytes(StandardCharsets.US_ASCII);
     private static final byte[] JFIF = "JFIF\0".getBytes(StandardCharsets.US_ASCII);
     private static final int SOS = 0xda;
+    private static final int DQT = 0xdb;
     private static final int APP0 = 0xe0;
     private static final int APP2 = 0xe2;
 
@@ -39,6 +40,7 @@ final class JpegPhoto {
         Map<Integer, byte[]> profileParts = new TreeMap<>();
         int profilePartCount = 0;
         ByteBuffer frame = null;
+        JpegTables tables = new JpegTables();
         double pitch = Double.NaN;
         int at = 2;
         for (int marker = marker(file, at); marker != SOS; marker = marker(file, at)) {
@@ -58,6 +60,9 @@ final class JpegPhoto {
             if (marker == APP0 && startsWith(segment, JFIF) && segment.limit() >= 12) {
                 pitch = pitch(segment);
             }
+            if (marker == DQT) {
+                tables.add(segment);
+            }
             if (marker >= 0xc0 && marker <= 0xcf && marker != 0xc4 && marker != 0xc8 && marker != 0xcc) {
                 frame = segment;
             }
@@ -65,7 +70,7 @@ final class JpegPhoto {
         }
         kept.write(file.array(), at, file.limit() - at);
         PhotoInfo info = info(path, frame, pitch, profile(path, profileParts, profilePartCount));
-        return new DecodedPhoto(info, "jpeg", kept.toByteArray());
+        return new DecodedPhoto(info, "jpeg", kept.toByteArray(), Optional.of(tables.quantisation(frame)));
     }
 
     private static PhotoInfo info(Path path, ByteBuffer frame, double pitch, Optional<IccProfile> profile) {

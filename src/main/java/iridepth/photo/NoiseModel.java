@@ -7,20 +7,29 @@ import java.util.Optional;
 /**
  * The photon-transfer model of EMVA Standard 1288 (release 4.0, section 2), per channel, in linear fractions of full scale:
  * variance(s) = read^2 + gain max(0, s - black) + slope^2 / 12, where s is the signal above the dark, gain = 1 / full
- * well in electrons, and the last term is the rounding to whole counts (slope = d(linear) / d(count)). Immutable.
+ * well in electrons, and the last term is the rounding to whole counts (slope = d(linear) / d(count)); for a JPEG, 1/12
+ * grows by the rounding of its coefficients. Immutable.
  */
 public final class NoiseModel {
+
+    /** Variance of an error that is spread evenly over one count. */
+    static final double ROUNDING = 1 / 12.0;
+
+    private static final double NOTABLE_CORRELATION = 0.1;
+    private static final double LARGEST_CORRELATION = 0.95;
 
     private final double[] readVariance;
     private final double[] gain;
     private final double[] black;
     private final double[] correlation;
+    private final double[] countVariance;
 
-    NoiseModel(double[] readVariance, double[] gain, double[] black, double[] correlation) {
+    private NoiseModel(double[] readVariance, double[] gain, double[] black, double[] correlation, double[] countVariance) {
         this.readVariance = readVariance;
         this.gain = gain;
         this.black = black;
         this.correlation = correlation;
+        this.countVariance = countVariance;
     }
 
     /**
@@ -36,7 +45,8 @@ public final class NoiseModel {
                     + " electrons are not possible: give 0 <= read noise < full well");
         }
         double read = readNoise / fullWell;
-        return new NoiseModel(new double[] {read * read}, new double[] {1 / fullWell}, new double[1], new double[1]);
+        return new NoiseModel(new double[] {read * read}, new double[] {1 / fullWell}, new double[1], new double[1],
+                new double[] {ROUNDING});
     }
 
     /**
@@ -51,9 +61,11 @@ public final class NoiseModel {
         Arrays.setAll(fits, c -> TransferFit.of(curve.points(c)));
         double[] correlation = new double[n];
         Arrays.setAll(correlation, curve::correlation);
+        double[] rounding = new double[n];
+        Arrays.setAll(rounding, curve::countVariance);
         return new NoiseModel(Arrays.stream(fits).mapToDouble(TransferFit::readVariance).toArray(),
                 Arrays.stream(fits).mapToDouble(TransferFit::gain).toArray(),
-                Arrays.stream(fits).mapToDouble(TransferFit::black).toArray(), correlation);
+                Arrays.stream(fits).mapToDouble(TransferFit::black).toArray(), correlation, rounding);
     }
 
     /**
@@ -117,7 +129,7 @@ public final class NoiseModel {
      * @return variance, a squared linear fraction, above 0
      */
     public double variance(int channel, double signal, double slope) {
-        return variance(channel, signal) + slope * slope / 12;
+        return variance(channel, signal) + slope * slope * of(countVariance, channel);
     }
 
     /**
@@ -151,6 +163,37 @@ public final class NoiseModel {
      */
     public double correlation(int channel) {
         return of(correlation, channel);
+    }
+
+    /**
+     * Whether the noise of neighbouring pixels hangs together, by JPEG, demosaicing or noise reduction: then the mean of n
+     * pixels is less sure than sigma / sqrt(n).
+     *
+     * @return true if so in any channel
+     */
+    public boolean correlated() {
+        return Arrays.stream(correlation).anyMatch(r -> Math.abs(r) > NOTABLE_CORRELATION)
+                || Arrays.stream(countVariance).anyMatch(v -> v > ROUNDING);
+    }
+
+    /**
+     * How many neighbouring pixels share one random error: ((1 + r) / (1 - r))^2 with r the largest correlation of neighbours,
+     * which is what the mean of a large area loses where correlation falls off geometrically along x and y (the variance of the
+     * mean of a first-order autoregressive series, in each direction).
+     *
+     * @return 1 for a plain sensor, more where pixels hang together
+     */
+    public double correlatedPixels() {
+        double r = Math.min(LARGEST_CORRELATION, Arrays.stream(correlation).map(v -> Math.max(0, v)).max().orElse(0));
+        return Math.pow((1 + r) / (1 - r), 2);
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return variance of the counts by rounding, squared counts: 1/12, and for a JPEG the error of its coefficients
+     */
+    public double countVariance(int channel) {
+        return of(countVariance, channel);
     }
 
     /** @return read noise, full well and correlation of each channel on one line */

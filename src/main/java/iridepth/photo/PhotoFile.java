@@ -7,6 +7,7 @@ import java.nio.channels.FileChannel;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.nio.file.StandardOpenOption;
+import java.util.Optional;
 import java.util.zip.ZipException;
 
 /**
@@ -76,6 +77,11 @@ public final class PhotoFile implements AutoCloseable {
     /** @return what the header says */
     public PhotoInfo info() {
         return reader.info();
+    }
+
+    /** How a JPEG rounds its coefficients, empty for other formats. */
+    Optional<JpegQuantisation> quantisation() {
+        return reader.quantisation();
     }
 
     /**

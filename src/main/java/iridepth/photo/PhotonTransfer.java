@@ -38,10 +38,12 @@ public final class PhotonTransfer {
 
     private final List<List<Point>> points;
     private final double[] correlation;
+    private final double[] countVariance;
 
-    private PhotonTransfer(List<List<Point>> points, double[] correlation) {
+    private PhotonTransfer(List<List<Point>> points, double[] correlation, double[] countVariance) {
         this.points = points;
         this.correlation = correlation;
+        this.countVariance = countVariance;
     }
 
     /**
@@ -104,7 +106,15 @@ public final class PhotonTransfer {
             }
         }
         return new PhotonTransfer(Arrays.stream(quiet).map(QuietBlocks::points).toList(),
-                Arrays.stream(quiet).mapToDouble(QuietBlocks::neighbourCorrelation).toArray());
+                Arrays.stream(quiet).mapToDouble(QuietBlocks::neighbourCorrelation).toArray(), rounding(photo, bands));
+    }
+
+    /** Variance in squared counts of the rounding to counts, and of the rounding of a JPEG. */
+    private static double[] rounding(PhotoFile photo, List<Bands.Band> bands) {
+        double[] variance = photo.quantisation()
+                .map(jpeg -> jpeg.variance(bands.stream().map(Bands.Band::frame).toList()))
+                .orElse(new double[photo.info().channels()]);
+        return Arrays.stream(variance).map(v -> v + NoiseModel.ROUNDING).toArray();
     }
 
     private static QuietBlocks quiet(BlockResidual residual, List<Bands.Band> bands, List<Optional<Frame>> others,
@@ -131,7 +141,8 @@ public final class PhotonTransfer {
     }
 
     /**
-     * Joins the curves of two photos taken by the same camera with the same settings.
+     * Joins the curves of two photos taken by the same camera with the same settings. Means of several exposures have
+     * less noise than single ones and must not be joined with them.
      *
      * @param other curve with the same number of channels
      * @return all points of both
@@ -143,15 +154,17 @@ public final class PhotonTransfer {
         }
         List<List<Point>> joined = new ArrayList<>();
         double[] mean = new double[channels()];
+        double[] rounding = new double[channels()];
         for (int c = 0; c < channels(); c++) {
             List<Point> both = new ArrayList<>(points.get(c));
             both.addAll(other.points.get(c));
             joined.add(List.copyOf(both));
+            rounding[c] = Math.max(countVariance[c], other.countVariance[c]);
             double own = freedom(points.get(c));
             double others = freedom(other.points.get(c));
             mean[c] = (own * correlation[c] + others * other.correlation[c]) / (own + others);
         }
-        return new PhotonTransfer(List.copyOf(joined), mean);
+        return new PhotonTransfer(List.copyOf(joined), mean, rounding);
     }
 
     private static double freedom(List<Point> points) {
@@ -177,5 +190,13 @@ public final class PhotonTransfer {
      */
     public double correlation(int channel) {
         return correlation[channel];
+    }
+
+    /**
+     * @param channel 0 and up
+     * @return variance of the counts by rounding, squared counts: 1/12, and for a JPEG the error of its coefficients
+     */
+    public double countVariance(int channel) {
+        return countVariance[channel];
     }
 }

@@ -11,7 +11,7 @@ import java.util.zip.DataFormatException;
 import java.util.zip.Inflater;
 import java.util.zip.ZipException;
 
-/** The chunks of a PNG file that come before its picture. ISO/IEC 15948 (W3C Portable Network Graphics, third edition). */
+/** The chunks of a PNG file, all there to the last. ISO/IEC 15948 (W3C Portable Network Graphics, third edition). */
 final class PngPhoto {
 
     /** The eight bytes that open every PNG file. */
@@ -21,7 +21,7 @@ final class PngPhoto {
     private static final int ICCP = 0x69434350;
     private static final int PHYS = 0x70485973;
     private static final int TRNS = 0x74524e53;
-    private static final int IDAT = 0x49444154;
+    private static final int IEND = 0x49454e44;
     private static final int LONGEST_PROFILE = 1 << 26;
 
     private PngPhoto() {
@@ -53,16 +53,15 @@ final class PngPhoto {
         }
         double pitch = Double.NaN;
         Optional<IccProfile> profile = Optional.empty();
-        for (int at = 8; file.getInt(at + 4) != IDAT; at += 12 + file.getInt(at)) {
+        int type = IHDR;
+        for (int at = 8; type != IEND; at += 12 + file.getInt(at)) {
             ByteBuffer content = chunk(file, at);
-            switch (file.getInt(at + 4)) {
+            type = file.getInt(at + 4);
+            switch (type) {
                 case PHYS -> pitch = pitch(content);
                 case ICCP -> profile = Optional.of(IccProfile.parse(profile(content), path.toString()));
                 case TRNS -> throw new PhotoException(path, "has a transparent colour; save it without transparency");
                 default -> { }
-            }
-            if (at + 12L + content.limit() + 8 > file.limit()) {
-                throw new EOFException();
             }
         }
         int channels = (kind & 2) != 0 ? 3 : 1;
@@ -70,7 +69,7 @@ final class PngPhoto {
             throw new PhotoException(path, "is too large for a PNG that is decoded whole; save it as TIFF");
         }
         PhotoInfo info = new PhotoInfo(path, width, height, channels, depth, 1, pitch, profile, false);
-        return new DecodedPhoto(info, "png", file.array());
+        return new DecodedPhoto(info, "png", file.array(), Optional.empty());
     }
 
     /** The content of the chunk that starts at a position. */

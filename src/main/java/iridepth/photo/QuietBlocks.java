@@ -14,7 +14,11 @@ final class QuietBlocks {
     private static final int ROUNDS = 30;
     /** Rounding of a level that rests between two counts gives 1/4 count^2, three times the usual 1/12. */
     private static final double ROUNDING_SPREAD = 3;
+    /** Variance above the photon-transfer curve from which a group is taken to hold texture. */
+    private static final double TEXTURE = 1.3;
     private static final double LEAST_CORRECTION = 0.5;
+    /** Neighbours on a grid can hardly be less correlated; a lower figure comes of pictures with next to no noise left. */
+    private static final double LOWEST_CORRELATION = -0.5;
 
     private record Group(double level, double variance, double rounding, int[] blocks) {
     }
@@ -31,9 +35,18 @@ final class QuietBlocks {
     private QuietBlocks(NoiseBlocks blocks, List<Group> groups) {
         this.residual = blocks.residual();
         this.groups = groups;
-        this.covariance = residual.covariances(meanProducts(blocks, groups, 0, 1));
+        List<Group> plain = withoutTexture();
+        this.covariance = residual.covariances(meanProducts(blocks, plain, 0, 1));
         this.covarianceOfParts = new double[PARTS][];
-        Arrays.setAll(covarianceOfParts, part -> residual.covariances(meanProducts(blocks, groups, part, PARTS)));
+        Arrays.setAll(covarianceOfParts, part -> residual.covariances(meanProducts(blocks, plain, part, PARTS)));
+    }
+
+    /** The groups that lie no farther above the photon-transfer curve through all of them than noise may. */
+    private List<Group> withoutTexture() {
+        TransferFit fit = TransferFit.of(points(1));
+        List<Group> plain = groups.stream()
+                .filter(group -> group.variance <= TEXTURE * fit.variance(group.level, group.rounding)).toList();
+        return plain.isEmpty() ? groups : plain;
     }
 
     static QuietBlocks of(NoiseBlocks blocks, int groupCount) {
@@ -130,7 +143,7 @@ final class QuietBlocks {
         return covariances[0] > 0 ? Math.max(-1, Math.min(1, covariances[dy * side + dx] / covariances[0])) : 0;
     }
 
-    /** Mean correlation at a distance across and down, 0 where chance explains it. */
+    /** Mean correlation at a distance across and down, 0 where chance explains it or it cannot be. */
     private double correlation(int distance) {
         double value = mean(covariance, distance);
         double square = 0;
@@ -138,7 +151,7 @@ final class QuietBlocks {
             square += Math.pow(mean(part, distance) - value, 2);
         }
         double error = Math.sqrt(square / (PARTS * (PARTS - 1.0)));
-        return Math.abs(value) > SIGNIFICANT * error ? value : 0;
+        return Math.abs(value) > SIGNIFICANT * error && value > LOWEST_CORRELATION ? value : 0;
     }
 
     private double mean(double[] covariances, int distance) {
@@ -157,7 +170,10 @@ final class QuietBlocks {
 
     /** Points of the photon-transfer curve, corrected for the correlated noise that the surfaces took away. */
     List<PhotonTransfer.Point> points() {
-        double correction = neighbourCorrelation() == 0 ? 1 : Math.max(LEAST_CORRECTION, covariance[0]);
+        return points(neighbourCorrelation() == 0 ? 1 : Math.max(LEAST_CORRECTION, covariance[0]));
+    }
+
+    private List<PhotonTransfer.Point> points(double correction) {
         return groups.stream().map(group -> new PhotonTransfer.Point(group.level, correction * group.variance,
                 group.rounding, (double) group.blocks.length * residual.freedom())).toList();
     }

@@ -4,10 +4,10 @@ import java.util.Arrays;
 import java.util.Optional;
 
 /**
- * The smooth part of a flat or dark frame: per channel a tensor product of cubic B-splines fitted by least squares to the
+ * The smooth part of a flat or dark frame: per channel a tensor product of cubic B-splines fitted robustly to the
  * means of small blocks, so that the frame's pixel noise is not printed into the photos that it corrects. How fine the
  * splines are is chosen by Mallows' Cp (C. L. Mallows, Technometrics 15, 1973): the smallest expected squared error, given
- * the scatter of neighbouring block means. Blocks that stand out (dust, hot pixels) do not count. Immutable.
+ * the scatter of neighbouring block means. Blocks that stand out (dust, hot pixels) hardly count. Immutable.
  */
 public final class ShadingField {
 

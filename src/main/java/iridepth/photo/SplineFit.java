@@ -4,14 +4,24 @@ import java.util.Arrays;
 import org.apache.commons.math3.linear.MatrixUtils;
 import org.apache.commons.math3.linear.RealMatrix;
 
-/** A least-squares tensor-product spline through the block means of one channel, with its fineness chosen by Mallows' Cp. */
+/**
+ * A tensor-product spline through the block means of one channel: Huber's M-estimate (P. J. Huber, Robust Statistics,
+ * 1981), in which a block that stands out pulls no more than one that is {@value #PULL} standard deviations off, with the
+ * number of intervals chosen by Mallows' Cp on the bounded residuals.
+ */
 final class SplineFit {
 
+    private static final double PULL = 3;
     /** Numbers of spline intervals along the longer side, 0 for the constant. */
     private static final int[] INTERVALS = {0, 1, 2, 3, 4, 6, 8, 12, 16, 24, 32, 48, 64};
-    private static final int ROUNDS = 4;
+    /** Choices in a row that may be worse than the best before the search ends. */
+    private static final int PATIENCE = 3;
+    private static final int ROUNDS = 30;
+    private static final double CONVERGED = 0.05;
     private static final double OUTLIER = 6;
     private static final double MAD_TO_SIGMA = 1.4826;
+    /** Least noise of a block, as a fraction of the mean: rounding hides less. */
+    private static final double LEAST_NOISE = 1e-6;
 
     private final SplineBasis across;
     private final SplineBasis down;
@@ -30,76 +40,89 @@ final class SplineFit {
      * A fit and how well it describes the blocks.
      *
      * @param uncertainty standard uncertainty of the fit from the noise of the blocks
-     * @param residual what the fit leaves of the blocks beyond their noise, root mean square
-     * @param outlierFraction fraction of the blocks left out
+     * @param residual what the fit leaves of the blocks beyond their noise, root mean square, without outliers
+     * @param outlierFraction fraction of the blocks that stand out
      */
     record Judged(SplineFit fit, double uncertainty, double residual, double outlierFraction) {
     }
 
     static Judged of(BlockMeans means, int channel) {
         RealMatrix data = MatrixUtils.createRealMatrix(means.mean(channel));
-        double noise = blockNoise(means.mean(channel));
-        RealMatrix cleaned = data;
-        SplineFit best = best(means, data, noise);
-        int outliers = 0;
-        for (int round = 0; round < ROUNDS; round++) {
-            cleaned = data.copy();
-            int found = best.replaceOutliers(cleaned, noise);
-            if (found == outliers) {
-                break;
-            }
-            outliers = found;
-            best = best(means, cleaned, noise);
-        }
-        double n = (double) data.getRowDimension() * data.getColumnDimension();
-        double share = best.size() / n;
-        double left = meanSquare(flat(cleaned.subtract(best.fitted)));
-        return new Judged(best, noise * Math.sqrt(share), Math.sqrt(Math.max(0, left - noise * noise * (1 - share))),
-                outliers / n);
-    }
-
-    /** Puts the fit in the place of blocks that stand out of it; returns how many. */
-    private int replaceOutliers(RealMatrix data, double noise) {
-        RealMatrix residuals = data.subtract(fitted);
-        double reach = OUTLIER * Math.max(noise, MAD_TO_SIGMA * medianOfAbsolute(flat(residuals)));
-        int found = 0;
-        for (int row = 0; row < data.getRowDimension(); row++) {
-            for (int column = 0; column < data.getColumnDimension(); column++) {
-                if (Math.abs(residuals.getEntry(row, column)) > reach) {
-                    data.setEntry(row, column, fitted.getEntry(row, column));
-                    found++;
-                }
-            }
-        }
-        return found;
-    }
-
-    private double size() {
-        return (double) across.size() * down.size();
+        double noise = Math.max(blockNoise(means.mean(channel)), LEAST_NOISE * meanOfAbsolute(flat(data)));
+        SplineFit fit = best(means, data, noise);
+        double[] residuals = flat(data.subtract(fit.fitted));
+        double reach = OUTLIER * Math.max(noise, MAD_TO_SIGMA * medianOfAbsolute(residuals));
+        double[] inliers = Arrays.stream(residuals).filter(r -> Math.abs(r) <= reach).toArray();
+        double share = fit.size() / residuals.length;
+        double excess = meanSquare(inliers) - noise * noise * (1 - share);
+        return new Judged(fit, noise * Math.sqrt(share), Math.sqrt(Math.max(0, excess)),
+                1 - (double) inliers.length / residuals.length);
     }
 
     private static SplineFit best(BlockMeans means, RealMatrix data, double noise) {
         int rows = data.getRowDimension();
         int columns = data.getColumnDimension();
+        int longer = Math.max(rows, columns);
         SplineFit best = null;
         double bestCp = Double.POSITIVE_INFINITY;
+        int worse = 0;
         for (int m : INTERVALS) {
-            int longer = Math.max(rows, columns);
             int mx = m == 0 ? 0 : Math.max(1, Math.round((float) m * columns / longer));
             int my = m == 0 ? 0 : Math.max(1, Math.round((float) m * rows / longer));
-            if (m > 0 && (mx + 3 > columns * 2 / 3 || my + 3 > rows * 2 / 3)) {
+            if (worse == PATIENCE || m > 0 && (mx + 3 > columns * 2 / 3 || my + 3 > rows * 2 / 3)) {
                 break;
             }
-            SplineFit fit = new SplineFit(new SplineBasis(means.width(), means.block(), mx),
-                    new SplineBasis(means.height(), means.block(), my), data);
-            double share = fit.size() / ((double) rows * columns);
-            double cp = meanSquare(flat(data.subtract(fit.fitted))) + 2 * share * noise * noise;
-            if (cp < bestCp) {
+            SplineFit fit = robust(new SplineBasis(means.width(), means.block(), mx),
+                    new SplineBasis(means.height(), means.block(), my), data, noise);
+            double cp = fit.boundedSquares(data, noise) + 2 * fit.size() * noise * noise;
+            worse++;
+            if (best == null || cp < bestCp) {
                 bestCp = cp;
                 best = fit;
+                worse = 0;
             }
         }
         return best;
+    }
+
+    /** Huber's estimate by pseudo-observations: least squares to the data with residuals cut to the bound, repeated. */
+    private static SplineFit robust(SplineBasis across, SplineBasis down, RealMatrix data, double noise) {
+        SplineFit fit = new SplineFit(across, down, data);
+        for (int round = 0; round < ROUNDS; round++) {
+            RealMatrix bounded = data.copy();
+            double[][] last = fit.fitted.getData();
+            boolean cut = false;
+            for (int y = 0; y < last.length; y++) {
+                for (int x = 0; x < last[y].length; x++) {
+                    double residual = data.getEntry(y, x) - last[y][x];
+                    if (Math.abs(residual) > PULL * noise) {
+                        bounded.setEntry(y, x, last[y][x] + Math.copySign(PULL * noise, residual));
+                        cut = true;
+                    }
+                }
+            }
+            if (!cut) {
+                break;
+            }
+            SplineFit next = new SplineFit(across, down, bounded);
+            double moved = Arrays.stream(flat(next.fitted.subtract(fit.fitted))).map(Math::abs).max().orElse(0);
+            fit = next;
+            if (moved < CONVERGED * noise) {
+                break;
+            }
+        }
+        return fit;
+    }
+
+    /** Sum of Huber's loss: the square up to the bound, beyond it the tangent. */
+    private double boundedSquares(RealMatrix data, double noise) {
+        double bound = PULL * noise;
+        return Arrays.stream(flat(data.subtract(fitted))).map(Math::abs)
+                .map(r -> r <= bound ? r * r : bound * (2 * r - bound)).sum();
+    }
+
+    private double size() {
+        return (double) across.size() * down.size();
     }
 
     /** Noise of a block mean from second differences along rows and columns, which a smooth field hardly changes. */
@@ -126,8 +149,12 @@ final class SplineFit {
         return 0.5 * (sorted[(sorted.length - 1) / 2] + sorted[sorted.length / 2]);
     }
 
+    private static double meanOfAbsolute(double[] values) {
+        return Arrays.stream(values).map(Math::abs).average().orElse(0);
+    }
+
     private static double meanSquare(double[] values) {
-        return Arrays.stream(values).map(v -> v * v).sum() / values.length;
+        return Arrays.stream(values).map(v -> v * v).average().orElse(0);
     }
 
     private static double[] flat(RealMatrix matrix) {

@@ -10,29 +10,37 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.regex.Pattern;
 import java.util.stream.IntStream;
 
 /**
  * Counts of a TIFF or BigTIFF file. Plain rows are read straight from their place; packed strips and tiles are decoded
  * as they are needed, several at once, and those that a band of rows uses in part are kept for the next band.
+ *
+ * <p>ImageJ saves 16-bit RGB as three grey pages and says "channels=3" in the description: these are put together.
  */
 final class TiffPhoto implements PhotoReader {
 
     /** Packed chunk rows kept: bands that march up or down share at most one with their neighbour. */
     private static final int KEPT = 2;
 
-    private record Key(int frame, int chunkRow) {
+    private static final Pattern IMAGEJ_RGB = Pattern.compile("(?s)ImageJ=.*\\nchannels=3\\n.*");
+
+    private record Key(int page, int chunkRow) {
     }
 
     private final FileChannel channel;
     private final List<TiffPage> pages;
     private final PhotoInfo info;
+    /** Pages that make one frame: 3 where each holds a channel. */
+    private final int pagesPerFrame;
     private final Map<Key, short[]> kept = new LinkedHashMap<>();
 
-    private TiffPhoto(FileChannel channel, List<TiffPage> pages, PhotoInfo info) {
+    private TiffPhoto(FileChannel channel, List<TiffPage> pages, int pagesPerFrame, PhotoInfo info) {
         this.channel = channel;
         this.pages = pages;
         this.info = info;
+        this.pagesPerFrame = pagesPerFrame;
     }
 
     /** @throws PhotoException if the file is damaged or of a kind not supported */
@@ -59,8 +67,12 @@ final class TiffPhoto implements PhotoReader {
         byte[] icc = tags.bytes(TiffDirectory.ICC_PROFILE);
         Optional<IccProfile> profile = icc.length == 0 ? Optional.empty()
                 : Optional.of(IccProfile.parse(icc, path.toString()));
-        return new TiffPhoto(channel, List.copyOf(pages), new PhotoInfo(path, page.width(), page.height(),
-                page.channels(), page.bits(), pages.size(), PixelPitch.of(tags), profile, false));
+        boolean split = page.channels() == 1 && pages.size() % 3 == 0
+                && IMAGEJ_RGB.matcher(tags.text(TiffDirectory.IMAGE_DESCRIPTION)).matches();
+        int pagesPerFrame = split ? 3 : 1;
+        return new TiffPhoto(channel, List.copyOf(pages), pagesPerFrame, new PhotoInfo(path, page.width(), page.height(),
+                page.channels() * pagesPerFrame, page.bits(), pages.size() / pagesPerFrame, PixelPitch.of(tags), profile,
+                false));
     }
 
     @Override
@@ -70,7 +82,21 @@ final class TiffPhoto implements PhotoReader {
 
     @Override
     public void read(int frame, int y, int count, short[] into) throws IOException {
-        TiffPage page = pages.get(frame);
+        if (pagesPerFrame == 1) {
+            readPage(frame, y, count, into);
+            return;
+        }
+        short[] grey = new short[into.length / pagesPerFrame];
+        for (int c = 0; c < pagesPerFrame; c++) {
+            readPage(frame * pagesPerFrame + c, y, count, grey);
+            for (int i = 0; i < grey.length; i++) {
+                into[i * pagesPerFrame + c] = grey[i];
+            }
+        }
+    }
+
+    private void readPage(int index, int y, int count, short[] into) throws IOException {
+        TiffPage page = pages.get(index);
         int end = y + count;
         int rowLength = page.width() * page.channels();
         if (page.compression() == TiffCompression.NONE) {
@@ -81,7 +107,7 @@ final class TiffPhoto implements PhotoReader {
         if (y % page.chunkHeight() != 0) {
             int chunkRow = y / page.chunkHeight();
             first = Math.min(end, chunkRow * page.chunkHeight() + page.rowsOf(chunkRow));
-            copyKept(frame, chunkRow, y, first, into, 0);
+            copyKept(index, chunkRow, y, first, into, 0);
         }
         int last = end == page.height() ? end : end - end % page.chunkHeight();
         if (first < last) {
@@ -92,14 +118,14 @@ final class TiffPhoto implements PhotoReader {
             }
         }
         if (Math.max(first, last) < end) {
-            copyKept(frame, last / page.chunkHeight(), Math.max(first, last), end, into,
+            copyKept(index, last / page.chunkHeight(), Math.max(first, last), end, into,
                     (Math.max(first, last) - y) * rowLength);
         }
     }
 
-    private void copyKept(int frame, int chunkRow, int y, int end, short[] into, int at) throws IOException {
-        TiffPage page = pages.get(frame);
-        Key key = new Key(frame, chunkRow);
+    private void copyKept(int index, int chunkRow, int y, int end, short[] into, int at) throws IOException {
+        TiffPage page = pages.get(index);
+        Key key = new Key(index, chunkRow);
         short[] rows;
         synchronized (kept) {
             rows = kept.get(key);

@@ -87,8 +87,13 @@ record TransferFit(double readVariance, double gain, double black) {
         return Math.sqrt(chance * chance + model * model + rounding * rounding) + Double.MIN_NORMAL;
     }
 
+    /** Variance by the model at a level, with that of rounding. */
+    double variance(double level, double rounding) {
+        return readVariance + gain * Math.max(0, level - black) + rounding;
+    }
+
     private double variance(PhotonTransfer.Point point) {
-        return readVariance + gain * Math.max(0, point.level() - black) + point.rounding();
+        return variance(point.level(), point.rounding());
     }
 
     private double chiSquare(List<PhotonTransfer.Point> points) {

@@ -29,13 +29,10 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
      * @param image         the photo that shows it
      * @param region        where it is in the photo
      * @param thicknessNm   its thickness
-     * @param uncertaintyNm standard uncertainty of that
+     * @param uncertaintyNm standard uncertainty of that, NaN where nobody stated it
      */
     public record Step(Path image, Region region, double thicknessNm, double uncertaintyNm) {
     }
-
-    /** Standard uncertainty of a step's thickness where none is given: what an ellipsometer does, common practice. */
-    private static final double USUAL_STEP_UNCERTAINTY_NM = 0.5;
 
     static CameraSpec read(Section camera, Tables tables, Materials materials) {
         String encoding = camera.choice("encoding", "srgb", List.of("srgb", "linear"));
@@ -78,7 +75,7 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
             throw section.error("", section.path("thickness_nm") + " is missing from a step");
         }
         return new Step(tables.resolve(section.text("image")), region, thickness,
-                section.number("uncertainty_nm", USUAL_STEP_UNCERTAINTY_NM, 0, 1e4));
+                section.number("uncertainty_nm", Double.NaN, 0, 1e4));
     }
 
     /** Whether the file's values are colour-managed. */

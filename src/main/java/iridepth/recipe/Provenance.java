@@ -9,9 +9,7 @@ import java.security.MessageDigest;
 import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
 import java.util.LinkedHashMap;
-import java.util.LinkedHashSet;
 import java.util.Map;
-import java.util.Set;
 
 /** What is needed to repeat a run: the SHA-256 (FIPS 180-4) of every file that went into it. */
 public final class Provenance {
@@ -21,29 +19,33 @@ public final class Provenance {
     }
 
     /**
-     * Hashes of a recipe, the files that it names, and a photo, by path as given, the recipe first.
+     * Hashes of a recipe and the files that it names, by their path from the recipe's folder, the recipe first.
      *
      * @throws PhotoException if a file cannot be read
      */
-    public static Map<String, String> of(Recipe recipe, Path... photos) {
-        Set<Path> files = new LinkedHashSet<>();
-        files.add(recipe.file());
-        files.addAll(java.util.List.of(photos));
+    public static Map<String, String> of(Recipe recipe) {
+        Map<String, String> hashes = new LinkedHashMap<>();
+        add(hashes, recipe, recipe.file());
+        recipe.tables().forEach(table -> add(hashes, recipe, table));
         CameraSpec camera = recipe.camera();
         for (Path named : new Path[] {camera.dark(), camera.flat(), camera.sensitivities()}) {
             if (named != null) {
-                files.add(named);
+                add(hashes, recipe, named);
             }
         }
-        camera.steps().forEach(step -> files.add(step.image()));
-        Map<String, String> hashes = new LinkedHashMap<>();
-        Path folder = recipe.file().toAbsolutePath().getParent();
-        for (Path file : files) {
-            Path absolute = file.toAbsolutePath().normalize();
-            String name = absolute.startsWith(folder) ? folder.relativize(absolute).toString() : file.getFileName().toString();
-            hashes.put(name.replace('\\', '/'), sha256(file));
-        }
+        camera.steps().stream().map(CameraSpec.Step::image).distinct().forEach(image -> add(hashes, recipe, image));
         return hashes;
+    }
+
+    /**
+     * Adds the hash of another file. Outside the recipe's folder it goes by its plain name, or by its whole path where that name
+     * is taken.
+     */
+    static void add(Map<String, String> hashes, Recipe recipe, Path file) {
+        Path absolute = file.toAbsolutePath().normalize();
+        Path folder = recipe.file().toAbsolutePath().normalize().getParent();
+        String name = (absolute.startsWith(folder) ? folder.relativize(absolute) : absolute.getFileName()).toString();
+        hashes.put((hashes.containsKey(name) ? absolute.toString() : name).replace('\\', '/'), sha256(file));
     }
 
     private static String sha256(Path file) {

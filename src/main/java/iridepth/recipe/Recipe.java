@@ -1,5 +1,6 @@
 package iridepth.recipe;
 
+import iridepth.calibration.InputUncertainty;
 import iridepth.colour.Light;
 import iridepth.curve.ThicknessRange;
 import iridepth.optics.Materials;
@@ -10,6 +11,7 @@ import iridepth.photo.Region;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 
 /**
  * What is known of film, view, light, camera and tolerance: the content of a recipe file, checked.
@@ -24,9 +26,12 @@ import java.util.List;
  * @param pixelUm   size of a pixel in um, NaN to take it from the photo
  * @param excluded  regions to leave out
  * @param tolerance limits in nm, lower and upper, or null
+ * @param tables    tables of materials and lamps that it names, as read
+ * @param inputs    how well the inputs are known, empty where the recipe does not say
  */
 public record Recipe(Path file, String title, Stack stack, ThicknessRange range, ViewSpec view, List<Light> lights,
-                     CameraSpec camera, double pixelUm, List<Region> excluded, double[] tolerance) {
+                     CameraSpec camera, double pixelUm, List<Region> excluded, double[] tolerance, List<Path> tables,
+                     Optional<InputUncertainty> inputs) {
     /**
      * Directions of view as the recipe gives them.
      *
@@ -70,9 +75,12 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
         scale.finish();
         List<Region> excluded = excluded(top.section("exclude"));
         double[] tolerance = tolerance(top.section("tolerance"));
+        Optional<InputUncertainty> inputs = top.has("uncertainty") ? Optional.of(InputSpec.read(top.section("uncertainty"),
+                camera.steps().isEmpty() ? InputUncertainty.NONE : InputUncertainty.DEFAULT)) : Optional.empty();
         String title = top.text("title", file.getFileName().toString());
         top.finish();
-        return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance);
+        return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance,
+                List.copyOf(tables.read()), inputs);
     }
 
     static Stack stack(Section section, String key, Materials materials) {

@@ -1,15 +1,14 @@
 package iridepth.recipe;
 
 import iridepth.photo.Encoding;
-import iridepth.photo.IccProfile;
 import iridepth.photo.NoiseModel;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.Region;
+import iridepth.photo.RegionStatistics;
 import iridepth.photo.ShadingField;
 import iridepth.photo.SignalSource;
-import java.nio.file.Path;
-import java.util.List;
 import java.util.Optional;
 
 /**
@@ -49,11 +48,10 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
     }
 
     private static Encoding encoding(CameraSpec camera, PhotoInfo photo) {
-        Optional<IccProfile> profile = photo.profile();
         if (camera.isColourManaged()) {
-            return profile.isPresent() ? Encoding.of(profile.get(), photo.bitDepth()) : Encoding.srgb(photo.bitDepth());
+            return Encoding.managed(photo);
         }
-        if (profile.isPresent()) {
+        if (photo.profile().isPresent()) {
             throw new PhotoException(photo.path() + ": it embeds a colour profile, but the recipe says camera.encoding = \"linear\"; "
                     + "set \"srgb\" to honour the profile, or save the sensor's linear values without one");
         }
@@ -66,18 +64,21 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
         return SignalSource.of(photo, encoding, dark, flat, noise(photo, encoding));
     }
 
+    /**
+     * What a region of a photo of this rig amounts to, channel by channel. The means carry their own scatter, so that no noise model
+     * enters.
+     */
+    public RegionStatistics[] patch(PhotoFile photo, Region region) {
+        return RegionStatistics.of(SignalSource.of(photo, encoding(photo.info()), dark, flat, NoiseModel.of(0, 1)).region(0, region));
+    }
+
     private NoiseModel noise(PhotoFile photo, Encoding encoding) {
         CameraSpec camera = recipe.camera();
         if (!Double.isNaN(camera.fullWell())) {
             double fullScale = Double.isNaN(camera.fullScale()) ? photo.info().maxCount() : camera.fullScale();
             return NoiseModel.of(camera.readNoise() / fullScale * camera.fullWell(), camera.fullWell());
         }
-        Path flat = camera.flat();
-        if (flat == null) {
-            return NoiseModel.fromPhoto(photo, encoding, dark);
-        }
-        try (PhotoFile file = PhotoFile.open(flat)) {
-            return NoiseModel.fromFlats(List.of(file), encoding, dark);
-        }
+        // A flat is often the mean of several exposures and so quieter than the photo: the photo's own noise is what counts.
+        return NoiseModel.fromPhoto(photo, encoding, dark);
     }
 }

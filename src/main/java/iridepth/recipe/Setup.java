@@ -1,51 +1,106 @@
 package iridepth.recipe;
 
+import iridepth.calibration.Calibration;
+import iridepth.calibration.FitInput;
+import iridepth.calibration.InputUncertainty;
+import iridepth.calibration.ResponseFit;
+import iridepth.calibration.StepSignal;
 import iridepth.colour.Light;
 import iridepth.colour.Xyz;
 import iridepth.curve.ColourCurve;
 import iridepth.curve.EffectiveResponses;
-import iridepth.optics.Reflectance;
-import iridepth.optics.Stack;
 import iridepth.optics.View;
 import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.SignalSource;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
-import java.util.Arrays;
 import java.util.List;
+import java.util.Optional;
+import java.util.function.Function;
 
 /**
  * What a recipe makes of the photos of a rig: the channels' responses and the colour curve.
  *
- * @param view  the quadrature over directions
- * @param curve expected signal against thickness, on the scale of the photo's signal
+ * @param view        the quadrature over directions
+ * @param curve       expected signal against thickness, on the scale of the photo's signal
+ * @param calibration what the steps say of the responses, empty where the recipe itself fixes them
  */
-public record Setup(View view, ColourCurve curve) {
+public record Setup(View view, ColourCurve curve, Optional<Calibration> calibration) {
     /** White of the ICC profile connection space (ISO 15076-1). */
     private static final Xyz D50 = new Xyz(0.9642, 1, 0.8249);
     private static final double[][] LUMINANCE = {{0, 1, 0}};
 
     /**
-     * The set-up where the recipe itself fixes the responses: a colour-managed file, or a sensor of known sensitivities.
+     * The set-up for a photo of a rig: from the steps where the recipe has any, else from what it states.
+     *
+     * @throws RecipeException if the recipe does not fix the responses, or its steps cannot
+     * @throws PhotoException  if a photo or a table contradicts it
+     */
+    public static Setup of(Rig rig, PhotoInfo photo) {
+        return rig.recipe().camera().steps().isEmpty() ? known(rig.recipe(), photo, rig.encoding(photo))
+                : calibrated(rig, photo);
+    }
+
+    /** The set-up with a calibration that has been made before. */
+    public static Setup of(Recipe recipe, Calibration calibration) {
+        ColourCurve curve = calibration.curve(recipe.range(), recipe.range().step(recipe.stack()));
+        return new Setup(calibration.view(), curve, Optional.of(calibration));
+    }
+
+    private static Setup calibrated(Rig rig, PhotoInfo photo) {
+        Recipe recipe = rig.recipe();
+        FitInput input = input(rig, photo);
+        try {
+            return of(recipe, ResponseFit.fit(input));
+        } catch (IllegalArgumentException e) {
+            throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
+        }
+    }
+
+    /**
+     * This set-up with its calibration refined on the films that a photo shows, or itself where there is no calibration or nothing
+     * to refine it on.
+     */
+    public Setup refined(Rig rig, SignalSource photo) {
+        if (calibration.isEmpty()) {
+            return this;
+        }
+        List<StepSignal> films = PhotoFilms.gather(curve, photo, rig.recipe().excluded());
+        Calibration better = ResponseFit.refine(input(rig, photo.info()), calibration.get(), films);
+        return better == calibration.get() ? this : of(rig.recipe(), better);
+    }
+
+    private static FitInput input(Rig rig, PhotoInfo photo) {
+        Recipe recipe = rig.recipe();
+        CameraSpec camera = recipe.camera();
+        View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
+        List<String> channels = photo.channels() == 1 ? List.of("grey") : List.of("red", "green", "blue");
+        List<StepSignal> steps = Steps.measure(rig, channels.size());
+        try {
+            FitInput input = FitInput.of(channels, recipe.lights().get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()),
+                    view, recipe.range(), steps);
+            if (recipe.inputs().isPresent()) {
+                input = input.withInputs(recipe.inputs().get());
+            }
+            return camera.sensitivities() == null ? input : input.withSensitivities(sensitivities(recipe, photo));
+        } catch (IllegalArgumentException e) {
+            throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
+        }
+    }
+
+    /**
+     * The set-up where the recipe itself fixes the responses: a colour-managed file, or a sensor of known sensitivities. Systematic
+     * errors enter only as far as the recipe states how well its inputs are known.
      *
      * @throws RecipeException if the recipe does not fix them
      * @throws PhotoException  if the photo or a table contradicts it
      */
     public static Setup known(Recipe recipe, PhotoInfo photo, Encoding encoding) {
-        View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
-        EffectiveResponses responses = responses(recipe, photo, encoding, recipe.lights().get(0));
-        Stack flat = recipe.camera().flatStack();
-        if (flat == null) {
-            double[] factor = new double[responses.count()];
-            Arrays.fill(factor, 1 / recipe.camera().whiteReflectance());
-            responses = responses.scaled(factor);
-        } else {
-            responses = responses.relativeTo(Reflectance.of(flat, view).spectrum(0));
-        }
-        ColourCurve curve = ColourCurve.of(responses, Reflectance.of(recipe.stack(), view), recipe.range(),
-                recipe.range().step(recipe.stack()));
-        return new Setup(view, curve);
+        Function<Light, EffectiveResponses> responses = light -> responses(recipe, photo, encoding, light);
+        KnownCurve known = new KnownCurve(recipe, responses);
+        return new Setup(known.view(), known.curve(recipe.inputs().orElse(InputUncertainty.NONE)), Optional.empty());
     }
 
     private static EffectiveResponses responses(Recipe recipe, PhotoInfo photo, Encoding encoding, Light light) {
@@ -59,12 +114,22 @@ public record Setup(View view, ColourCurve curve) {
             throw new RecipeException(recipe.file() + ": a linear photo needs camera.sensitivities, or camera.steps to find them "
                     + "from; add either");
         }
+        SpectralTable table = table(recipe, photo);
+        return EffectiveResponses.ofSensor(table.columns(), table.columns().stream().map(table::spectrum).toList(), light);
+    }
+
+    private static List<Spectrum> sensitivities(Recipe recipe, PhotoInfo photo) {
+        SpectralTable table = table(recipe, photo);
+        return table.columns().stream().map(table::spectrum).toList();
+    }
+
+    private static SpectralTable table(Recipe recipe, PhotoInfo photo) {
+        CameraSpec camera = recipe.camera();
         SpectralTable table = new Tables(recipe.file()).read(camera.sensitivities().toString());
         if (table.columns().size() != photo.channels()) {
             throw new PhotoException(table.name() + ": it has " + table.columns().size() + " columns of sensitivity where the photo "
                     + photo.path() + " has " + photo.channels() + " channels");
         }
-        List<Spectrum> sensitivities = table.columns().stream().map(table::spectrum).toList();
-        return EffectiveResponses.ofSensor(table.columns(), sensitivities, light);
+        return table;
     }
 }

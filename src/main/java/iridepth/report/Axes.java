@@ -41,7 +41,7 @@ record Axes(Picture picture, int left, int top, int width, int height, double x0
     }
 
     Ticks yTicks() {
-        return Ticks.of(y0, y1, Math.max(2, height / PIXELS_PER_Y_TICK));
+        return Ticks.of(y0, y1, Math.max(3, height / PIXELS_PER_Y_TICK));
     }
 
     /** Draws pale lines at the ticks, to go under the curves. */
@@ -64,23 +64,26 @@ record Axes(Picture picture, int left, int top, int width, int height, double x0
         }
     }
 
-    /** Draws the ticks and labels along the left edge. */
-    void yAxis(int size) {
+    /** Draws the ticks and labels along the left edge and tells how wide the labels are. */
+    double yAxis(int size) {
         Ticks ticks = yTicks();
+        double widest = 0;
         picture.font(size, false);
         for (double y : ticks.at()) {
             picture.line(left - TICK, py(y), left, py(y), Picture.INK, 1);
             picture.text(ticks.label(y), left - TICK - 5, py(y) + size / 3.0, Picture.Align.RIGHT, Picture.INK);
+            widest = Math.max(widest, picture.widthOf(ticks.label(y)));
         }
+        return widest;
     }
 
     /** Draws axis titles, the frame, ticks and labels. */
     void full(String xTitle, String yTitle) {
         picture.frame(left, top, width, height);
         xAxis(Picture.TEXT);
-        yAxis(Picture.TEXT);
+        double labels = yAxis(Picture.TEXT);
         picture.text(xTitle, left + width / 2.0, top + height + 54, Picture.Align.CENTRE, Picture.INK);
-        picture.textUpwards(yTitle, left - 70, top + height / 2.0, Picture.INK);
+        picture.textUpwards(yTitle, left - TICK - labels - 17, top + height / 2.0, Picture.INK);
     }
 
     /** Draws a curve; where a value is missing it is interrupted. */

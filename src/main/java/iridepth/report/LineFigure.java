@@ -5,6 +5,7 @@ import java.awt.geom.Ellipse2D;
 import java.awt.geom.Line2D;
 import java.nio.file.Path;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 
 /**
@@ -130,17 +131,39 @@ public record LineFigure(String title, String remark, String xTitle, String yTit
         draw().write(png);
     }
 
+    /**
+     * Draws figures one below the other and writes them as one PNG; a file that stands there is overwritten.
+     *
+     * @param heights height of each in px
+     * @throws OutputException if the file cannot be written
+     */
+    public static void write(Path png, List<LineFigure> figures, int... heights) {
+        Picture picture = new Picture(WIDTH, Arrays.stream(heights).sum());
+        int top = 0;
+        for (int i = 0; i < heights.length; i++) {
+            figures.get(i).draw(picture, top, heights[i]);
+            top += heights[i];
+        }
+        picture.write(png);
+    }
+
     Picture draw() {
         Picture picture = new Picture(WIDTH, HEIGHT);
+        draw(picture, 0, HEIGHT);
+        return picture;
+    }
+
+    private void draw(Picture picture, int from, int height) {
         picture.font(Picture.TITLE, true);
-        picture.text(picture.fitted(title, WIDTH - 40.0), 20, 38, Picture.Align.LEFT, Picture.INK);
+        picture.text(picture.fitted(title, WIDTH - 40.0), 20, from + 38.0, Picture.Align.LEFT, Picture.INK);
         picture.font(Picture.TEXT, false);
-        picture.text(picture.fitted(remark, WIDTH - 40.0), 20, 66, Picture.Align.LEFT, Picture.SOFT);
-        int top = remark.isEmpty() ? 64 : 90;
+        picture.text(picture.fitted(remark, WIDTH - 40.0), 20, from + 66.0, Picture.Align.LEFT, Picture.SOFT);
+        int top = from + (title.isEmpty() ? 20 : remark.isEmpty() ? 64 : 90);
         int plotTop = legend(picture, top + 10) + 14;
         Span x = xSpan();
         Span y = ySpan();
-        Axes axes = new Axes(picture, LEFT, plotTop, WIDTH - LEFT - 40, HEIGHT - plotTop - 80, x.from(), x.to(), y.from(), y.to());
+        Axes axes = new Axes(picture, LEFT, plotTop, WIDTH - LEFT - 40, from + height - plotTop - 80, x.from(), x.to(), y.from(),
+                y.to());
         axes.grid();
         for (int i = 0; i < curves.size(); i++) {
             if (!curves.get(i).points && curves.get(i).lower.length > 0) {
@@ -152,7 +175,6 @@ public record LineFigure(String title, String remark, String xTitle, String yTit
         }
         drawLimits(axes);
         axes.full(xTitle, yTitle);
-        return picture;
     }
 
     private Color colour(int i) {

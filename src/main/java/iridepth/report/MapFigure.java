@@ -20,6 +20,7 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
 
     private static final int LEAST_EDGE = 700;
     private static final int LEFT = 96;
+    private static final int TOP = 88;
     private static final int RIGHT = 190;
     private static final int BAR_GAP = 36;
     private static final int LEAST_BAR = 300;
@@ -31,6 +32,18 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
     private static final double BIN_SHARE = 1.0 / BINS;
     /** Share of the cells left beyond either end of the colour scale, so that a few stray ones do not stretch it. */
     private static final double BEYOND = 0.001;
+
+    /**
+     * Loads letters and drawing code, which takes some 150 ms in a fresh process: call it on a thread of its own while the map
+     * is being read. Figures need no such call.
+     */
+    public static void prepare() {
+        Picture picture = new Picture(1, 1);
+        picture.font(Picture.TEXT, false);
+        picture.text("0", 0, 0, Picture.Align.LEFT, Picture.INK);
+        picture.line(0, 0, 1, 1, Picture.INK, 1);
+        ColourScale.thickness();
+    }
 
     /**
      * A figure whose scale spans the thicknesses in the map, but for a thousandth of the cells at either end; rounded outwards.
@@ -82,18 +95,27 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
         draw().write(png);
     }
 
+    private int enlarge() {
+        return (LEAST_EDGE - 1) / Math.max(cells.columns(), cells.rows()) + 1;
+    }
+
+    /** Where the map lies on the sheet. */
+    PixelAxes axes() {
+        return new PixelAxes(LEFT, TOP, cells.columns() * enlarge(), cells.rows() * enlarge(), (double) enlarge() / cells.factor(),
+                pixelUm);
+    }
+
     Picture draw() {
-        int enlarge = (LEAST_EDGE - 1) / Math.max(cells.columns(), cells.rows()) + 1;
+        int enlarge = enlarge();
         int mapWidth = cells.columns() * enlarge;
         int mapHeight = cells.rows() * enlarge;
         int sheet = Math.max(LEAST_SHEET, LEFT + mapWidth + RIGHT);
-        int top = 88;
+        int top = TOP;
         int body = Math.max(mapHeight, LEAST_BAR);
         Picture picture = new Picture(sheet, top + body + 122 + 2 * LEGEND_LINE);
         drawTitle(picture);
         drawMap(picture, LEFT, top, enlarge);
-        picture.frame(LEFT, top, mapWidth, mapHeight);
-        drawAxes(picture, LEFT, top, enlarge);
+        axes().draw(picture);
         ColourBar.draw(picture, LEFT + mapWidth + BAR_GAP, top, body, "Thickness (nm)", fromNm, toNm);
         drawLegend(picture, top + body + 118);
         return picture;
@@ -140,42 +162,6 @@ public record MapFigure(String title, MapCells cells, double pixelUm, double fro
         int green = rgb >> 8 & 255;
         int red = rgb >> 16 & 255;
         return 0.3 * red + 0.6 * green < 110 ? 0xFFFFFF : 0x000000;
-    }
-
-    private void drawAxes(Picture picture, int left, int top, int enlarge) {
-        boolean known = !Double.isNaN(pixelUm);
-        double longest = Math.max(cells.width(), cells.height()) * (known ? pixelUm : 1);
-        double perUnit = !known ? 1 : longest >= 5000 ? 1000 / pixelUm : 1 / pixelUm;
-        String unit = !known ? "pixels" : longest >= 5000 ? "mm" : "\u00b5m";
-        double scale = enlarge * perUnit / cells.factor();
-        double columns = cells.columns() * enlarge / scale;
-        double rows = cells.rows() * enlarge / scale;
-        Ticks xs = Ticks.of(0, columns, Math.max(2, cells.columns() * enlarge / 110));
-        Ticks ys = Ticks.of(0, rows, Math.max(2, cells.rows() * enlarge / 70));
-        int bottom = top + cells.rows() * enlarge;
-        picture.font(Picture.TEXT, false);
-        for (double v : xs.at()) {
-            double x = left + v * scale;
-            picture.line(x, bottom, x, bottom + 7, Picture.INK, 1);
-            picture.text(xs.label(v), x, bottom + 26, Picture.Align.CENTRE, Picture.INK);
-        }
-        for (double v : ys.at()) {
-            double y = top + v * scale;
-            picture.line(left - 7, y, left, y, Picture.INK, 1);
-            picture.text(ys.label(v), left - 12, y + 6, Picture.Align.RIGHT, Picture.INK);
-        }
-        picture.text("x (" + unit + ")", left + cells.columns() * enlarge / 2.0, bottom + 52, Picture.Align.CENTRE, Picture.INK);
-        picture.textUpwards("y (" + unit + ")", 26, top + cells.rows() * enlarge / 2.0, Picture.INK);
-        if (known) {
-            double length = Ticks.step(columns / 12);
-            drawScaleBar(picture, left + cells.columns() * enlarge, bottom + 62, length * scale,
-                    new Ticks(length, xs.at()).label(length) + " " + unit);
-        }
-    }
-
-    private static void drawScaleBar(Picture picture, double right, double y, double length, String label) {
-        picture.fill(right - length, y, length, 6, Picture.INK);
-        picture.text(label, right - length - 10, y + 9, Picture.Align.RIGHT, Picture.INK);
     }
 
     private void drawLegend(Picture picture, int firstLine) {

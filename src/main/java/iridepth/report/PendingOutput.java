@@ -20,6 +20,8 @@ import java.util.Deque;
  */
 final class PendingOutput {
     private static final int NAMES_TRIED = 10_000;
+    /** When the program is interrupted, other threads may still add files while these are removed. */
+    private static final int REMOVALS_TRIED = 20;
 
     private final Path target;
     private final Path part;
@@ -167,7 +169,9 @@ final class PendingOutput {
 
     private synchronized void remove() {
         if (!ended) {
-            removeTree(part);
+            for (int i = 0; i < REMOVALS_TRIED && occupied(part); i++) {
+                removeTree(part);
+            }
             removeEmpty(madeParents);
         }
     }

@@ -1,31 +1,32 @@
 package iridepth.report;
 
+import iridepth.reading.State;
+
 /**
- * How the state of a pixel is coded in files and shown in pictures. The codes are those of the state map: 0 for read, then in
- * this order. The tones are neutral: greys differ from every colour of the thickness scale for normal and colour-blind eyes,
+ * How the {@link State} of a pixel is shown in pictures, in the order of its codes. The tones are neutral: greys differ from every colour of the thickness scale for normal and colour-blind eyes,
  * and from each other in lightness.
  */
 public enum StateStyle {
     /** A thickness is read: shown in its colour of the scale. */
-    READ("read", 0x2F6FB0),
+    READ(State.READ, 0x2F6FB0),
     /** A thickness is read, but another order fits about as well: its colour of the scale, hatched. */
-    ORDER_DOUBTFUL("order-doubtful", 0xF0C04A),
+    ORDER_DOUBTFUL(State.ORDER_DOUBTFUL, 0xF0C04A),
     /** No thickness explains the colour. */
-    OFF_CURVE("off-curve", 0xD9D9D9),
+    OFF_CURVE(State.OFF_CURVE, 0xD9D9D9),
     /** Too little light. */
-    DARK("dark", 0x000000),
+    DARK(State.DARK, 0x000000),
     /** Too much light. */
-    CLIPPED("clipped", 0xFFFFFF),
+    CLIPPED(State.CLIPPED, 0xFFFFFF),
     /** Left out on request. */
-    EXCLUDED("excluded", 0x4A4A4A);
+    EXCLUDED(State.EXCLUDED, 0x4A4A4A);
 
     private static final StateStyle[] ALL = values();
 
-    private final String label;
+    private final State state;
     private final int rgb;
 
-    StateStyle(String label, int rgb) {
-        this.label = label;
+    StateStyle(State state, int rgb) {
+        this.state = state;
         this.rgb = rgb;
     }
 
@@ -39,17 +40,17 @@ public enum StateStyle {
 
     /** The word for the state. */
     public String label() {
-        return label;
+        return state.label();
     }
 
     /** Code in the state map. */
     public int code() {
-        return ordinal();
+        return state.code();
     }
 
     /** Whether a pixel of this state has a thickness. */
     public boolean hasThickness() {
-        return this == READ || this == ORDER_DOUBTFUL;
+        return state.hasThickness();
     }
 
     /** Colour in a map of states, 0xRRGGBB; in a thickness map that of pixels without thickness. */

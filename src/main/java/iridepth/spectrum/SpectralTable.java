@@ -119,8 +119,8 @@ public record SpectralTable(String name, List<String> remarks, List<String> colu
         double from = table.firstNm() - table.slack();
         double to = table.lastNm() + table.slack();
         if (from > MUST_FROM_NM || to < MUST_TO_NM) {
-            throw new IllegalArgumentException(String.format("%s: the table covers %.0f-%.0f nm; it must cover 400-700 nm",
-                    name, table.firstNm(), table.lastNm()));
+            throw new IllegalArgumentException(String.format("%s: the table covers %.4g-%.4g nm; it must cover 400-700 nm%s",
+                    name, table.firstNm(), table.lastNm(), table.lastNm() < 10 ? ", with wavelengths in nm and not in um" : ""));
         }
         return table;
     }

@@ -106,14 +106,14 @@ final class ChartCommand implements Callable<Integer> {
             Light source = light != null ? LightSpec.parse(light) : given != null ? given.lights().get(0)
                     : Light.illuminant("D65");
             write(nm, film, view.view(film, nm.toNm()), source, fringes);
-            terminal.println("wrote " + out + " and " + table(out));
+            terminal.println("wrote " + out + " and " + OutputNames.table(out));
         }
         terminal.flush();
         return Iridepth.DONE;
     }
 
     private void write(ThicknessRange nm, Stack film, View view, Light source, Fringes fringes) {
-        try (OutputFile picture = OutputFile.create(out, replace); OutputFile table = OutputFile.create(table(out), replace)) {
+        try (OutputFile picture = OutputFile.create(out, replace); OutputFile table = OutputFile.create(OutputNames.table(out), replace)) {
             ColourChart chart = ColourChart.of(film, view, source, eye(), adopted(), nm, step,
                     exposure == null ? Double.NaN : exposure);
             new ChartFigure(chart, view.text(), fringes).write(picture.path());
@@ -121,12 +121,6 @@ final class ChartCommand implements Callable<Integer> {
             picture.commit();
             table.commit();
         }
-    }
-
-    private static Path table(Path picture) {
-        String name = picture.getFileName().toString();
-        int dot = name.lastIndexOf('.');
-        return picture.resolveSibling((dot > 0 ? name.substring(0, dot) : name) + ".csv");
     }
 
     private Observer eye() {

@@ -3,6 +3,7 @@ package iridepth.app.cli;
 import iridepth.photo.PhotoException;
 import iridepth.recipe.RecipeException;
 import iridepth.report.OutputException;
+import java.io.PrintWriter;
 import java.util.Locale;
 import picocli.CommandLine;
 import picocli.CommandLine.Command;
@@ -16,7 +17,8 @@ import picocli.CommandLine.ScopeType;
         description = "Reads the thickness of a thin transparent film from its interference colour, pixel by pixel.",
         footer = {"", "Exit codes: 0 done; 1 done, and out of tolerance; 2 command line or recipe wrong; 3 an input cannot be "
             + "used; 4 output cannot be written.", "", Iridepth.CAUTION},
-        subcommands = {ChartCommand.class})
+        subcommands = {ChartCommand.class, CalibrateCommand.class, MapCommand.class, ProfileCommand.class, MeasureCommand.class,
+            ContoursCommand.class, MaterialsCommand.class})
 public final class Iridepth {
     /** What stands below every result. */
     static final String CAUTION = "An estimate from colour is no certified measurement: check against a reference instrument "
@@ -46,14 +48,14 @@ public final class Iridepth {
     /** Runs a command and leaves with its exit code. */
     public static void main(String[] args) {
         System.setProperty("java.awt.headless", "true");
-        System.exit(run(args));
+        System.exit(run(new PrintWriter(System.out, true), new PrintWriter(System.err, true), args));
     }
 
     /** Runs a command and returns its exit code. */
-    static int run(String... args) {
+    static int run(PrintWriter out, PrintWriter err, String... args) {
         Locale.setDefault(Locale.ROOT);
         Iridepth program = new Iridepth();
-        CommandLine line = new CommandLine(program);
+        CommandLine line = new CommandLine(program).setOut(out).setErr(err);
         line.setParameterExceptionHandler((e, given) -> {
             e.getCommandLine().getErr().println(e.getCommandLine().getCommandName() + ": " + firstLine(e.getMessage())
                     + " (see --help)");

@@ -1,0 +1,67 @@
+package iridepth.app.cli;
+
+import iridepth.photo.PhotoFile;
+import iridepth.photo.PhotoInfo;
+import iridepth.photo.SignalSource;
+import iridepth.quality.Tolerance;
+import iridepth.quality.Tolerance.Judgement;
+import iridepth.quality.Verdict;
+import iridepth.reading.FilmReader;
+import iridepth.reading.ThicknessMap;
+import iridepth.recipe.Instrument;
+import iridepth.recipe.Recipe;
+import iridepth.recipe.Setup;
+import iridepth.report.MapFolder;
+import iridepth.report.PagePhoto;
+import iridepth.report.ReportPage;
+import iridepth.report.ResultFolder;
+import iridepth.report.SummaryJson;
+import java.io.PrintWriter;
+import java.nio.file.Path;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.concurrent.CompletableFuture;
+
+/** One photo before an instrument: reads it and writes its result folder. */
+record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
+    /** Reads the photo, writes the folder and tells the essentials; returns the exit code. */
+    int write(Path out, boolean replace) {
+        try (ResultFolder folder = ResultFolder.create(out, replace); PhotoFile file = PhotoFile.open(photo)) {
+            CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photo));
+            SignalSource signal = instrument.signal(file);
+            PhotoInfo info = file.info();
+            Setup setup = instrument.setup(signal);
+            FilmReader reader = FilmReader.of(setup.curve(), recipe().excluded());
+            try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
+                    recipe().range().fromNm(), recipe().range().toNm())) {
+                read(reader, signal, map);
+                Optional<Tolerance> tolerance = Optional.ofNullable(recipe().tolerance()).map(t -> Tolerance.between(t[0], t[1]));
+                map.finish(recipe().title(), tolerance);
+                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, tolerance.map(map::judge), hashes.join());
+                SummaryJson.write(findings.summary(), folder.file("summary.json"));
+                PagePhoto preview = PagePhoto.of(signal, 0, !recipe().camera().isColourManaged());
+                ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview, List.of()));
+                folder.commit();
+                findings.tell(terminal);
+                terminal.println("wrote        " + out);
+                terminal.println(Iridepth.CAUTION);
+                terminal.flush();
+                return findings.judgement().map(Judgement::verdict).filter(v -> v == Verdict.FAIL).isPresent()
+                        ? Iridepth.OUT_OF_TOLERANCE : Iridepth.DONE;
+            }
+        }
+    }
+
+    private Recipe recipe() {
+        return instrument.recipe();
+    }
+
+    private void read(FilmReader reader, SignalSource signal, MapFolder map) {
+        long pixels = (long) signal.info().width() * signal.info().height();
+        try (ProgressBar bar = new ProgressBar("reading", pixels)) {
+            ThicknessMap result = reader.read(signal, 0, bar);
+            map.add(0, result.thickness(), result.random(), result.systematic(), result.state());
+        }
+    }
+}

@@ -1,0 +1,41 @@
+package iridepth.calibration;
+
+import java.util.List;
+
+/**
+ * The figures by which a fit is judged.
+ *
+ * @param residuals         every observation and channel
+ * @param leaveOneOut       one per step
+ * @param chiSquare         of the residuals under the noise and flat residual stated
+ * @param degreesOfFreedom  observations less parameters that they determine, not always a whole number
+ * @param pValue            probability of a chi-square that large or larger by chance
+ * @param logEvidence       ln of the marginal likelihood, up to a constant: compares fits of the same steps
+ * @param determined        number of parameters that the steps determine
+ * @param condition         ratio of the largest to the smallest singular value of the whitened problem: large where steps say
+ *                          nearly the same
+ * @param misfit            relative misfit of the signals that the steps call for, above noise
+ * @param stepNm            standard uncertainty of the steps' thicknesses for which none was stated, as estimated, nm
+ * @param aperture          estimate of the numerical aperture, 0 for a single direction
+ * @param apertureStated    the stated one
+ * @param apertureSigma     standard uncertainty of the estimate
+ */
+public record FitFigures(List<StepResidual> residuals, List<LeaveOneOut> leaveOneOut, double chiSquare,
+                         double degreesOfFreedom, double pValue, double logEvidence, double determined, double condition,
+                         double misfit, double stepNm, double aperture, double apertureStated, double apertureSigma) {
+    /** Keeps copies of the lists. */
+    public FitFigures {
+        residuals = List.copyOf(residuals);
+        leaveOneOut = List.copyOf(leaveOneOut);
+    }
+
+    /**
+     * Root mean square of the leave-one-out errors, nm.
+     *
+     * @param extrapolated whether the steps at the ends count
+     */
+    public double leaveOneOutRms(boolean extrapolated) {
+        return Math.sqrt(leaveOneOut.stream().filter(l -> extrapolated || !l.extrapolated())
+                .mapToDouble(l -> l.errorNm() * l.errorNm()).average().orElse(Double.NaN));
+    }
+}

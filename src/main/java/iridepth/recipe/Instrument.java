@@ -1,0 +1,153 @@
+package iridepth.recipe;
+
+import iridepth.colour.Light;
+import iridepth.optics.Material;
+import iridepth.photo.Encoding;
+import iridepth.photo.PhotoFile;
+import iridepth.photo.PhotoInfo;
+import iridepth.photo.SignalSource;
+import iridepth.reading.FilmReader;
+import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Locale;
+import java.util.Map;
+import java.util.Optional;
+
+/**
+ * A recipe made ready to read photos: dark, flat, noise, colour curve and hashes of the recipe's own files. Each is made when
+ * first needed and then serves every photo, so that a lot of photos costs one set-up. The curve depends on what the channels of
+ * a photo are; it is made again where a photo has others than the one before. Safe for use by several threads.
+ */
+public final class Instrument {
+    private final Recipe recipe;
+    private final Optional<Path> calibration;
+    /** Hashes are made beside the set-up, not before or after it, hence a lock of their own. */
+    private final Object hashing = new Object();
+    private Map<String, String> hashes;
+    private Rig rig;
+    private Channels channels;
+    private Setup setup;
+    private FilmReader reader;
+
+    /** What the curve depends on: the number of channels, and their matrix to XYZ where the file tells it. */
+    private record Channels(int count, String toXyz) {
+        static Channels of(PhotoInfo photo, Encoding encoding) {
+            return new Channels(photo.channels(), encoding.toXyz().map(Arrays::deepToString).orElse(""));
+        }
+    }
+
+    private Instrument(Recipe recipe, Optional<Path> calibration) {
+        this.recipe = recipe;
+        this.calibration = calibration;
+    }
+
+    /** An instrument by a recipe; reads no photo yet. */
+    public static Instrument of(Recipe recipe) {
+        return new Instrument(recipe, Optional.empty());
+    }
+
+    /**
+     * An instrument by a recipe with a calibration that has been made before.
+     *
+     * @param calibration the calibration's file or result folder
+     */
+    public static Instrument of(Recipe recipe, Path calibration) {
+        return new Instrument(recipe, Optional.of(calibration));
+    }
+
+    /** The recipe. */
+    public Recipe recipe() {
+        return recipe;
+    }
+
+    /**
+     * The linear signal of a photo with its noise.
+     *
+     * @param photo the open photo; stays the caller's to close
+     * @throws iridepth.photo.PhotoException if it, the dark or the flat cannot be used
+     */
+    public SignalSource signal(PhotoFile photo) {
+        return rig().signal(photo);
+    }
+
+    private synchronized Rig rig() {
+        if (rig == null) {
+            rig = Rig.of(recipe);
+        }
+        return rig;
+    }
+
+    /**
+     * Colour curve and view for a photo.
+     *
+     * @throws RecipeException                if the recipe does not fix them
+     * @throws iridepth.photo.PhotoException if the photo or a table contradicts it
+     */
+    public synchronized Setup setup(PhotoInfo photo) {
+        Encoding encoding = rig().encoding(photo);
+        Channels wanted = Channels.of(photo, encoding);
+        if (!wanted.equals(channels)) {
+            Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
+                    : Setup.of(recipe, CalibrationFile.read(calibration.get(), recipe));
+            reader = FilmReader.of(made.curve(), recipe.excluded());
+            setup = made;
+            channels = wanted;
+        }
+        return setup;
+    }
+
+    /**
+     * The set-up for one photo: where the recipe has steps, and no calibration made before is given, refined on the films that the
+     * photo itself shows.
+     *
+     * @throws RecipeException if the recipe's steps cannot be used
+     */
+    public Setup setup(SignalSource photo) {
+        Setup general = setup(photo.info());
+        return calibration.isPresent() ? general : general.refined(rig(), photo);
+    }
+
+    /** The reader of films for a photo, on the curve of {@link #setup}. */
+    public synchronized FilmReader reader(PhotoInfo photo) {
+        setup(photo);
+        return reader;
+    }
+
+    /** What a user should know of the tables that the recipe uses, a line each. */
+    public List<String> notes() {
+        List<String> notes = new ArrayList<>();
+        recipe.stack().media().stream().filter(Material::isHeld).distinct().forEach(m -> notes.add(String.format(Locale.ROOT,
+                "the index of %s is tabulated for %.0f-%.0f nm; beyond, its end value is held", m.name(), m.firstNm(), m.lastNm())));
+        recipe.lights().stream().filter(Light::held).forEach(l -> notes.add("the table of the light " + l.name()
+                + " stops short of 380-780 nm; beyond, its end value is held"));
+        return notes;
+    }
+
+    /** Edge of a photo's pixels in um by the recipe, else by the photo; NaN if neither tells. */
+    public double pixelUm(PhotoInfo photo) {
+        return Double.isNaN(recipe.pixelUm()) ? photo.pixelUm() : recipe.pixelUm();
+    }
+
+    /**
+     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the photo.
+     *
+     * @throws iridepth.photo.PhotoException if a file cannot be read
+     */
+    public Map<String, String> hashes(Path photo) {
+        Map<String, String> all = new LinkedHashMap<>(own());
+        Provenance.add(all, recipe, photo);
+        return all;
+    }
+
+    private Map<String, String> own() {
+        synchronized (hashing) {
+            if (hashes == null) {
+                hashes = Provenance.of(recipe);
+            }
+            return hashes;
+        }
+    }
+}
