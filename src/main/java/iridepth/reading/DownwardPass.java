@@ -76,16 +76,18 @@ final class DownwardPass {
         return bands;
     }
 
-    /** Finds the candidates of a band again that had to be dropped, and what the downward sweeps say. */
-    void restore(Band band) {
+    /** Finds the candidates of a band again that had to be dropped, and what the downward sweeps say of them. */
+    PixelRow[] restored(Band band) {
+        Band again = new Band(band.top(), new PixelRow[band.height()], band.carried().clone());
         Crew crew = new Crew();
-        find(crew, read(band.top()), band);
+        find(crew, read(band.top()), again);
         crew.work();
         for (int i = 0; i < sweeps.length; i++) {
             sweeps[i].resume(band.carried()[i]);
         }
-        sweep(crew, band);
+        sweep(crew, again);
         crew.work();
+        return again.rows();
     }
 
     private Frame read(int top) {

@@ -3,6 +3,7 @@ package iridepth.reading;
 import iridepth.curve.ColourCurve;
 import iridepth.photo.Region;
 import iridepth.photo.SignalSource;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.function.IntFunction;
 import java.util.function.LongConsumer;
@@ -11,7 +12,8 @@ import java.util.function.LongConsumer;
  * Reads the film thickness of every pixel of a photograph by maximum likelihood on a colour curve, its order chosen from the
  * neighbourhood.
  *
- * <p>Two passes over the picture, down and up again, each in bands of rows. The result depends neither on the height of the
+ * <p>Two passes over the picture, down and up again, each in bands of rows; where regions of the picture turn out to be cut off
+ * from what tells their order, another way up with other orders for them. The result depends neither on the height of the
  * bands nor on the number of threads, and memory does not grow with the picture but for a few bytes a region and row. Immutable.
  */
 public final class FilmReader {
@@ -19,6 +21,7 @@ public final class FilmReader {
     private static final int LEAST_BAND = 16;
     private static final int MOST_BAND = 256;
     private static final long MOST_KEPT = 512L << 20;
+    private static final int MOST_CORRECTIONS = 6;
 
     private final ColourCurve curve;
     private final List<Region> excluded;
@@ -82,9 +85,18 @@ public final class FilmReader {
         int rows = bandHeight > 0 ? bandHeight : Math.max(LEAST_BAND, Math.min(MOST_BAND, BAND_PIXELS / width));
         DownwardPass down = new DownwardPass(photo, frame, rows, () -> new RowReader(photo, excluded, pins, index), newSweep);
         List<Band> bands = down.run(kept, progress);
-        UpwardPass up = new UpwardPass(index, penalty, width, height, sink);
         long pixels = (long) width * height;
-        return up.run(bands, down, done -> progress.accept(pixels + done));
+        List<OrderCorrection> corrections = new ArrayList<>();
+        while (true) {
+            UpwardPass up = new UpwardPass(index, penalty, width, height, corrections, sink);
+            up.run(bands, down, done -> progress.accept(pixels + done));
+            OrderCorrection correction = up.regions().correction();
+            if (correction.chains().isEmpty() || corrections.size() == MOST_CORRECTIONS) {
+                return up.judge();
+            }
+            corrections.add(correction);
+            sink.restart();
+        }
     }
 
     /**

@@ -30,12 +30,12 @@ final class FilmRegion {
         return root;
     }
 
-    /** Makes this and another region one. */
-    void join(FilmRegion other) {
+    /** Makes this and another region one, which is returned. */
+    FilmRegion join(FilmRegion other) {
         FilmRegion a = root();
         FilmRegion b = other.root();
         if (a == b) {
-            return;
+            return a;
         }
         FilmRegion large = a.pixels >= b.pixels ? a : b;
         FilmRegion small = large == a ? b : a;
@@ -55,11 +55,12 @@ final class FilmRegion {
             large.evidence.add(small.evidence);
         }
         small.evidence = null;
+        return large;
     }
 
-    /** Adds pixels of a row, from one column up to before another. */
-    void add(int y, int from, int to, int count, double thicknessSum) {
-        pixels += count;
+    /** Adds pixels of a row, from one column up to before another, and the sum of their thicknesses. */
+    void add(int y, int from, int to, double thicknessSum) {
+        pixels += to - from;
         sum += thicknessSum;
         left = Math.min(left, from);
         right = Math.max(right, to);

@@ -3,6 +3,7 @@ package iridepth.reading;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.HashMap;
+import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.TreeMap;
@@ -36,6 +37,13 @@ final class OrderEvidence {
     /** [chosen bin][alternative bin]: number of witnesses and sum of the differences of cost. */
     private final Map<Integer, Map<Integer, double[]>> sums = new HashMap<>();
 
+    /** Places where a pixel of the region would join another region by another of its candidates. */
+    private final Map<Border, Integer> borders = new LinkedHashMap<>();
+
+    /** A pixel of one bin that would join a region if it were of another. */
+    private record Border(FilmRegion region, int chosen, int bin) {
+    }
+
     OrderEvidence(CurveIndex index) {
         this.index = index;
         this.binNm = JumpPenalty.fringe(index) / BINS_PER_FRINGE;
@@ -66,8 +74,25 @@ final class OrderEvidence {
         }
     }
 
+    /** Hears a pixel at the border that would join a region with another of its candidates. */
+    void join(FilmRegion region, float chosenNm, float candidateNm) {
+        borders.merge(new Border(region, bin(chosenNm), bin(candidateNm)), 1, Integer::sum);
+    }
+
+    /** How many pixels at the borders would join each other region if this one took an order. */
+    Map<FilmRegion, Integer> joined(OrderChain chain) {
+        Map<FilmRegion, Integer> joined = new LinkedHashMap<>();
+        borders.forEach((border, count) -> {
+            if (chain.leads(border.chosen(), border.bin())) {
+                joined.merge(border.region().root(), count, Integer::sum);
+            }
+        });
+        return joined;
+    }
+
     /** Adds what the pixels of another region have said. */
     void add(OrderEvidence other) {
+        other.borders.forEach((border, count) -> borders.merge(border, count, Integer::sum));
         other.witnesses.forEach((bin, n) -> witnesses.merge(bin, n, Integer::sum));
         other.sums.forEach((bin, row) -> {
             Map<Integer, double[]> own = sums.computeIfAbsent(bin, b -> new TreeMap<>());
@@ -79,8 +104,20 @@ final class OrderEvidence {
         });
     }
 
-    /** One way to go through the bins so far. */
-    private record Chain(int bin, double evidence, double thicknessSum, double weight) {
+    /** A step of a chain: a bin in the place of a chosen one, and the chain before it. */
+    private record Link(Link before, int chosen, int bin, double evidence, double thicknessSum, double weight) {
+        Link after(Link chain) {
+            return new Link(chain, chosen, bin, evidence + chain.evidence, thicknessSum + chain.thicknessSum,
+                    weight + chain.weight);
+        }
+
+        OrderChain chain(double binNm) {
+            TreeMap<Integer, Integer> bins = new TreeMap<>();
+            for (Link link = this; link != null; link = link.before) {
+                bins.put(link.chosen, link.bin);
+            }
+            return new OrderChain(evidence, thicknessSum / weight, binNm, bins);
+        }
     }
 
     /**
@@ -88,9 +125,9 @@ final class OrderEvidence {
      *
      * @param pixels number of pixels of the region
      */
-    List<DoubtfulRegion.Alternative> alternatives(long pixels) {
+    List<OrderChain> alternatives(long pixels) {
         int heard = witnesses.values().stream().mapToInt(Integer::intValue).sum();
-        List<Chain> chains = null;
+        List<Link> chains = null;
         int before = 0;
         for (Map.Entry<Integer, Integer> entry : witnesses.entrySet()) {
             int bin = entry.getKey();
@@ -98,7 +135,7 @@ final class OrderEvidence {
             if (count < MINOR * heard) {
                 continue;
             }
-            List<Chain> links = links(bin, count, (double) pixels / heard);
+            List<Link> links = links(bin, count, (double) pixels / heard);
             chains = chains == null ? links : extended(chains, links, STEEPEST * (bin - before) + 1);
             before = bin;
         }
@@ -106,10 +143,11 @@ final class OrderEvidence {
     }
 
     /** The alternatives of one bin. */
-    private List<Chain> links(int bin, int count, double pixelsPerWitness) {
+    private List<Link> links(int bin, int count, double pixelsPerWitness) {
         Map<Integer, double[]> row = sums.get(bin);
         double share = 1.0 / neighboursInGroup(bin);
-        List<Chain> links = new ArrayList<>();
+        double weight = count * pixelsPerWitness;
+        List<Link> links = new ArrayList<>();
         for (int alternative : row.keySet()) {
             double n = 0;
             double sum = 0;
@@ -119,9 +157,8 @@ final class OrderEvidence {
                 sum += at[1];
             }
             if (n >= count / 2.0) {
-                double gain = gain((bin + 0.5) * binNm, (alternative + 0.5) * binNm, count * pixelsPerWitness);
-                double weight = count * pixelsPerWitness;
-                links.add(new Chain(alternative, share * gain * sum / n, weight * (alternative + 0.5) * binNm, weight));
+                double gain = gain((bin + 0.5) * binNm, (alternative + 0.5) * binNm, weight);
+                links.add(new Link(null, bin, alternative, share * gain * sum / n, weight * (alternative + 0.5) * binNm, weight));
             }
         }
         return links;
@@ -134,24 +171,22 @@ final class OrderEvidence {
     }
 
     /** Each link with the likeliest chain that leads to it. */
-    private static List<Chain> extended(List<Chain> chains, List<Chain> links, int reach) {
-        List<Chain> result = new ArrayList<>();
-        for (Chain link : links) {
+    private static List<Link> extended(List<Link> chains, List<Link> links, int reach) {
+        List<Link> result = new ArrayList<>();
+        for (Link link : links) {
             chains.stream().filter(chain -> Math.abs(chain.bin() - link.bin()) <= reach)
-                    .min(Comparator.comparingDouble(Chain::evidence))
-                    .ifPresent(chain -> result.add(new Chain(link.bin(), chain.evidence() + link.evidence(),
-                            chain.thicknessSum() + link.thicknessSum(), chain.weight() + link.weight())));
+                    .min(Comparator.comparingDouble(Link::evidence)).ifPresent(chain -> result.add(link.after(chain)));
         }
         return result;
     }
 
-    private List<DoubtfulRegion.Alternative> likeliest(List<Chain> chains) {
-        List<DoubtfulRegion.Alternative> result = new ArrayList<>();
-        chains.stream().filter(chain -> chain.evidence() < REFUTED).sorted(Comparator.comparingDouble(Chain::evidence))
+    private List<OrderChain> likeliest(List<Link> chains) {
+        List<OrderChain> result = new ArrayList<>();
+        chains.stream().filter(chain -> chain.evidence() < REFUTED).sorted(Comparator.comparingDouble(Link::evidence))
+                .map(link -> link.chain(binNm))
                 .forEach(chain -> {
-                    double mean = chain.thicknessSum() / chain.weight();
-                    if (result.stream().noneMatch(known -> Math.abs(known.meanNm() - mean) < 2 * binNm)) {
-                        result.add(new DoubtfulRegion.Alternative(mean, chain.evidence()));
+                    if (result.stream().noneMatch(known -> Math.abs(known.meanNm() - chain.meanNm()) < 2 * binNm)) {
+                        result.add(chain);
                     }
                 });
         return result;

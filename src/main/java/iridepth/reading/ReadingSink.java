@@ -20,6 +20,12 @@ public interface ReadingSink {
     void readings(int firstRow, float[] thickness, float[] random, float[] systematic, float[] margin);
 
     /**
+     * All readings so far are void and come again: seen as a whole, the picture asks for other orders. Happens seldom, where
+     * regions are cut off from all that tells their order.
+     */
+    void restart();
+
+    /**
      * Takes a band of states.
      *
      * @param firstRow top row of the band

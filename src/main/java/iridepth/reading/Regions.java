@@ -4,7 +4,12 @@ import iridepth.photo.Region;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
+import java.util.HashMap;
+import java.util.HashSet;
+import java.util.LinkedHashMap;
 import java.util.List;
+import java.util.Map;
+import java.util.Set;
 
 /**
  * The regions of continuous thickness in a picture, gathered row by row from the bottom up: pixels are of one region where a
@@ -15,10 +20,11 @@ final class Regions {
     private static final int SPECK = 5;
     /** Rows after which no pixel can join a speck any more. */
     static final int SPECK_ROWS = SPECK * (Sweep.WIDEST_GAP + 1);
-    /** Pixels with one candidate only that settle a region's order. */
+    /** Pixels with one candidate only that settle a region's order, and their least share of its pixels. */
     private static final int SETTLING = 20;
-    /** So many pixels of a region, and every sixteenth of the rest, tell of other orders. */
-    private static final int WITNESSES = 4096;
+    private static final double SETTLING_SHARE = 1e-3;
+    /** Pixels of a border that must agree on another order. */
+    private static final int AGREEING = 3;
 
     private final CurveIndex index;
     private final JumpPenalty penalty;
@@ -27,12 +33,8 @@ final class Regions {
     private final float[] belowThickness;
     private final byte[] belowGap;
     private final FilmRegion[] here;
-    /** [y]: the regions of the row, one a run; where there is no reading, null. */
-    private final FilmRegion[][] region;
-    /** [y]: where each run ends. */
-    private final int[][] end;
-    /** [y]: state of each run without reading. */
-    private final byte[][] state;
+    private final RegionRuns runs;
+    private final RegionWitnesses witnesses;
     private final List<FilmRegion> all = new ArrayList<>();
 
     Regions(CurveIndex index, JumpPenalty penalty, int width, int height) {
@@ -43,23 +45,20 @@ final class Regions {
         this.belowThickness = new float[width];
         this.belowGap = new byte[width];
         this.here = new FilmRegion[width];
-        this.region = new FilmRegion[height][];
-        this.end = new int[height][];
-        this.state = new byte[height][];
+        this.runs = new RegionRuns(width, height);
+        this.witnesses = new RegionWitnesses(index, penalty, width);
     }
 
     /** Takes the next row upwards. */
     void add(int y, PixelRow pixels, ReadRow row) {
         link(row);
-        RunList runs = new RunList(y, pixels, row);
-        region[y] = runs.regions();
-        end[y] = runs.ends();
-        state[y] = runs.states();
         for (int x : pixels.pinned()) {
             if (here[x] != null) {
                 here[x].root().pin();
             }
         }
+        runs.add(y, here, row);
+        witnesses.add(y, pixels, row, here);
     }
 
     /** Finds the region of each pixel and leaves it in {@link #here}. */
@@ -82,12 +81,8 @@ final class Regions {
                 its = beside;
             }
             FilmRegion lower = below[x];
-            if (lower != null && penalty.links(belowThickness[x], d, belowGap[x] + 1)) {
-                if (its == null) {
-                    its = lower.root();
-                } else if (its != lower) {
-                    its = join(its, lower);
-                }
+            if (lower != null && its != lower && penalty.links(belowThickness[x], d, belowGap[x] + 1)) {
+                its = its == null ? lower.root() : its.join(lower);
             }
             if (its == null) {
                 its = new FilmRegion();
@@ -103,89 +98,9 @@ final class Regions {
         }
     }
 
-    private static FilmRegion join(FilmRegion a, FilmRegion b) {
-        a.join(b);
-        return a.root();
-    }
-
-    /** The runs of a row: stretches of pixels of one region or one state. */
-    private final class RunList {
-        private final List<FilmRegion> regions = new ArrayList<>();
-        private int[] ends = new int[8];
-        private byte[] states = new byte[8];
-
-        RunList(int y, PixelRow pixels, ReadRow row) {
-            int from = 0;
-            FilmRegion its = root(0);
-            for (int x = 1; x <= width; x++) {
-                FilmRegion next = x < width ? root(x) : null;
-                if (x == width || next != its || its == null && row.state()[x] != row.state()[from]) {
-                    close(y, from, x, its, row);
-                    from = x;
-                    its = next;
-                }
-            }
-            witness(y, pixels, row);
-        }
-
-        private FilmRegion root(int x) {
-            return here[x] == null ? null : here[x].root();
-        }
-
-        private void close(int y, int from, int to, FilmRegion its, ReadRow row) {
-            int count = regions.size();
-            if (count == ends.length) {
-                ends = Arrays.copyOf(ends, 2 * count);
-                states = Arrays.copyOf(states, 2 * count);
-            }
-            regions.add(its);
-            ends[count] = to;
-            states[count] = row.state()[from];
-            if (its != null) {
-                double sum = 0;
-                int settled = 0;
-                for (int x = from; x < to; x++) {
-                    sum += row.thickness()[x];
-                    settled += row.margin()[x] == Float.POSITIVE_INFINITY ? 1 : 0;
-                }
-                its.add(y, from, to, to - from, sum);
-                its.settle(settled);
-                its.meet((from > 0 ? 1 : 0) + (to < width ? 1 : 0));
-            }
-        }
-
-        FilmRegion[] regions() {
-            return regions.toArray(FilmRegion[]::new);
-        }
-
-        int[] ends() {
-            return Arrays.copyOf(ends, regions.size());
-        }
-
-        byte[] states() {
-            return Arrays.copyOf(states, regions.size());
-        }
-    }
-
-    /** Lets the pixels of a row that have several candidates tell of them, in regions that nothing has settled yet. */
-    private void witness(int y, PixelRow pixels, ReadRow row) {
-        int candidate = 0;
-        int open = 0;
-        for (int x = 0; x < width; x++) {
-            int count = Math.max(0, pixels.kind(x));
-            if (count > 1) {
-                FilmRegion its = here[x] == null ? null : here[x].root();
-                if (its != null && !isSettled(its) && (its.pixels() < WITNESSES || (x & 3) == 0 && (y & 3) == 0)) {
-                    its.evidence(index).add(row.thickness()[x], pixels, candidate, open, count);
-                }
-                open += count;
-            }
-            candidate += count;
-        }
-    }
-
-    private static boolean isSettled(FilmRegion region) {
-        return region.pinned() || region.settled() >= SETTLING && region.settled() * 1000 >= region.pixels();
+    /** Whether a region's order is beyond doubt: it is known, or enough of its pixels leave no choice. */
+    static boolean isSettled(FilmRegion region) {
+        return region.pinned() || region.settled() >= SETTLING && region.settled() >= SETTLING_SHARE * region.pixels();
     }
 
     private static boolean isSpeck(FilmRegion region) {
@@ -196,35 +111,84 @@ final class Regions {
     ReadRow clean(int y, ReadRow row) {
         ReadRow result = row;
         int from = 0;
-        for (int i = 0; i < end[y].length; i++) {
-            FilmRegion its = region[y][i];
-            if (its != null && isSpeck(its.root())) {
+        for (int i = 0; i < runs.count(y); i++) {
+            FilmRegion its = runs.region(y, i);
+            if (its != null && isSpeck(its)) {
                 if (result == row) {
                     result = row.copy();
                 }
-                for (int x = from; x < end[y][i]; x++) {
+                for (int x = from; x < runs.end(y, i); x++) {
                     result.leave(x, State.OFF_CURVE);
                 }
             }
-            from = end[y][i];
+            from = runs.end(y, i);
         }
         return result;
+    }
+
+    /** The region of each pixel of a row, null where there is none. */
+    FilmRegion[] of(int y) {
+        FilmRegion[] of = new FilmRegion[width];
+        int from = 0;
+        for (int i = 0; i < runs.count(y); i++) {
+            Arrays.fill(of, from, runs.end(y, i), runs.region(y, i));
+            from = runs.end(y, i);
+        }
+        return of;
+    }
+
+    /** The regions whose order is open, with the other orders that are not refuted, the likeliest first. */
+    private Map<FilmRegion, List<OrderChain>> open() {
+        Map<FilmRegion, List<OrderChain>> open = new LinkedHashMap<>();
+        for (FilmRegion its : all) {
+            if (its.root() == its && !isSpeck(its) && !isSettled(its) && its.hasEvidence()) {
+                List<OrderChain> alternatives = its.evidence(index).alternatives(its.pixels());
+                if (!alternatives.isEmpty()) {
+                    open.put(its, alternatives);
+                }
+            }
+        }
+        return open;
+    }
+
+    /** That a region takes another order, by which so many pixels of its border join another region. */
+    private record Move(FilmRegion region, OrderChain chain, FilmRegion to, int joined) {
+    }
+
+    /**
+     * When all rows have been added, finds the regions of open order that would join a neighbour if they took another of their
+     * orders: such a border is none of the film. The neighbour must be settled, or larger.
+     */
+    OrderCorrection correction() {
+        List<Move> moves = new ArrayList<>();
+        open().forEach((region, alternatives) -> alternatives.forEach(chain -> region.evidence(index).joined(chain)
+                .forEach((other, count) -> {
+                    boolean firm = isSettled(other) || other.pixels() > region.pixels();
+                    if (other != region && firm && count >= AGREEING) {
+                        moves.add(new Move(region, chain, other, count));
+                    }
+                })));
+        moves.sort(Comparator.comparing((Move move) -> isSettled(move.to())).thenComparingInt(Move::joined).reversed());
+        Map<FilmRegion, OrderChain> chains = new HashMap<>();
+        Set<FilmRegion> stay = new HashSet<>();
+        for (Move move : moves) {
+            if (!chains.containsKey(move.region()) && !stay.contains(move.region()) && !chains.containsKey(move.to())) {
+                chains.put(move.region(), move.chain());
+                stay.add(move.to());
+            }
+        }
+        return new OrderCorrection(this, chains);
     }
 
     /** Judges all regions when all rows have been added; those in doubt, largest first. */
     List<DoubtfulRegion> judge() {
         List<DoubtfulRegion> doubtful = new ArrayList<>();
-        for (FilmRegion its : all) {
-            if (its.root() == its && its.pixels() > 0 && !isSpeck(its) && !isSettled(its) && its.hasEvidence()) {
-                List<DoubtfulRegion.Alternative> alternatives = its.evidence(index).alternatives(its.pixels());
-                if (!alternatives.isEmpty()) {
-                    its.setDoubtful();
-                    int[] box = its.box();
-                    doubtful.add(new DoubtfulRegion(new Region(box[0], box[1], box[2], box[3]), its.pixels(),
-                            its.mean(), alternatives));
-                }
-            }
-        }
+        open().forEach((region, alternatives) -> {
+            region.setDoubtful();
+            int[] box = region.box();
+            doubtful.add(new DoubtfulRegion(new Region(box[0], box[1], box[2], box[3]), region.pixels(), region.mean(),
+                    alternatives.stream().map(c -> new DoubtfulRegion.Alternative(c.meanNm(), c.evidence())).toList()));
+        });
         doubtful.sort(Comparator.comparingLong(DoubtfulRegion::pixels).reversed());
         return doubtful;
     }
@@ -232,12 +196,12 @@ final class Regions {
     /** The states of a row, after {@link #judge}. */
     void states(int y, byte[] into, int at) {
         int from = 0;
-        for (int i = 0; i < end[y].length; i++) {
-            FilmRegion its = region[y][i] == null ? null : region[y][i].root();
-            State code = its == null ? State.of(state[y][i]) : isSpeck(its) ? State.OFF_CURVE
+        for (int i = 0; i < runs.count(y); i++) {
+            FilmRegion its = runs.region(y, i);
+            State code = its == null ? runs.state(y, i) : isSpeck(its) ? State.OFF_CURVE
                     : its.doubtful() ? State.ORDER_DOUBTFUL : State.READ;
-            Arrays.fill(into, at + from, at + end[y][i], code.code());
-            from = end[y][i];
+            Arrays.fill(into, at + from, at + runs.end(y, i), code.code());
+            from = runs.end(y, i);
         }
     }
 }

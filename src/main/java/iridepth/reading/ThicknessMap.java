@@ -38,6 +38,11 @@ public record ThicknessMap(int width, int height, float[] thickness, float[] ran
             }
 
             @Override
+            public void restart() {
+                // what comes again takes the place of what came before
+            }
+
+            @Override
             public void states(int firstRow, byte[] codes) {
                 System.arraycopy(codes, 0, state, firstRow * width, codes.length);
             }
