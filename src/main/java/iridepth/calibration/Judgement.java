@@ -7,25 +7,29 @@ import java.util.List;
 import java.util.stream.IntStream;
 import org.apache.commons.math3.distribution.ChiSquaredDistribution;
 import org.apache.commons.math3.linear.Array2DRowRealMatrix;
-import org.apache.commons.math3.linear.EigenDecomposition;
+import org.apache.commons.math3.linear.SingularValueDecomposition;
 
 /** Judges a fit: residuals, chi-square, leave-one-out errors, condition. */
 final class Judgement {
     /** Reach of the curve around a step on which it is read when left out, nm. */
     private static final double REACH_NM = 40;
+    /** Ratio of singular values below which rounding decides. */
+    private static final double SMALLEST_RATIO = 1e-14;
 
     private final FitInput input;
     private final Observations data;
     private final Mixture mixture;
     private final SensorPrior prior;
+    private final List<SensorPrior> priors;
     private final NoiseLevel level;
 
-    Judgement(FitInput input, Observations data, Mixture mixture, SensorPrior prior, NoiseLevel level) {
+    Judgement(FitInput input, Observations data, Mixture mixture, SensorPrior prior, NoiseLevel level, List<SensorPrior> priors) {
         this.input = input;
         this.data = data;
         this.mixture = mixture;
         this.prior = prior;
         this.level = level;
+        this.priors = priors;
     }
 
     FitFigures figures(double[] aperture, double apertureStated, List<NoiseLevel> levels) {
@@ -71,7 +75,9 @@ final class Judgement {
         double thickest = input.steps().stream().mapToDouble(StepSignal::thicknessNm).max().orElse(0);
         return IntStream.range(0, input.steps().size()).parallel().mapToObj(j -> {
             StepSignal step = input.steps().get(j);
-            Mixture without = Mixture.of(List.of(LaplaceFit.of(data.withoutStep(j), prior, level)), new double[1]);
+            Observations others = data.withoutStep(j);
+            List<Posterior> fits = priors.stream().map(p -> LaplaceFit.of(others, p, level)).toList();
+            Mixture without = Mixture.of(fits, new double[fits.size()]);
             ResponseModel model = new ResponseModel(input.channels(), input.carriers(), without.mean(), input.stack(),
                     input.view());
             ThicknessRange near = new ThicknessRange(Math.max(0, step.thicknessNm() - REACH_NM), step.thicknessNm() + REACH_NM);
@@ -103,8 +109,8 @@ final class Judgement {
             }
             white[a] = noise.forward(column);
         }
-        double[] values = new EigenDecomposition(new Array2DRowRealMatrix(white)).getRealEigenvalues();
-        double least = Math.max(values[values.length - 1], 1e-300);
+        double[] values = new SingularValueDecomposition(new Array2DRowRealMatrix(white)).getSingularValues();
+        double least = Math.max(values[values.length - 1], values[0] * SMALLEST_RATIO);
         return Math.sqrt(values[0] / least);
     }
 }

@@ -4,6 +4,7 @@ import iridepth.colour.Light;
 import iridepth.colour.Xyz;
 import iridepth.curve.ColourCurve;
 import iridepth.curve.EffectiveResponses;
+import iridepth.photo.ChannelNoise;
 import iridepth.photo.Encoding;
 import iridepth.photo.NoiseModel;
 import iridepth.spectrum.Grid;

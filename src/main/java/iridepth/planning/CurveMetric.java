@@ -1,6 +1,7 @@
 package iridepth.planning;
 
 import iridepth.curve.ColourCurve;
+import iridepth.photo.ChannelNoise;
 
 /**
  * Distances in channel space as a reader of photos weighs them: around each sample of a colour curve

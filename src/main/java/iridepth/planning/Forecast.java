@@ -1,6 +1,7 @@
 package iridepth.planning;
 
 import iridepth.curve.ColourCurve;
+import iridepth.photo.ChannelNoise;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;

@@ -7,6 +7,7 @@ import iridepth.curve.ThicknessRange;
 import iridepth.optics.Reflectance;
 import iridepth.optics.Stack;
 import iridepth.optics.View;
+import iridepth.photo.ChannelNoise;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;

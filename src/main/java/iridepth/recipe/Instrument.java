@@ -15,6 +15,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
+import java.util.Optional;
 
 /**
  * A recipe made ready to read photos: dark, flat, noise, colour curve and hashes of the recipe's own files. Each is made when
@@ -23,6 +24,7 @@ import java.util.Map;
  */
 public final class Instrument {
     private final Recipe recipe;
+    private final Optional<Path> calibration;
     /** Hashes are made beside the set-up, not before or after it, hence a lock of their own. */
     private final Object hashing = new Object();
     private Map<String, String> hashes;
@@ -38,13 +40,23 @@ public final class Instrument {
         }
     }
 
-    private Instrument(Recipe recipe) {
+    private Instrument(Recipe recipe, Optional<Path> calibration) {
         this.recipe = recipe;
+        this.calibration = calibration;
     }
 
     /** An instrument by a recipe; reads no photo yet. */
     public static Instrument of(Recipe recipe) {
-        return new Instrument(recipe);
+        return new Instrument(recipe, Optional.empty());
+    }
+
+    /**
+     * An instrument by a recipe with a calibration that has been made before.
+     *
+     * @param calibration the calibration's file or result folder
+     */
+    public static Instrument of(Recipe recipe, Path calibration) {
+        return new Instrument(recipe, Optional.of(calibration));
     }
 
     /** The recipe. */
@@ -95,12 +107,24 @@ public final class Instrument {
         Encoding encoding = rig().encoding(photo);
         Channels wanted = Channels.of(photo, encoding);
         if (!wanted.equals(channels)) {
-            Setup made = Setup.of(rig(), photo);
+            Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
+                    : Setup.of(recipe, CalibrationFile.read(calibration.get(), recipe));
             reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;
         }
         return setup;
+    }
+
+    /**
+     * The set-up for one photo: where the recipe has steps, and no calibration made before is given, refined on the films that the
+     * photo itself shows.
+     *
+     * @throws RecipeException if the recipe's steps cannot be used
+     */
+    public Setup setup(SignalSource photo) {
+        Setup general = setup(photo.info());
+        return calibration.isPresent() ? general : general.refined(rig(), photo);
     }
 
     /** The reader of films for a photo, on the curve of {@link #setup}. */

@@ -13,6 +13,7 @@ import iridepth.optics.View;
 import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.SignalSource;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
 import java.util.List;
@@ -42,7 +43,36 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
                 : calibrated(rig, photo);
     }
 
+    /** The set-up with a calibration that has been made before. */
+    public static Setup of(Recipe recipe, Calibration calibration) {
+        ColourCurve curve = calibration.curve(recipe.range(), recipe.range().step(recipe.stack()));
+        return new Setup(calibration.view(), curve, Optional.of(calibration));
+    }
+
     private static Setup calibrated(Rig rig, PhotoInfo photo) {
+        Recipe recipe = rig.recipe();
+        FitInput input = input(rig, photo);
+        try {
+            return of(recipe, ResponseFit.fit(input));
+        } catch (IllegalArgumentException e) {
+            throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
+        }
+    }
+
+    /**
+     * This set-up with its calibration refined on the films that a photo shows, or itself where there is no calibration or nothing
+     * to refine it on.
+     */
+    public Setup refined(Rig rig, SignalSource photo) {
+        if (calibration.isEmpty()) {
+            return this;
+        }
+        List<StepSignal> films = PhotoFilms.gather(curve, photo, rig.recipe().excluded());
+        Calibration better = ResponseFit.refine(input(rig, photo.info()), calibration.get(), films);
+        return better == calibration.get() ? this : of(rig.recipe(), better);
+    }
+
+    private static FitInput input(Rig rig, PhotoInfo photo) {
         Recipe recipe = rig.recipe();
         CameraSpec camera = recipe.camera();
         View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
@@ -54,12 +84,7 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
             if (recipe.inputs().isPresent()) {
                 input = input.withInputs(recipe.inputs().get());
             }
-            if (camera.sensitivities() != null) {
-                input = input.withSensitivities(sensitivities(recipe, photo));
-            }
-            Calibration calibration = ResponseFit.fit(input);
-            ColourCurve curve = calibration.curve(recipe.range(), recipe.range().step(recipe.stack()));
-            return new Setup(calibration.view(), curve, Optional.of(calibration));
+            return camera.sensitivities() == null ? input : input.withSensitivities(sensitivities(recipe, photo));
         } catch (IllegalArgumentException e) {
             throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
         }

@@ -1,9 +1,7 @@
-package iridepth.planning;
+package iridepth.photo;
 
-import iridepth.photo.Encoding;
-import iridepth.photo.NoiseModel;
 
-/** The noise to expect of a signal on the scale of a colour curve. */
+/** The noise to expect of linear signals on a scale of their own, such as one on which a perfect reflector gives 1. */
 @FunctionalInterface
 public interface ChannelNoise {
     /** Variance that stands for 'tells nothing': that of a channel at the end of its scale. */

@@ -1,0 +1,140 @@
+package iridepth.calibration;
+
+import iridepth.optics.Reflectance;
+import iridepth.spectrum.Grid;
+import iridepth.spectrum.Spectrum;
+import java.util.List;
+import java.util.stream.IntStream;
+
+/**
+ * A rig as a calibration sees it before any photo: signals at evenly spaced thicknesses, and how they change with the logarithms
+ * of the bumps' weights and of the glare around those of a supposed sensor.
+ *
+ * @param input      the rig
+ * @param weights    weights of the bumps channel by channel, each channel's glare behind its weights
+ * @param thickness  thicknesses, nm
+ * @param signal     [thickness][channel], a perfect reflector's being 1
+ * @param slope      its derivative by thickness, 1/nm
+ * @param bend       its second derivative, 1/nm^2
+ * @param rows       derivatives of the signals by the logarithms, [thickness][channel][parameter]
+ */
+record LinearRig(FitInput input, double[] weights, double[] thickness, double[][] signal, double[][] slope, double[][] bend,
+                 double[][][] rows) {
+    static final int WIDTH = Bumps.COUNT + 1;
+    private static final double BEND_STEP_NM = 0.5;
+
+    /** The rig with a supposed sensor, at {@code size} thicknesses. */
+    static LinearRig of(FitInput input, List<Spectrum> supposed, double fromNm, double stepNm, int size) {
+        return at(input, weights(input, supposed), fromNm, stepNm, size);
+    }
+
+    /** The same weights before other inputs. */
+    LinearRig moved(FitInput other) {
+        double step = thickness.length > 1 ? thickness[1] - thickness[0] : 1;
+        return at(other, weights, thickness[0], step, thickness.length);
+    }
+
+    /** Weights that follow the sensitivities, with the generic floor, scaled for a perfect reflector; the usual glare. */
+    private static double[] weights(FitInput input, List<Spectrum> supposed) {
+        List<Spectrum> carriers = input.carriers();
+        double[] weights = new double[carriers.size() * WIDTH];
+        double[] design = new double[Bumps.COUNT];
+        for (int c = 0; c < carriers.size(); c++) {
+            double[] lobe = lobe(supposed.get(c));
+            Bumps.project(carriers.get(c).toArray(), design);
+            double white = 0;
+            for (int k = 0; k < Bumps.COUNT; k++) {
+                white += design[k] * (lobe[k] + SensorPrior.FLOOR);
+            }
+            for (int k = 0; k < Bumps.COUNT; k++) {
+                weights[c * WIDTH + k] = (lobe[k] + SensorPrior.FLOOR) / white;
+            }
+            weights[c * WIDTH + Bumps.COUNT] = SensorPrior.GLARE * 0.3;
+        }
+        return weights;
+    }
+
+    /** A sensitivity at the bumps, 1 at its highest. */
+    static double[] lobe(Spectrum sensitivity) {
+        double[] lobe = new double[Bumps.COUNT];
+        double most = 0;
+        for (int k = 0; k < lobe.length; k++) {
+            int i = (int) Math.round(Bumps.centre(k)) - Grid.FIRST_NM;
+            lobe[k] = Math.max(0, sensitivity.at(Math.max(0, Math.min(Grid.SIZE - 1, i))));
+            most = Math.max(most, lobe[k]);
+        }
+        for (int k = 0; k < lobe.length; k++) {
+            lobe[k] /= most;
+        }
+        return lobe;
+    }
+
+    private static LinearRig at(FitInput input, double[] weights, double fromNm, double stepNm, int size) {
+        int channels = input.channels().size();
+        Reflectance film = Reflectance.of(input.stack(), input.view());
+        double[][] r = new double[Grid.SIZE][size];
+        double[][] dr = new double[Grid.SIZE][size];
+        double[][] beyond = new double[Grid.SIZE][size];
+        IntStream.range(0, Grid.SIZE).parallel().forEach(i -> {
+            film.sweep(i, fromNm + BEND_STEP_NM, stepNm, r[i], beyond[i]);
+            film.sweep(i, fromNm, stepNm, r[i], dr[i]);
+        });
+        double[][] response = responses(input, weights, channels);
+        double[] thickness = new double[size];
+        double[][] signal = new double[size][channels];
+        double[][] slope = new double[size][channels];
+        double[][] bend = new double[size][channels];
+        double[][][] rows = new double[size][channels][];
+        for (int t = 0; t < size; t++) {
+            thickness[t] = fromNm + t * stepNm;
+            double[] spectrum = new double[Grid.SIZE];
+            for (int c = 0; c < channels; c++) {
+                double next = 0;
+                for (int i = 0; i < Grid.SIZE; i++) {
+                    spectrum[i] = r[i][t];
+                    slope[t][c] += response[c][i] * dr[i][t];
+                    next += response[c][i] * beyond[i][t];
+                }
+                bend[t][c] = (next - slope[t][c]) / BEND_STEP_NM;
+            }
+            rows[t] = rows(input, weights, spectrum, signal[t]);
+        }
+        return new LinearRig(input, weights, thickness, signal, slope, bend, rows);
+    }
+
+    private static double[][] responses(FitInput input, double[] weights, int channels) {
+        List<Spectrum> carriers = input.carriers();
+        double[][] response = new double[channels][];
+        for (int c = 0; c < channels; c++) {
+            double[] own = new double[Bumps.COUNT];
+            System.arraycopy(weights, c * WIDTH, own, 0, Bumps.COUNT);
+            response[c] = Bumps.sum(own);
+            for (int i = 0; i < Grid.SIZE; i++) {
+                response[c][i] *= carriers.get(c).at(i);
+            }
+        }
+        return response;
+    }
+
+    /** Derivatives of the signals of a surface of given reflectance, [channel][parameter]; the signals go into the array. */
+    static double[][] rows(FitInput input, double[] weights, double[] reflectance, double[] signal) {
+        List<Spectrum> carriers = input.carriers();
+        double[][] rows = new double[carriers.size()][carriers.size() * WIDTH];
+        double[] product = new double[Grid.SIZE];
+        double[] design = new double[Bumps.COUNT];
+        for (int c = 0; c < rows.length; c++) {
+            for (int i = 0; i < Grid.SIZE; i++) {
+                product[i] = carriers.get(c).at(i) * reflectance[i];
+            }
+            Bumps.project(product, design);
+            signal[c] = 0;
+            for (int k = 0; k < Bumps.COUNT; k++) {
+                rows[c][c * WIDTH + k] = design[k] * weights[c * WIDTH + k];
+                signal[c] += rows[c][c * WIDTH + k];
+            }
+            rows[c][c * WIDTH + Bumps.COUNT] = weights[c * WIDTH + Bumps.COUNT];
+            signal[c] += weights[c * WIDTH + Bumps.COUNT];
+        }
+        return rows;
+    }
+}
