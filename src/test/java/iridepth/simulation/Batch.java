@@ -7,13 +7,15 @@ import java.util.ArrayList;
 import java.util.List;
 
 /**
- * Photographs of many samples before one rig, as files in one folder beside a recipe: {@code photos/part-1.tif} and so on.
+ * Photographs of many samples before one rig, as files in one folder beside a recipe: {@code photos/part-1.tif} and so
+ * on, and all in {@code stack.tiff}.
  *
  * @param recipe the recipe's file
  * @param photos the folder of the photographs
+ * @param stack the same photographs as pages of one file
  * @param truth nm per pixel of each photograph, NaN where a reading should give none
  */
-public record Batch(Path recipe, Path photos, List<double[]> truth) {
+public record Batch(Path recipe, Path photos, Path stack, List<double[]> truth) {
 
     /**
      * Writes a batch.
@@ -32,11 +34,24 @@ public record Batch(Path recipe, Path photos, List<double[]> truth) {
         double least = fields.stream().mapToDouble(f -> f.range()[0]).min().orElse(0);
         double most = fields.stream().mapToDouble(f -> f.range()[1]).max().orElse(0);
         Shot shot = Shot.of(scene.rig(), scene.stack(), scene.flatStack(), Math.floor(least), Math.ceil(most) + 1);
+        List<Photograph> taken = new ArrayList<>();
         for (int i = 0; i < fields.size(); i++) {
-            TiffFile.write(photos.resolve("part-" + (i + 1) + ".tif"), shot.photo(fields.get(i), scene.seed() + 10 + i));
+            taken.add(shot.photo(fields.get(i), scene.seed() + 10 + i));
+            TiffFile.write(photos.resolve("part-" + (i + 1) + ".tif"), taken.get(i));
             truth.add(fields.get(i).truth());
         }
-        return new Batch(folder.recipe(), photos, truth);
+        Path stack = dir.resolve("stack.tiff");
+        TiffFile.write(stack, taken.toArray(Photograph[]::new));
+        return new Batch(folder.recipe(), photos, stack, truth);
+    }
+
+    /** A draining soap film, frame by frame, before a camera of known sensitivities. */
+    public static Batch soap(Path dir, int frames) throws IOException {
+        List<Scene> scenes = Fields.drainingSoap(frames);
+        Scene s = scenes.get(0);
+        Scene known = new Scene("Draining soap film", s.rig(), s.stack(), s.flatStack(), s.rangeNm(), null, s.field(),
+                s.believedLamp(), s.believedView(), s.seed());
+        return write(dir, known, scenes.stream().map(Scene::field).toList(), "");
     }
 
     /** Oxide of about 100 nm on small pieces of silicon, tilted by 4 nm across, before a camera of known sensitivities. */

@@ -151,6 +151,7 @@ class LotCommandTest {
         }
         Files.delete(folder.resolve("truth.tif"));
         Files.delete(folder.resolve("limit.tif"));
+        Files.delete(batch.stack());
         Answer.to("lot", "--recipe", batch.recipe(), "--out", folder.resolve("lot"), folder);
         assertEquals(List.of("part-1.tif", "part-2.tif"), CsvFile.read(folder.resolve("lot/lot.csv")).texts("photo"));
     }
