@@ -28,6 +28,43 @@ public final class Calibration {
         this.figures = figures;
     }
 
+    /**
+     * A calibration from its data.
+     *
+     * @param stack the stack with the film that it is to serve
+     * @throws IllegalArgumentException if the data are for another stack or do not fit together
+     */
+    public static Calibration of(CalibrationData data, Stack stack) {
+        if (!data.stack().equals(stack.toString())) {
+            throw new IllegalArgumentException("it was made with " + data.stack() + ", not " + stack + "; calibrate again");
+        }
+        int parameters = data.model().channels().size() * (Bumps.COUNT + 1);
+        boolean fits = data.model().parameters().length == parameters && data.model().carriers().length == data.model().channels().size();
+        for (double[] factor : data.factors()) {
+            fits &= factor.length == parameters;
+        }
+        for (CalibrationData.Moved moved : data.variations()) {
+            fits &= moved.model().parameters().length == parameters;
+        }
+        if (!fits) {
+            throw new IllegalArgumentException("its numbers do not fit together; calibrate again");
+        }
+        List<Variation> variations = data.variations().stream()
+                .map(v -> new Variation(v.input(), CalibrationData.model(v.model(), stack))).toList();
+        return new Calibration(CalibrationData.model(data.model(), stack), data.factors(), variations, data.figures());
+    }
+
+    /**
+     * This calibration as plain numbers, for a file.
+     *
+     * @param flat notation of the flat's stack, or empty
+     */
+    public CalibrationData data(String flat) {
+        List<CalibrationData.Moved> moved = variations.stream()
+                .map(v -> new CalibrationData.Moved(v.input(), CalibrationData.of(v.moved(), model.stack()))).toList();
+        return new CalibrationData(model.stack().toString(), flat, CalibrationData.of(model, model.stack()), factors, moved, figures);
+    }
+
     /** The effective responses E_c: relative to the flat where there is one, glare apart. */
     public EffectiveResponses responses() {
         return model.responses();

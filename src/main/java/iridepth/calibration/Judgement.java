@@ -18,14 +18,16 @@ final class Judgement {
     private final Observations data;
     private final Mixture mixture;
     private final SensorPrior prior;
+    private final List<SensorPrior> priors;
     private final NoiseLevel level;
 
-    Judgement(FitInput input, Observations data, Mixture mixture, SensorPrior prior, NoiseLevel level) {
+    Judgement(FitInput input, Observations data, Mixture mixture, SensorPrior prior, NoiseLevel level, List<SensorPrior> priors) {
         this.input = input;
         this.data = data;
         this.mixture = mixture;
         this.prior = prior;
         this.level = level;
+        this.priors = priors;
     }
 
     FitFigures figures(double[] aperture, double apertureStated, List<NoiseLevel> levels) {
@@ -71,7 +73,9 @@ final class Judgement {
         double thickest = input.steps().stream().mapToDouble(StepSignal::thicknessNm).max().orElse(0);
         return IntStream.range(0, input.steps().size()).parallel().mapToObj(j -> {
             StepSignal step = input.steps().get(j);
-            Mixture without = Mixture.of(List.of(LaplaceFit.of(data.withoutStep(j), prior, level)), new double[1]);
+            Observations others = data.withoutStep(j);
+            List<Posterior> fits = priors.stream().map(p -> LaplaceFit.of(others, p, level)).toList();
+            Mixture without = Mixture.of(fits, new double[fits.size()]);
             ResponseModel model = new ResponseModel(input.channels(), input.carriers(), without.mean(), input.stack(),
                     input.view());
             ThicknessRange near = new ThicknessRange(Math.max(0, step.thicknessNm() - REACH_NM), step.thicknessNm() + REACH_NM);

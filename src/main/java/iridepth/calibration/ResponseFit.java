@@ -53,7 +53,7 @@ public final class ResponseFit {
                 corrected.view());
         double[][] factors = mixture.factors();
         List<Variation> variations = variations(corrected, aperture[1], bestPrior, bestLevel, mixture);
-        FitFigures figures = new Judgement(corrected, data, mixture, bestPrior, bestLevel).figures(aperture,
+        FitFigures figures = new Judgement(corrected, data, mixture, bestPrior, bestLevel, priors.stream().distinct().toList()).figures(aperture,
                 Aperture.of(input.view()), levels);
         return new Calibration(model, factors, variations, figures);
     }
@@ -65,17 +65,10 @@ public final class ResponseFit {
     /** The generic lobe of each channel with the largest evidence; a known sensitivity needs none. */
     private double[][] lobes(Observations data) {
         double[][] best = new double[data.channels()][];
-        double[] flat = new double[Bumps.COUNT];
-        Arrays.fill(flat, 1);
+        List<double[]> lobes = SensorPrior.generic();
         for (int c = 0; c < best.length; c++) {
-            best[c] = flat;
+            best[c] = SensorPrior.level();
             if (input.sensitivities().isEmpty()) {
-                List<double[]> lobes = new ArrayList<>();
-                lobes.add(flat);
-                for (double centre = 400; centre <= 720; centre += 20) {
-                    lobes.add(SensorPrior.lobe(centre, 25));
-                    lobes.add(SensorPrior.lobe(centre, 40));
-                }
                 Observations own = data.channel(c);
                 double[] evidence = lobes.parallelStream().mapToDouble(lobe -> LaplaceFit.of(own, new SensorPrior(
                         new double[][] {lobe}, midPrior()[0], midPrior()[1], 30, 0), nominal()).evidence()).toArray();

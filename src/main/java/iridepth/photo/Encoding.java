@@ -82,6 +82,11 @@ public final class Encoding {
                 Optional.of(Matrix3.times(adaptation, Srgb.TO_XYZ)), Optional.of(adaptation));
     }
 
+    /** @return the encoding of a colour-managed photo: by its embedded profile, or sRGB if it has none */
+    public static Encoding managed(PhotoInfo photo) {
+        return photo.profile().map(profile -> of(profile, photo.bitDepth())).orElseGet(() -> srgb(photo.bitDepth()));
+    }
+
     /**
      * The encoding that an ICC profile describes.
      *

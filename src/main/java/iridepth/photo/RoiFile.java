@@ -3,10 +3,13 @@ package iridepth.photo;
 import ij.gui.Line;
 import ij.gui.PointRoi;
 import ij.gui.Roi;
+import ij.gui.ShapeRoi;
 import ij.io.RoiDecoder;
 import ij.process.FloatPolygon;
 import ij.process.ImageProcessor;
 import java.awt.Rectangle;
+import java.awt.Shape;
+import java.awt.geom.AffineTransform;
 import java.io.ByteArrayInputStream;
 import java.io.IOException;
 import java.nio.file.Files;
@@ -109,6 +112,12 @@ public record RoiFile(String name, Roi roi) {
     /** @return the smallest rectangle of pixels around an area; parts of it may lie outside the photo */
     public Rectangle bounds() {
         return roi.getBounds();
+    }
+
+    /** @return the outline of an area, the first pixel of the photo reaching from 0 to 1 */
+    public Shape outline() {
+        Rectangle bounds = bounds();
+        return AffineTransform.getTranslateInstance(bounds.x, bounds.y).createTransformedShape(new ShapeRoi(roi).getShape());
     }
 
     /**

@@ -18,10 +18,12 @@ public final class FilmReader {
     private static final int BAND = 64;
     private final ColourCurve curve;
     private final List<Region> excluded;
+    private final boolean orderChoice;
 
-    private FilmReader(ColourCurve curve, List<Region> excluded) {
+    private FilmReader(ColourCurve curve, List<Region> excluded, boolean orderChoice) {
         this.curve = curve;
         this.excluded = List.copyOf(excluded);
+        this.orderChoice = orderChoice;
     }
 
     /**
@@ -30,7 +32,12 @@ public final class FilmReader {
      * @param excluded regions to leave out
      */
     public static FilmReader of(ColourCurve curve, List<Region> excluded) {
-        return new FilmReader(curve, excluded);
+        return new FilmReader(curve, excluded, true);
+    }
+
+    /** This reader with each pixel on its own: it takes its likeliest thickness, whatever its neighbours say of the order. */
+    public FilmReader withoutOrderChoice() {
+        return new FilmReader(curve, excluded, false);
     }
 
     /**
@@ -62,14 +69,14 @@ public final class FilmReader {
             int top = y;
             ThreadLocal<RowReader> readers = ThreadLocal.withInitial(() -> new RowReader(photo, excluded, index));
             IntStream.range(0, count).parallel().forEach(row -> rows[top + row] = readers.get().read(counts, row, top + row));
-            IntStream.range(0, 2).parallel().forEach(i -> {
+            IntStream.range(0, orderChoice ? 2 : 0).parallel().forEach(i -> {
                 for (int row = 0; row < count; row++) {
                     sweeps[i].advance(rows[top + row], rows[top + row].message(i));
                 }
             });
             progress.accept((long) (y + count) * width);
         }
-        IntStream.range(2, 4).parallel().forEach(i -> {
+        IntStream.range(2, orderChoice ? 4 : 2).parallel().forEach(i -> {
             for (int row = height - 1; row >= 0; row--) {
                 sweeps[i].advance(rows[row], rows[row].message(i));
             }

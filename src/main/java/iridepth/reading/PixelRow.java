@@ -59,7 +59,11 @@ final class PixelRow {
 
     /** Cost and messages of an open candidate: twice its negative log likelihood by what all around it say. */
     float total(int open) {
-        return cost[open] + messages[0][open] + messages[1][open] + messages[2][open] + messages[3][open];
+        float total = cost[open];
+        for (float[] message : messages) {
+            total += message == null ? 0 : message[open];
+        }
+        return total;
     }
 
     /** Bytes that it takes, about. */

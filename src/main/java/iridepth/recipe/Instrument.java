@@ -14,6 +14,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
+import java.util.Optional;
 
 /**
  * A recipe made ready to read photos: dark, flat, noise, colour curve and hashes of the recipe's own files. Each is made when
@@ -22,6 +23,7 @@ import java.util.Map;
  */
 public final class Instrument {
     private final Recipe recipe;
+    private final Optional<Path> calibration;
     /** Hashes are made beside the set-up, not before or after it, hence a lock of their own. */
     private final Object hashing = new Object();
     private Map<String, String> hashes;
@@ -37,13 +39,23 @@ public final class Instrument {
         }
     }
 
-    private Instrument(Recipe recipe) {
+    private Instrument(Recipe recipe, Optional<Path> calibration) {
         this.recipe = recipe;
+        this.calibration = calibration;
     }
 
     /** An instrument by a recipe; reads no photo yet. */
     public static Instrument of(Recipe recipe) {
-        return new Instrument(recipe);
+        return new Instrument(recipe, Optional.empty());
+    }
+
+    /**
+     * An instrument by a recipe with a calibration that has been made before.
+     *
+     * @param calibration the calibration's file or result folder
+     */
+    public static Instrument of(Recipe recipe, Path calibration) {
+        return new Instrument(recipe, Optional.of(calibration));
     }
 
     /** The recipe. */
@@ -78,7 +90,8 @@ public final class Instrument {
         Encoding encoding = rig().encoding(photo);
         Channels wanted = Channels.of(photo, encoding);
         if (!wanted.equals(channels)) {
-            Setup made = Setup.of(rig(), photo);
+            Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
+                    : Setup.of(recipe, CalibrationFile.read(calibration.get(), recipe));
             reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;

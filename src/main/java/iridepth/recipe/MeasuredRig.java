@@ -24,22 +24,23 @@ public record MeasuredRig(ColourCurve curve, ChannelNoise noise, NoiseModel nois
     /**
      * Reads what a recipe names.
      *
+     * @param known noise of the camera in fractions of full scale; empty to take it from the steps or the flat, which is right
+     *              only as far as these are single exposures like the part's, not means of several
      * @return empty where the recipe names no flat, or one of its photos has not been taken yet, or nothing fixes the responses
      * @throws iridepth.photo.PhotoException if a photo that is there cannot be used
      */
-    public static Optional<MeasuredRig> of(Recipe recipe) {
+    public static Optional<MeasuredRig> of(Recipe recipe, Optional<NoiseModel> known) {
         CameraSpec camera = recipe.camera();
         boolean open = !camera.isColourManaged() && camera.sensitivities() == null && camera.steps().isEmpty();
         if (open || camera.flat() == null || !Stream.concat(Stream.of(camera.flat(), camera.dark()), camera.steps().stream()
                 .map(CameraSpec.Step::image)).allMatch(file -> file == null || Files.exists(file))) {
             return Optional.empty();
         }
-        // Steps are taken like the part; a flat is often the mean of several exposures, and quieter.
         Path like = camera.steps().isEmpty() ? camera.flat() : camera.steps().get(0).image();
         try (PhotoFile photo = PhotoFile.open(like)) {
             Rig rig = Rig.of(recipe);
             Encoding encoding = rig.encoding(photo.info());
-            NoiseModel noise = rig.signal(photo).noise();
+            NoiseModel noise = known.orElseGet(() -> rig.signal(photo).noise());
             ShadingField flat = rig.flat().orElseThrow();
             double[] level = new double[photo.info().channels()];
             Arrays.setAll(level, flat::mean);

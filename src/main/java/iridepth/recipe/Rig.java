@@ -1,7 +1,6 @@
 package iridepth.recipe;
 
 import iridepth.photo.Encoding;
-import iridepth.photo.IccProfile;
 import iridepth.photo.NoiseModel;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoFile;
@@ -49,11 +48,10 @@ public record Rig(Recipe recipe, Optional<ShadingField> dark, Optional<ShadingFi
     }
 
     private static Encoding encoding(CameraSpec camera, PhotoInfo photo) {
-        Optional<IccProfile> profile = photo.profile();
         if (camera.isColourManaged()) {
-            return profile.isPresent() ? Encoding.of(profile.get(), photo.bitDepth()) : Encoding.srgb(photo.bitDepth());
+            return Encoding.managed(photo);
         }
-        if (profile.isPresent()) {
+        if (photo.profile().isPresent()) {
             throw new PhotoException(photo.path() + ": it embeds a colour profile, but the recipe says camera.encoding = \"linear\"; "
                     + "set \"srgb\" to honour the profile, or save the sensor's linear values without one");
         }

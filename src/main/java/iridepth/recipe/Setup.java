@@ -42,6 +42,12 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
                 : calibrated(rig, photo);
     }
 
+    /** The set-up with a calibration that has been made before. */
+    public static Setup of(Recipe recipe, Calibration calibration) {
+        ColourCurve curve = calibration.curve(recipe.range(), recipe.range().step(recipe.stack()));
+        return new Setup(calibration.view(), curve, Optional.of(calibration));
+    }
+
     private static Setup calibrated(Rig rig, PhotoInfo photo) {
         Recipe recipe = rig.recipe();
         CameraSpec camera = recipe.camera();
@@ -57,9 +63,7 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
             if (camera.sensitivities() != null) {
                 input = input.withSensitivities(sensitivities(recipe, photo));
             }
-            Calibration calibration = ResponseFit.fit(input);
-            ColourCurve curve = calibration.curve(recipe.range(), recipe.range().step(recipe.stack()));
-            return new Setup(calibration.view(), curve, Optional.of(calibration));
+            return of(recipe, ResponseFit.fit(input));
         } catch (IllegalArgumentException e) {
             throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
         }

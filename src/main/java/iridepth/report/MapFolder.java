@@ -23,10 +23,11 @@ import java.util.Optional;
 public final class MapFolder implements AutoCloseable {
     static final String THICKNESS = "thickness.tif";
     static final String UNCERTAINTY = "uncertainty.tif";
+    static final String STATE = "state.tif";
     /** The two parts of the uncertainty against thickness. */
     static final String UNCERTAINTY_PARTS = "uncertainty.csv";
     /** What every map's folder holds beside its summary. */
-    static final List<String> FILES = List.of(THICKNESS, UNCERTAINTY, "state.tif", "thickness.png", "histogram.csv",
+    static final List<String> FILES = List.of(THICKNESS, UNCERTAINTY, STATE, "thickness.png", "histogram.csv",
             "histogram.png", UNCERTAINTY_PARTS);
 
     private final ResultFolder folder;
@@ -49,7 +50,7 @@ public final class MapFolder implements AutoCloseable {
         this.pixelUm = pixelUm;
         this.thickness = MapTiff.nanometres(folder.file(THICKNESS), width, height, pixelUm);
         this.uncertainty = MapTiff.nanometres(folder.file(UNCERTAINTY), width, height, pixelUm);
-        this.state = MapTiff.states(folder.file("state.tif"), width, height, pixelUm);
+        this.state = MapTiff.states(folder.file(STATE), width, height, pixelUm);
         this.cells = MapCells.of(width, height, MapFigure.MOST_CELLS);
         this.page = PageMap.of(width, height, pixelUm, 0);
         this.distribution = Distribution.over(fromNm, toNm);

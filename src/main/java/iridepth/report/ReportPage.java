@@ -1,15 +1,10 @@
 package iridepth.report;
 
 import java.io.IOException;
-import java.io.InputStream;
-import java.io.UncheckedIOException;
 import java.io.Writer;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
-import java.security.MessageDigest;
-import java.security.NoSuchAlgorithmException;
-import java.util.Base64;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
@@ -39,7 +34,7 @@ public final class ReportPage {
         content.map().complete();
         Map<String, String> parts = parts(content);
         try (Writer out = Files.newBufferedWriter(html, StandardCharsets.UTF_8)) {
-            String template = resource("page.html");
+            String template = PageResource.text("page.html");
             Matcher place = PLACE.matcher(template);
             int done = 0;
             while (place.find()) {
@@ -55,11 +50,11 @@ public final class ReportPage {
     private static Map<String, String> parts(PageContent content) {
         PageParts page = new PageParts(content);
         PageData data = new PageData(content);
-        String style = resource("page.css");
+        String style = PageResource.text("page.css");
         String script = script();
         Map<String, String> parts = new LinkedHashMap<>();
-        parts.put("policy", "default-src 'none'; img-src data:; style-src '" + hash(style) + "'; script-src '" + hash(script)
-                + "'; base-uri 'none'; form-action 'none'");
+        parts.put("policy", "default-src 'none'; img-src data:; style-src '" + PageResource.hash(style) + "'; script-src '"
+                + PageResource.hash(script) + "'; base-uri 'none'; form-action 'none'");
         parts.put("style", style);
         parts.put("script", script);
         parts.put("title", Html.escape(content.title()));
@@ -97,24 +92,7 @@ public final class ReportPage {
     /** The script of all pages; its parts share one scope of their own. */
     private static String script() {
         StringBuilder script = new StringBuilder("(() => {\n'use strict';\n");
-        SCRIPTS.forEach(name -> script.append(resource(name)).append('\n'));
+        SCRIPTS.forEach(name -> script.append(PageResource.text(name)).append('\n'));
         return script.append("})();\n").toString();
-    }
-
-    private static String hash(String text) {
-        try {
-            byte[] digest = MessageDigest.getInstance("SHA-256").digest(text.getBytes(StandardCharsets.UTF_8));
-            return "sha256-" + Base64.getEncoder().encodeToString(digest);
-        } catch (NoSuchAlgorithmException e) {
-            throw new IllegalStateException(e);
-        }
-    }
-
-    private static String resource(String name) {
-        try (InputStream in = ReportPage.class.getResourceAsStream(name)) {
-            return new String(in.readAllBytes(), StandardCharsets.UTF_8).replace("\r\n", "\n");
-        } catch (IOException e) {
-            throw new UncheckedIOException(e);
-        }
     }
 }

@@ -102,6 +102,16 @@ public record SavedResult(Path folder, JsonNode summary) {
         return node.asText("");
     }
 
+    /** The thickness below which a percentage of the pixels lies, nm; NaN if the summary does not tell it. */
+    public double percentile(double percent) {
+        for (JsonNode each : summary.path("thickness").path("percentiles")) {
+            if (each.path("percent").asDouble() == percent) {
+                return each.path("value").asDouble(Double.NaN);
+            }
+        }
+        return Double.NaN;
+    }
+
     /** Edge of a pixel in um, NaN if unknown. */
     public double pixelUm() {
         return number("photo", "pixel_um");
@@ -134,6 +144,23 @@ public record SavedResult(Path folder, JsonNode summary) {
                 parts.numbers("systematic_nm"));
         double correlated = number("correlated_pixels");
         return curve.divide(thickness(), map(MapFolder.UNCERTAINTY), correlated > 1 ? correlated : 1);
+    }
+
+    /** The map as a figure. */
+    public MapFigure figure() {
+        NumberImage nm = NumberImage.open(folder.resolve(MapFolder.THICKNESS));
+        NumberImage states = NumberImage.open(folder.resolve(MapFolder.STATE));
+        MapCells cells = MapCells.of(nm.width(), nm.height(), MapFigure.MOST_CELLS);
+        float[] row = new float[nm.width()];
+        byte[] codes = new byte[nm.width()];
+        for (int y = 0; y < nm.height(); y++) {
+            for (int x = 0; x < row.length; x++) {
+                row[x] = nm.at(x, y);
+                codes[x] = (byte) states.at(x, y);
+            }
+            cells.add(y, row, codes);
+        }
+        return MapFigure.of(title(), cells, pixelUm());
     }
 
     private Field map(String name) {

@@ -6,6 +6,7 @@ import iridepth.planning.Camera;
 import iridepth.recipe.CameraSpec;
 import iridepth.recipe.Sensitivities;
 import java.nio.file.Path;
+import java.util.Optional;
 import picocli.CommandLine.Option;
 
 /** A camera on a command line, or as a recipe tells it. */
@@ -30,9 +31,15 @@ final class CameraOptions {
             + "(default: by the recipe's white_reflectance where it has one, or 0.8).")
     private Double exposure;
 
-    /** Whether any option departs from the recipe. */
+    /** Whether an option departs from the recipe's camera, its noise apart. */
     boolean given() {
-        return camera != null || bits != null || fullWell != null || readNoise != null || exposure != null;
+        return camera != null || bits != null || exposure != null;
+    }
+
+    /** The noise that the options or the recipe tell, if they do. */
+    Optional<NoiseModel> known(CameraSpec recipe) {
+        boolean told = fullWell != null || readNoise != null || !Double.isNaN(recipe.fullWell());
+        return told ? Optional.of(noise(recipe)) : Optional.empty();
     }
 
     /**

@@ -17,7 +17,8 @@ import picocli.CommandLine.ScopeType;
         description = "Reads the thickness of a thin transparent film from its interference colour, pixel by pixel.",
         footer = {"", "Exit codes: 0 done; 1 done, and out of tolerance; 2 command line or recipe wrong; 3 an input cannot be "
             + "used; 4 output cannot be written.", "", Iridepth.CAUTION},
-        subcommands = {ChartCommand.class, MapCommand.class, ProfileCommand.class, MaterialsCommand.class, PlanCommand.class})
+        subcommands = {ChartCommand.class, CalibrateCommand.class, MapCommand.class, ProfileCommand.class, MeasureCommand.class,
+            ContoursCommand.class, MaterialsCommand.class, PlanCommand.class})
 public final class Iridepth {
     /** What stands below every result. */
     static final String CAUTION = "An estimate from colour is no certified measurement: check against a reference instrument "

@@ -27,6 +27,10 @@ final class MapCommand implements Callable<Integer> {
     @Option(names = "--out", required = true, paramLabel = "DIR", description = "The result folder.")
     private Path out;
 
+    @Option(names = "--calibration", paramLabel = "DIR", description = "What calibrate wrote, to be taken instead of fitting the "
+            + "recipe's steps anew.")
+    private Path calibration;
+
     @Option(names = "--replace", description = "Replace a result folder that exists.")
     private boolean replace;
 
@@ -35,6 +39,8 @@ final class MapCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
-        return new MapRun(Instrument.of(Recipe.read(recipe)), photo, spec.commandLine().getOut()).write(out, replace);
+        Recipe read = Recipe.read(recipe);
+        Instrument instrument = calibration == null ? Instrument.of(read) : Instrument.of(read, calibration);
+        return new MapRun(instrument, photo, spec.commandLine().getOut()).write(out, replace);
     }
 }

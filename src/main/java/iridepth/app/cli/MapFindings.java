@@ -46,6 +46,7 @@ record MapFindings(Instrument instrument, PhotoInfo info, SignalSource signal, M
         summary.put("program", "iridepth " + Iridepth.Version.number());
         summary.put("title", recipe().title());
         summary.put("photo", photo());
+        summary.put("encoding", recipe().camera().encoding());
         summary.put("stack", recipe().stack().toString());
         summary.put("range_nm", List.of(recipe().range().fromNm(), recipe().range().toNm()));
         Map<String, Object> counts = new LinkedHashMap<>();

@@ -38,7 +38,8 @@ import picocli.CommandLine.Spec;
             "All figures are for single pixels, without the help that map takes from their neighbours. Several --light are "
                 + "compared, each alone and in pairs read jointly; the figure is for the best of them alone. A camera of which "
                 + "nothing is known is taken as a generic sensor with three smooth lobes, and its calibration as one with the "
-                + "films that are proposed. Give a recipe whose flat and steps are photographed, and the plan rests on these.", "",
+                + "films that are proposed. Give a recipe whose flat and steps are photographed, and the plan rests on these; give "
+                + "--full-well too if they are means of several exposures, which are quieter than the part's photo.", "",
             "Examples:",
             "  plan --stack \"air / SiO2 / Si\" --range 0:500 --light 3200K --aperture 0.2 --out plan.png",
             "  plan --stack \"air / SiO2 / Si\" --range 0:1500 --light A --light LED-B4 --light D65",
@@ -133,7 +134,7 @@ final class PlanCommand implements Callable<Integer> {
         String title = String.format(Locale.ROOT, "Plan for %s, %.0f to %.0f nm", film, nm.fromNm(), nm.toNm());
         boolean asGiven = given != null && lights.isEmpty() && stack == null && range == null && !cameraOptions.given()
                 && !viewOptions.given();
-        Optional<MeasuredRig> measured = asGiven ? MeasuredRig.of(given) : Optional.empty();
+        Optional<MeasuredRig> measured = asGiven ? MeasuredRig.of(given, cameraOptions.known(given.camera())) : Optional.empty();
         return measured.isPresent() ? measured(title, given, subject, measured.get()) : supposed(title, given, subject);
     }
 
