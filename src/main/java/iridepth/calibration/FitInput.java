@@ -108,6 +108,13 @@ public record FitInput(List<String> channels, List<Light> lights, List<Spectrum>
         return new FitInput(channels, lights, sensitivities, stack, flatStack, other, range, steps, patches, inputs);
     }
 
+    /** This input with films beside its steps. */
+    FitInput withMore(List<StepSignal> films) {
+        List<StepSignal> all = new ArrayList<>(steps);
+        all.addAll(films);
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, all, patches, inputs);
+    }
+
     /** This input without one of its steps. */
     public FitInput without(int step) {
         List<StepSignal> fewer = new ArrayList<>(steps);

@@ -7,12 +7,14 @@ import java.util.List;
 import java.util.stream.IntStream;
 import org.apache.commons.math3.distribution.ChiSquaredDistribution;
 import org.apache.commons.math3.linear.Array2DRowRealMatrix;
-import org.apache.commons.math3.linear.EigenDecomposition;
+import org.apache.commons.math3.linear.SingularValueDecomposition;
 
 /** Judges a fit: residuals, chi-square, leave-one-out errors, condition. */
 final class Judgement {
     /** Reach of the curve around a step on which it is read when left out, nm. */
     private static final double REACH_NM = 40;
+    /** Ratio of singular values below which rounding decides. */
+    private static final double SMALLEST_RATIO = 1e-14;
 
     private final FitInput input;
     private final Observations data;
@@ -107,8 +109,8 @@ final class Judgement {
             }
             white[a] = noise.forward(column);
         }
-        double[] values = new EigenDecomposition(new Array2DRowRealMatrix(white)).getRealEigenvalues();
-        double least = Math.max(values[values.length - 1], 1e-300);
+        double[] values = new SingularValueDecomposition(new Array2DRowRealMatrix(white)).getSingularValues();
+        double least = Math.max(values[values.length - 1], values[0] * SMALLEST_RATIO);
         return Math.sqrt(values[0] / least);
     }
 }

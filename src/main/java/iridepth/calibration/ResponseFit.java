@@ -38,7 +38,26 @@ public final class ResponseFit {
         return new ResponseFit(input).calibrate();
     }
 
+    /**
+     * Fits anew with films of the photo itself beside the steps: patches whose thickness was read with the first calibration and
+     * is only roughly known, so that they say how the channels go together, while the steps say how thick. The curve must pass
+     * through every colour that the film shows, and a photo shows many more than the steps.
+     *
+     * @param input the input of the first calibration
+     * @param first that calibration; it keeps its figures, which judge it by the steps alone
+     * @param films films of the photo, each with the uncertainty of its reading
+     * @return a calibration that serves this photo better, or the first where there are no films
+     * @throws IllegalArgumentException if the films do not fit the input
+     */
+    public static Calibration refine(FitInput input, Calibration first, List<StepSignal> films) {
+        return films.isEmpty() ? first : new ResponseFit(input.withMore(films)).calibrate(first.figures());
+    }
+
     private Calibration calibrate() {
+        return calibrate(null);
+    }
+
+    private Calibration calibrate(FitFigures known) {
         Observations stated = Observations.of(input);
         prior = new SensorPrior(lobes(stated), midPrior()[0], midPrior()[1], 30, COUPLING);
         double[] aperture = aperture();
@@ -53,7 +72,7 @@ public final class ResponseFit {
                 corrected.view());
         double[][] factors = mixture.factors();
         List<Variation> variations = variations(corrected, aperture[1], bestPrior, bestLevel, mixture);
-        FitFigures figures = new Judgement(corrected, data, mixture, bestPrior, bestLevel, priors.stream().distinct().toList()).figures(aperture,
+        FitFigures figures = known != null ? known : new Judgement(corrected, data, mixture, bestPrior, bestLevel, priors.stream().distinct().toList()).figures(aperture,
                 Aperture.of(input.view()), levels);
         return new Calibration(model, factors, variations, figures);
     }

@@ -99,6 +99,17 @@ public final class Instrument {
         return setup;
     }
 
+    /**
+     * The set-up for one photo: where the recipe has steps, and no calibration made before is given, refined on the films that the
+     * photo itself shows.
+     *
+     * @throws RecipeException if the recipe's steps cannot be used
+     */
+    public Setup setup(SignalSource photo) {
+        Setup general = setup(photo.info());
+        return calibration.isPresent() ? general : general.refined(rig(), photo);
+    }
+
     /** The reader of films for a photo, on the curve of {@link #setup}. */
     public synchronized FilmReader reader(PhotoInfo photo) {
         setup(photo);

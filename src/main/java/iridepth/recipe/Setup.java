@@ -13,6 +13,7 @@ import iridepth.optics.View;
 import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.SignalSource;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
 import java.util.List;
@@ -50,6 +51,29 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
 
     private static Setup calibrated(Rig rig, PhotoInfo photo) {
         Recipe recipe = rig.recipe();
+        FitInput input = input(rig, photo);
+        try {
+            return of(recipe, ResponseFit.fit(input));
+        } catch (IllegalArgumentException e) {
+            throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
+        }
+    }
+
+    /**
+     * This set-up with its calibration refined on the films that a photo shows, or itself where there is no calibration or nothing
+     * to refine it on.
+     */
+    public Setup refined(Rig rig, SignalSource photo) {
+        if (calibration.isEmpty()) {
+            return this;
+        }
+        List<StepSignal> films = PhotoFilms.gather(curve, photo, rig.recipe().excluded());
+        Calibration better = ResponseFit.refine(input(rig, photo.info()), calibration.get(), films);
+        return better == calibration.get() ? this : of(rig.recipe(), better);
+    }
+
+    private static FitInput input(Rig rig, PhotoInfo photo) {
+        Recipe recipe = rig.recipe();
         CameraSpec camera = recipe.camera();
         View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
         List<String> channels = photo.channels() == 1 ? List.of("grey") : List.of("red", "green", "blue");
@@ -60,10 +84,7 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
             if (recipe.inputs().isPresent()) {
                 input = input.withInputs(recipe.inputs().get());
             }
-            if (camera.sensitivities() != null) {
-                input = input.withSensitivities(sensitivities(recipe, photo));
-            }
-            return of(recipe, ResponseFit.fit(input));
+            return camera.sensitivities() == null ? input : input.withSensitivities(sensitivities(recipe, photo));
         } catch (IllegalArgumentException e) {
             throw new RecipeException(recipe.file() + ": camera.steps: " + e.getMessage());
         }

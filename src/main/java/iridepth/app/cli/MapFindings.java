@@ -23,20 +23,17 @@ import java.util.Optional;
  * What a map amounts to, for {@code summary.json} and the terminal.
  *
  * @param instrument what it was read with
+ * @param setup      its curve
  * @param info       the photo
  * @param signal     its signal
  * @param map        the map
  * @param judgement  how it stands against the tolerance, if there is one
  * @param hashes     SHA-256 of all inputs
  */
-record MapFindings(Instrument instrument, PhotoInfo info, SignalSource signal, MapFolder map, Optional<Judgement> judgement,
+record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSource signal, MapFolder map, Optional<Judgement> judgement,
                    Map<String, String> hashes) {
     Recipe recipe() {
         return instrument.recipe();
-    }
-
-    Setup setup() {
-        return instrument.setup(info);
     }
 
     /** Content of {@code summary.json}. */

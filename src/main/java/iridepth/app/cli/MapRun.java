@@ -10,6 +10,7 @@ import iridepth.reading.FilmReader;
 import iridepth.reading.ThicknessMap;
 import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
+import iridepth.recipe.Setup;
 import iridepth.report.MapFolder;
 import iridepth.report.PagePhoto;
 import iridepth.report.ReportPage;
@@ -30,13 +31,14 @@ record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
             CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photo));
             SignalSource signal = instrument.signal(file);
             PhotoInfo info = file.info();
-            FilmReader reader = instrument.reader(info);
+            Setup setup = instrument.setup(signal);
+            FilmReader reader = FilmReader.of(setup.curve(), recipe().excluded());
             try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
                     recipe().range().fromNm(), recipe().range().toNm())) {
                 read(reader, signal, map);
                 Optional<Tolerance> tolerance = Optional.ofNullable(recipe().tolerance()).map(t -> Tolerance.between(t[0], t[1]));
                 map.finish(recipe().title(), tolerance);
-                MapFindings findings = new MapFindings(instrument, info, signal, map, tolerance.map(map::judge), hashes.join());
+                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, tolerance.map(map::judge), hashes.join());
                 SummaryJson.write(findings.summary(), folder.file("summary.json"));
                 PagePhoto preview = PagePhoto.of(signal, 0, !recipe().camera().isColourManaged());
                 ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview, List.of()));
