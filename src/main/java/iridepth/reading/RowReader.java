@@ -18,6 +18,7 @@ final class RowReader {
     /** How far a candidate may lie from the thickness that is known, nm. */
     private final double tolerance;
     private final CurveIndex index;
+    private final boolean several;
     private final GridSearch search;
     private final Signal line;
     private final CandidateRow found;
@@ -29,12 +30,16 @@ final class RowReader {
     private final int[] columns;
     private int pinned;
 
-    RowReader(SignalSource photo, List<Region> excluded, Pins pins, CurveIndex index) {
+    /**
+     * @param several whether to keep all candidates of a pixel, for the choice of order, or the likeliest alone
+     */
+    RowReader(SignalSource photo, List<Region> excluded, Pins pins, CurveIndex index, boolean several) {
         this.photo = photo;
         this.excluded = excluded;
         this.pins = pins;
         this.tolerance = JumpPenalty.fringe(index) / 4;
         this.index = index;
+        this.several = several;
         this.search = new GridSearch(index);
         this.line = Signal.row(photo.info());
         this.found = new CandidateRow(line.width());
@@ -89,6 +94,9 @@ final class RowReader {
             found.withdraw();
             kind[x] = (byte) ~(isDark(x) ? State.DARK : State.OFF_CURVE).code();
             return;
+        }
+        if (!several) {
+            found.keepLikeliest();
         }
         int count = found.close();
         kind[x] = (byte) count;
