@@ -31,7 +31,6 @@ public final class Instrument {
     private Rig rig;
     private Channels channels;
     private Setup setup;
-    private FilmReader reader;
 
     /** What the curve depends on: the number of channels, and their matrix to XYZ where the file tells it. */
     private record Channels(int count, String toXyz) {
@@ -109,7 +108,6 @@ public final class Instrument {
         if (!wanted.equals(channels)) {
             Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
                     : Setup.of(recipe, CalibrationFile.read(calibration.get(), recipe));
-            reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;
         }
@@ -129,8 +127,7 @@ public final class Instrument {
 
     /** The reader of films for a photo, on the curve of {@link #setup}. */
     public synchronized FilmReader reader(PhotoInfo photo) {
-        setup(photo);
-        return reader;
+        return setup(photo).reader(recipe, photo);
     }
 
     /** What a user should know of the tables that the recipe uses, a line each. */

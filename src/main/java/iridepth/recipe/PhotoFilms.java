@@ -1,8 +1,6 @@
 package iridepth.recipe;
 
 import iridepth.calibration.StepSignal;
-import iridepth.curve.ColourCurve;
-import iridepth.photo.Region;
 import iridepth.photo.Signal;
 import iridepth.photo.SignalSource;
 import iridepth.reading.FilmReader;
@@ -49,13 +47,13 @@ final class PhotoFilms {
     /**
      * The films of a photo's first frame.
      *
-     * @param curve    the curve to read it on
+     * @param reader   reads it with the first calibration
+     * @param channels its channels
      * @param photo    the photo
-     * @param excluded regions to leave out
      * @return films in order of rising thickness; none where the photo shows less than about 20 nm of variation
      */
-    static List<StepSignal> gather(ColourCurve curve, SignalSource photo, List<Region> excluded) {
-        ThicknessMap map = FilmReader.of(curve, excluded).read(photo, 0, done -> { });
+    static List<StepSignal> gather(FilmReader reader, int channels, SignalSource photo) {
+        ThicknessMap map = reader.read(photo, 0, done -> { });
         float least = Float.POSITIVE_INFINITY;
         float most = Float.NEGATIVE_INFINITY;
         for (int i = 0; i < map.state().length; i++) {
@@ -67,7 +65,7 @@ final class PhotoFilms {
         if (!(most > least)) {
             return List.of();
         }
-        PhotoFilms films = new PhotoFilms(least, most, curve.channels());
+        PhotoFilms films = new PhotoFilms(least, most, channels);
         for (int y = 0; y < map.height(); y += BAND) {
             films.add(map, y, photo.rows(0, y, Math.min(BAND, map.height() - y)));
         }
