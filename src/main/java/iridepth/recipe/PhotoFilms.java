@@ -19,7 +19,7 @@ import java.util.Locale;
  */
 final class PhotoFilms {
     private static final double LEAST_SPACING_NM = 20;
-    private static final int MOST = 40;
+    private static final int MOST = 24;
     private static final double HALF_SLICE_NM = 1;
     private static final int FEWEST_PIXELS = 20;
     /** The thickness of a film counts as known to no better than this, so that a first calibration's error cannot set. */
