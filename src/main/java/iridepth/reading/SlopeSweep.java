@@ -28,9 +28,10 @@ final class SlopeSweep extends Sweep {
     void weigh(PixelRow row, int candidate, int count, int open, int i, float[] message) {
         SweepRow here = here();
         int at = at();
-        float fromBeside = weightBeside(i);
-        float fromBefore = weightBefore(i);
-        float scale = scale(fromBeside, fromBefore);
+        float fromBeside = weightBeside();
+        float fromBefore = weightBefore();
+        float mean = mean();
+        float authority = authority();
         for (int k = 0; k < count; k++) {
             float d = row.thickness()[candidate + k];
             float variance = table.spread(table.nearest(d));
@@ -45,10 +46,11 @@ final class SlopeSweep extends Sweep {
             } else {
                 filter.begin(here.value, (at + k) * FIELDS + DOWN, d, variance);
             }
+            said *= mean;
             if (count > 1) {
-                message[open + k] = said * scale;
+                message[open + k] = said * authority;
             }
-            here.loss[at + k] = (count > 1 ? row.cost()[open + k] : 0) + said * scale;
+            here.loss[at + k] = (count > 1 ? row.cost()[open + k] : 0) + said;
         }
         normalise(here.loss, at, count);
     }
