@@ -10,6 +10,7 @@ import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
 import java.util.LinkedHashMap;
 import java.util.Map;
+import java.util.stream.Stream;
 
 /** What is needed to repeat a run: the SHA-256 (FIPS 180-4) of every file that went into it. */
 public final class Provenance {
@@ -28,12 +29,11 @@ public final class Provenance {
         add(hashes, recipe, recipe.file());
         recipe.tables().forEach(table -> add(hashes, recipe, table));
         CameraSpec camera = recipe.camera();
-        for (Path named : new Path[] {camera.dark(), camera.flat(), camera.sensitivities()}) {
-            if (named != null) {
-                add(hashes, recipe, named);
-            }
+        Stream.concat(camera.darks().stream(), camera.flats().stream()).distinct().forEach(photo -> add(hashes, recipe, photo));
+        if (camera.sensitivities() != null) {
+            add(hashes, recipe, camera.sensitivities());
         }
-        camera.steps().stream().map(CameraSpec.Step::image).distinct().forEach(image -> add(hashes, recipe, image));
+        camera.steps().stream().flatMap(step -> step.images().stream()).distinct().forEach(image -> add(hashes, recipe, image));
         return hashes;
     }
 
