@@ -73,6 +73,36 @@ final class CandidateRow {
         return count;
     }
 
+    /**
+     * Of the candidates of the pixel in work keeps the one nearest to a thickness, if one is near enough.
+     *
+     * @return whether one is
+     */
+    boolean keepNearest(double thicknessNm, double tolerance) {
+        int nearest = first;
+        for (int k = first + 1; k < size; k++) {
+            nearest = Math.abs(thickness[k] - thicknessNm) < Math.abs(thickness[nearest] - thicknessNm) ? k : nearest;
+        }
+        if (nearest == size || Math.abs(thickness[nearest] - thicknessNm) > tolerance) {
+            return false;
+        }
+        thickness[first] = thickness[nearest];
+        cost[first] = cost[nearest];
+        size = first + 1;
+        return true;
+    }
+
+    /** Of the candidates of the pixel in work keeps the one of least cost. */
+    void keepLikeliest() {
+        int best = first;
+        for (int k = first + 1; k < size; k++) {
+            best = cost[k] < cost[best] ? k : best;
+        }
+        thickness[first] = thickness[best];
+        cost[first] = cost[best];
+        size = first + 1;
+    }
+
     /** Takes back the candidates of the pixel in work. */
     void withdraw() {
         size = first;

@@ -4,6 +4,9 @@ import iridepth.curve.ColourCurve;
 
 /** One point of the colour curve in the metric of its noise, W = (N + S)^-1, at a level of light; to be moved along. */
 final class CurvePoint {
+    /** Chi-square that noise passes with three standard deviations. */
+    private static final double PASSABLE = 9;
+
     private final ColourCurve curve;
     private final ExpectedNoise noise;
     private final double light;
@@ -74,6 +77,17 @@ final class CurvePoint {
         return Math.sqrt(Math.max(0, bend() - product * product / information)) / information;
     }
 
+    /**
+     * Squared uncertainty of a reading that may also be its own mirror image at a nearby extremum, nm^2: a^2 (1 - b / 9) for a
+     * barrier b = A^2 / (4 s''^T W s'') of chi-square between the two that is below 9, a = sqrt(A / s''^T W s'') away.
+     */
+    double mirrored() {
+        double information = information();
+        double bend = bend();
+        double barrier = information * information / (4 * bend);
+        return bend > 0 && barrier < PASSABLE ? information / bend * (1 - barrier / PASSABLE) : 0;
+    }
+
     /** W s', 1/nm: how residuals pull at the thickness. Overwritten by the next call. */
     double[] pull() {
         cholesky.solve(first, pull);
@@ -99,6 +113,27 @@ final class CurvePoint {
             System.arraycopy(scratch, 0, inverse, i * n, n);
         }
         return inverse;
+    }
+
+    /** A copy of the signals of all channels. */
+    double[] signals() {
+        return signal.clone();
+    }
+
+    /**
+     * D^T (N / n + S + (t s)^2)^-1 D.
+     *
+     * @param difference D
+     * @param pixels     n
+     * @param trust      t, share of the signal to which the curve is trusted at best
+     */
+    double distance(double[] difference, double pixels, double trust) {
+        double[] matrix = covariance.clone();
+        for (int i = 0; i < n; i++) {
+            matrix[i * n + i] += variance[i] * (1 / pixels - 1) + Math.pow(trust * signal[i], 2);
+        }
+        cholesky.factor(matrix, n);
+        return cholesky.quadratic(difference, scratch);
     }
 
     /** w^T N w. */

@@ -1,28 +1,41 @@
 package iridepth.reading;
 
 import iridepth.curve.ColourCurve;
-import iridepth.photo.Frame;
 import iridepth.photo.Region;
 import iridepth.photo.SignalSource;
+import java.util.ArrayList;
 import java.util.List;
+import java.util.function.IntFunction;
 import java.util.function.LongConsumer;
-import java.util.stream.IntStream;
 
 /**
- * Reads the film thickness of every pixel of a photograph by maximum likelihood on a colour curve.
+ * Reads the film thickness of every pixel of a photograph by maximum likelihood on a colour curve, its order chosen from the
+ * neighbourhood.
  *
- * <p>Rows are read in bands and a band's rows in parallel; a row's result depends on nothing but its signal, so that the number
- * of threads does not matter.
+ * <p>Two passes over the picture, down and up again, each in bands of rows; where regions of the picture turn out to be cut off
+ * from what tells their order, another way up with other orders for them. The result depends neither on the height of the
+ * bands nor on the number of threads, and memory does not grow with the picture but for a few bytes a region and row. Immutable.
  */
 public final class FilmReader {
-    private static final int BAND = 64;
+    private static final int BAND_PIXELS = 1 << 19;
+    private static final int LEAST_BAND = 16;
+    private static final int MOST_BAND = 256;
+    private static final long MOST_KEPT = 512L << 20;
+    private static final int MOST_CORRECTIONS = 6;
+
     private final ColourCurve curve;
     private final List<Region> excluded;
+    private final Pins pins;
+    private final int bandHeight;
+    private final long kept;
     private final boolean orderChoice;
 
-    private FilmReader(ColourCurve curve, List<Region> excluded, boolean orderChoice) {
+    private FilmReader(ColourCurve curve, List<Region> excluded, Pins pins, int bandHeight, long kept, boolean orderChoice) {
         this.curve = curve;
         this.excluded = List.copyOf(excluded);
+        this.pins = pins;
+        this.bandHeight = bandHeight;
+        this.kept = kept;
         this.orderChoice = orderChoice;
     }
 
@@ -32,12 +45,28 @@ public final class FilmReader {
      * @param excluded regions to leave out
      */
     public static FilmReader of(ColourCurve curve, List<Region> excluded) {
-        return new FilmReader(curve, excluded, true);
+        return new FilmReader(curve, excluded, Pins.none(), 0, Math.min(MOST_KEPT, Runtime.getRuntime().maxMemory() / 4),
+                true);
+    }
+
+    /** This reader with knowledge of the thickness at places. */
+    public FilmReader with(Pins itsPins) {
+        return new FilmReader(curve, excluded, itsPins, bandHeight, kept, orderChoice);
     }
 
     /** This reader with each pixel on its own: it takes its likeliest thickness, whatever its neighbours say of the order. */
     public FilmReader withoutOrderChoice() {
-        return new FilmReader(curve, excluded, false);
+        return new FilmReader(curve, excluded, pins, bandHeight, kept, false);
+    }
+
+    /**
+     * This reader with bands of another size, which does not change its result.
+     *
+     * @param rows  rows of a band
+     * @param bytes how much to keep of the candidates between the passes
+     */
+    FilmReader inBands(int rows, long bytes) {
+        return new FilmReader(curve, excluded, pins, rows, bytes, orderChoice);
     }
 
     /**
@@ -45,43 +74,51 @@ public final class FilmReader {
      *
      * @param photo    the signals, with as many channels as the curve
      * @param frame    which frame, 0 for the first
-     * @param progress told the number of pixels done, now and then
+     * @param sink     takes the readings
+     * @param progress told the number of pixels done, twice that of the picture in the end
+     * @return the regions whose order is in doubt, largest first
      * @throws IllegalArgumentException if the channels do not match
      */
-    public ThicknessMap read(SignalSource photo, int frame, LongConsumer progress) {
+    public List<DoubtfulRegion> read(SignalSource photo, int frame, ReadingSink sink, LongConsumer progress) {
         if (photo.info().channels() != curve.channels()) {
             throw new IllegalArgumentException("the photo has " + photo.info().channels() + " channels where the calibration has "
                     + curve.channels());
         }
-        CurveIndex index = CurveIndex.of(curve, photo);
         int width = photo.info().width();
         int height = photo.info().height();
-        ThicknessMap map = ThicknessMap.blank(width, height);
-        PixelRow[] rows = new PixelRow[height];
+        CurveIndex index = CurveIndex.of(curve, photo);
         JumpPenalty penalty = JumpPenalty.of(index);
-        PathSweep[] sweeps = new PathSweep[4];
-        for (int i = 0; i < 4; i++) {
-            sweeps[i] = new PathSweep(penalty, width, i % 2 == 0);
-        }
-        for (int y = 0; y < height; y += BAND) {
-            int count = Math.min(BAND, height - y);
-            Frame counts = photo.counts(frame, y, count);
-            int top = y;
-            ThreadLocal<RowReader> readers = ThreadLocal.withInitial(() -> new RowReader(photo, excluded, index));
-            IntStream.range(0, count).parallel().forEach(row -> rows[top + row] = readers.get().read(counts, row, top + row));
-            IntStream.range(0, orderChoice ? 2 : 0).parallel().forEach(i -> {
-                for (int row = 0; row < count; row++) {
-                    sweeps[i].advance(rows[top + row], rows[top + row].message(i));
-                }
-            });
-            progress.accept((long) (y + count) * width);
-        }
-        IntStream.range(2, orderChoice ? 4 : 2).parallel().forEach(i -> {
-            for (int row = height - 1; row >= 0; row--) {
-                sweeps[i].advance(rows[row], rows[row].message(i));
+        IntFunction<Sweep> newSweep = i -> curve.channels() == 1 ? new SlopeSweep(index, width, i % 2 == 0)
+                : new PathSweep(penalty, width, i % 2 == 0);
+        int rows = bandHeight > 0 ? bandHeight : Math.max(LEAST_BAND, Math.min(MOST_BAND, BAND_PIXELS / width));
+        DownwardPass down = new DownwardPass(photo, frame, rows, () -> new RowReader(photo, excluded, pins, index, orderChoice), newSweep);
+        List<Band> bands = down.run(kept, progress);
+        long pixels = (long) width * height;
+        List<OrderCorrection> corrections = new ArrayList<>();
+        while (true) {
+            UpwardPass up = new UpwardPass(index, penalty, width, height, corrections, sink);
+            up.run(bands, down, done -> progress.accept(pixels + done));
+            OrderCorrection correction = up.regions().correction();
+            if (correction.chains().isEmpty() || corrections.size() == MOST_CORRECTIONS) {
+                return up.judge();
             }
-        });
-        IntStream.range(0, height).parallel().forEach(row -> ReadRow.choose(rows[row], index).into(map, row));
+            corrections.add(correction);
+            sink.restart();
+        }
+    }
+
+    /**
+     * Reads a frame of a photo into memory.
+     *
+     * @param photo    the signals, with as many channels as the curve
+     * @param frame    which frame, 0 for the first
+     * @param progress told the number of pixels done, twice that of the picture in the end
+     * @return the readings
+     * @throws IllegalArgumentException if the channels do not match
+     */
+    public ThicknessMap read(SignalSource photo, int frame, LongConsumer progress) {
+        ThicknessMap map = ThicknessMap.blank(photo.info().width(), photo.info().height());
+        read(photo, frame, map.sink(), progress);
         return map;
     }
 }

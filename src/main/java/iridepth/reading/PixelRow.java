@@ -11,13 +11,15 @@ final class PixelRow {
     private final byte[] level;
     private final float[] thickness;
     private final float[] cost;
-    private final float[][] messages = new float[4][];
+    private final int[] pinned;
+    private final float[][] messages = new float[2][];
 
-    PixelRow(byte[] kind, byte[] level, float[] thickness, float[] cost) {
+    PixelRow(byte[] kind, byte[] level, float[] thickness, float[] cost, int[] pinned) {
         this.kind = kind;
         this.level = level;
         this.thickness = thickness;
         this.cost = cost;
+        this.pinned = pinned;
     }
 
     int width() {
@@ -49,6 +51,11 @@ final class PixelRow {
         return cost;
     }
 
+    /** Columns of the pixels whose order is known beforehand, rising. */
+    int[] pinned() {
+        return pinned;
+    }
+
     /** Receives what a sweep's neighbours say against each of the candidates that {@link #cost} lists. */
     float[] message(int sweep) {
         if (messages[sweep] == null) {
@@ -57,13 +64,9 @@ final class PixelRow {
         return messages[sweep];
     }
 
-    /** Cost and messages of an open candidate: twice its negative log likelihood by what all around it say. */
+    /** Cost of an open candidate and what the sweeps say against it. */
     float total(int open) {
-        float total = cost[open];
-        for (float[] message : messages) {
-            total += message == null ? 0 : message[open];
-        }
-        return total;
+        return cost[open] + messages[0][open] + messages[1][open];
     }
 
     /** Bytes that it takes, about. */

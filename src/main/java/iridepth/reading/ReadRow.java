@@ -15,49 +15,27 @@ record ReadRow(float[] thickness, float[] random, float[] systematic, float[] ma
         return new ReadRow(new float[width], new float[width], new float[width], new float[width], new byte[width]);
     }
 
-    /** Chooses the candidate of least total in every pixel of a row. */
-    static ReadRow choose(PixelRow row, CurveIndex index) {
-        ReadRow read = of(row.width());
-        int candidate = 0;
-        int open = 0;
-        for (int x = 0; x < row.width(); x++) {
-            int kind = row.kind(x);
-            if (kind < 0) {
-                read.leave(x, row.state(x));
-            } else if (kind == 1) {
-                read.set(x, row.thickness()[candidate++], Float.POSITIVE_INFINITY, index.tables()[row.level(x)]);
-            } else {
-                read.choose(x, row, candidate, open, kind, index);
-                candidate += kind;
-                open += kind;
-            }
-        }
-        return read;
-    }
-
-    private void choose(int x, PixelRow row, int candidate, int open, int kind, CurveIndex index) {
-        int best = 0;
-        float least = Float.POSITIVE_INFINITY;
-        float second = Float.POSITIVE_INFINITY;
-        for (int k = 0; k < kind; k++) {
-            float total = row.total(open + k);
-            if (total < least) {
-                second = least;
-                least = total;
-                best = k;
-            } else {
-                second = Math.min(second, total);
-            }
-        }
-        float d = row.thickness()[candidate + best];
-        if (index.explains(d, row.cost()[open + best], row.level(x))) {
-            set(x, d, second - least, index.tables()[row.level(x)]);
+    /**
+     * Takes a candidate of a pixel that has several, unless it does not explain the pixel.
+     *
+     * @param candidate its place among the row's candidates
+     * @param open      its place among their costs
+     */
+    void take(int x, PixelRow row, int candidate, int open, float itsMargin, CurveIndex index) {
+        float d = row.thickness()[candidate];
+        if (index.explains(d, row.cost()[open], row.level(x))) {
+            set(x, d, itsMargin, index.tables()[row.level(x)]);
         } else {
             leave(x, State.OFF_CURVE);
         }
     }
 
-    private void set(int x, float d, float itsMargin, TangentTable table) {
+    ReadRow copy() {
+        return new ReadRow(thickness.clone(), random.clone(), systematic.clone(), margin.clone(), state.clone());
+    }
+
+    /** Gives a pixel a reading. */
+    void set(int x, float d, float itsMargin, TangentTable table) {
         int k = table.nearest(d);
         thickness[x] = d;
         random[x] = table.random(k);
@@ -66,7 +44,8 @@ record ReadRow(float[] thickness, float[] random, float[] systematic, float[] ma
         state[x] = State.READ.code();
     }
 
-    private void leave(int x, State why) {
+    /** Leaves a pixel without reading. */
+    void leave(int x, State why) {
         thickness[x] = Float.NaN;
         random[x] = Float.NaN;
         systematic[x] = Float.NaN;
@@ -74,12 +53,11 @@ record ReadRow(float[] thickness, float[] random, float[] systematic, float[] ma
         state[x] = why.code();
     }
 
-    /** Writes the row into a map. */
-    void into(ThicknessMap map, int y) {
-        int at = y * map.width();
-        System.arraycopy(thickness, 0, map.thickness(), at, map.width());
-        System.arraycopy(random, 0, map.random(), at, map.width());
-        System.arraycopy(systematic, 0, map.systematic(), at, map.width());
-        System.arraycopy(state, 0, map.state(), at, map.width());
+    /** Copies the row, less its states, to a place in a longer one. */
+    void copyTo(ReadRow band, int at) {
+        System.arraycopy(thickness, 0, band.thickness, at, thickness.length);
+        System.arraycopy(random, 0, band.random, at, thickness.length);
+        System.arraycopy(systematic, 0, band.systematic, at, thickness.length);
+        System.arraycopy(margin, 0, band.margin, at, thickness.length);
     }
 }

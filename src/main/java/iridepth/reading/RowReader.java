@@ -14,7 +14,11 @@ final class RowReader {
 
     private final SignalSource photo;
     private final List<Region> excluded;
+    private final Pins pins;
+    /** How far a candidate may lie from the thickness that is known, nm. */
+    private final double tolerance;
     private final CurveIndex index;
+    private final boolean several;
     private final GridSearch search;
     private final Signal line;
     private final CandidateRow found;
@@ -23,17 +27,26 @@ final class RowReader {
     private final boolean[] out;
     private float[] cost;
     private int open;
+    private final int[] columns;
+    private int pinned;
 
-    RowReader(SignalSource photo, List<Region> excluded, CurveIndex index) {
+    /**
+     * @param several whether to keep all candidates of a pixel, for the choice of order, or the likeliest alone
+     */
+    RowReader(SignalSource photo, List<Region> excluded, Pins pins, CurveIndex index, boolean several) {
         this.photo = photo;
         this.excluded = excluded;
+        this.pins = pins;
+        this.tolerance = JumpPenalty.fringe(index) / 4;
         this.index = index;
+        this.several = several;
         this.search = new GridSearch(index);
         this.line = Signal.row(photo.info());
         this.found = new CandidateRow(line.width());
         this.kind = new byte[line.width()];
         this.level = new byte[line.width()];
         this.out = new boolean[line.width()];
+        this.columns = new int[line.width()];
         this.cost = new float[line.width() + CandidateRow.MOST];
     }
 
@@ -50,6 +63,8 @@ final class RowReader {
         open = 0;
         boolean[] excludedHere = excludedColumns(y);
         boolean plain = isPlain(line.limit());
+        boolean pinnedHere = pins.touches(y);
+        pinned = 0;
         for (int x = 0; x < kind.length; x++) {
             int itsLevel = index.levels().level(line.light()[x]);
             level[x] = (byte) itsLevel;
@@ -57,24 +72,31 @@ final class RowReader {
                 kind[x] = (byte) ~State.EXCLUDED.code();
             } else if (plain) {
                 search.find(line.value(), x, itsLevel, found);
-                close(x);
+                close(x, pinnedHere ? pins.at(x, y) : Double.NaN);
             } else if (isClipped(x)) {
                 kind[x] = (byte) ~State.CLIPPED.code();
             } else {
                 search.find(line.value(), line.limit(), x, itsLevel, found);
-                close(x);
+                close(x, pinnedHere ? pins.at(x, y) : Double.NaN);
             }
         }
         byte[] levels = index.levels().count() == 1 ? new byte[0] : level.clone();
-        return new PixelRow(kind.clone(), levels, found.thicknesses(), Arrays.copyOf(cost, open));
+        return new PixelRow(kind.clone(), levels, found.thicknesses(), Arrays.copyOf(cost, open),
+                Arrays.copyOf(columns, pinned));
     }
 
     /** Ends a pixel: keeps the costs of its candidates if there are several, and judges it if there is none. */
-    private void close(int x) {
+    private void close(int x, double known) {
+        if (known >= 0 && found.keepNearest(known, tolerance)) {
+            columns[pinned++] = x;
+        }
         if (!found.explained()) {
             found.withdraw();
             kind[x] = (byte) ~(isDark(x) ? State.DARK : State.OFF_CURVE).code();
             return;
+        }
+        if (!several) {
+            found.keepLikeliest();
         }
         int count = found.close();
         kind[x] = (byte) count;

@@ -3,29 +3,35 @@ package iridepth.reading;
 import java.util.Arrays;
 
 /**
- * What a sweep carries along from the pixels of a row: for each the thicknesses it may have and what each has lost on the way,
- * the least loss 0. In the order of the sweep. A pixel that says nothing itself carries what reached it, with the distance to
- * where that came from.
+ * What a sweep carries along from the pixels of a row, in the order of the sweep: for each pixel a number of entries, each with
+ * what it has lost on the way, the least loss 0, and a few values more. A pixel that says nothing itself carries what reached
+ * it, with the distance to where that came from.
  */
 final class SweepRow {
+    private final int fields;
     private final byte[] count;
     private final byte[] gap;
-    private float[] thickness;
-    private float[] loss;
+    /** Losses of all entries. */
+    float[] loss;
+    /** The values of all entries, {@link #fields} each. */
+    float[] value;
     private int size;
 
-    SweepRow(int width) {
+    /** @param fields values of an entry besides its loss */
+    SweepRow(int width, int fields) {
+        this.fields = fields;
         this.count = new byte[width];
         this.gap = new byte[width];
-        this.thickness = new float[2 * width];
         this.loss = new float[2 * width];
+        this.value = new float[2 * width * fields];
     }
 
     private SweepRow(SweepRow other) {
+        this.fields = other.fields;
         this.count = other.count.clone();
         this.gap = other.gap.clone();
-        this.thickness = Arrays.copyOf(other.thickness, other.size);
         this.loss = Arrays.copyOf(other.loss, other.size);
+        this.value = Arrays.copyOf(other.value, other.size * fields);
         this.size = other.size;
     }
 
@@ -38,14 +44,13 @@ final class SweepRow {
         size = 0;
     }
 
-    /** Makes room for entries of the next pixel; where they begin. */
-    int reserve(int entries) {
-        if (size + entries > thickness.length) {
-            int length = Math.max(size + entries, 2 * thickness.length);
-            thickness = Arrays.copyOf(thickness, length);
+    /** Makes room for the entries of the next pixel. */
+    void reserve(int entries) {
+        if (size + entries > loss.length) {
+            int length = Math.max(size + entries, 2 * loss.length);
             loss = Arrays.copyOf(loss, length);
+            value = Arrays.copyOf(value, length * fields);
         }
-        return size;
     }
 
     /** Ends a pixel whose entries have been put in place. */
@@ -55,19 +60,20 @@ final class SweepRow {
         size += entries;
     }
 
+    /** Copies the entries of a pixel, which begin at a place in another row or this, to the next pixel. */
+    void carry(SweepRow from, int at, int i, int entries, int distance) {
+        System.arraycopy(from.loss, at, loss, size, entries);
+        System.arraycopy(from.value, at * fields, value, size * fields, entries * fields);
+        close(i, entries, distance);
+    }
+
+    /** Number of entries of a pixel. */
     int count(int i) {
         return count[i];
     }
 
+    /** How many pixels ago the entries of a pixel come from; 0 for its own. */
     int gap(int i) {
         return gap[i];
-    }
-
-    float[] thickness() {
-        return thickness;
-    }
-
-    float[] loss() {
-        return loss;
     }
 }

@@ -26,6 +26,7 @@ final class TangentTable {
     private final float[] random;
     private final float[] systematic;
     private final float[] curvature;
+    private final float[] spread;
 
     private TangentTable(int channels, CurveSampling sampling) {
         this.channels = channels;
@@ -35,6 +36,7 @@ final class TangentTable {
         this.random = new float[sampling.size()];
         this.systematic = new float[sampling.size()];
         this.curvature = new float[sampling.size()];
+        this.spread = new float[sampling.size()];
     }
 
     /** The table of a curve at a light. */
@@ -107,6 +109,11 @@ final class TangentTable {
         return random[sample];
     }
 
+    /** Squared distance from the truth that noise may bring about at a sample, also across an extremum nearby, nm^2. */
+    float spread(int sample) {
+        return spread[sample];
+    }
+
     /** Systematic part of the standard uncertainty at a sample, nm. */
     float systematic(int sample) {
         return systematic[sample];
@@ -139,5 +146,6 @@ final class TangentTable {
         double share = information > 0 ? Math.min(1, point.noiseIn(pull) / information) : 1;
         random[k] = (float) Math.sqrt(total * share);
         systematic[k] = (float) Math.sqrt(total * (1 - share));
+        spread[k] = (float) (total * share + point.mirrored());
     }
 }

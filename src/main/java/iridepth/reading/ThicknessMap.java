@@ -26,6 +26,29 @@ public record ThicknessMap(int width, int height, float[] thickness, float[] ran
         return new ThicknessMap(width, height, planes[0], planes[1], planes[2], state);
     }
 
+    /** Fills the map with readings as they come. */
+    ReadingSink sink() {
+        return new ReadingSink() {
+            @Override
+            public void readings(int firstRow, float[] d, float[] itsRandom, float[] itsSystematic, float[] margin) {
+                int at = firstRow * width;
+                System.arraycopy(d, 0, thickness, at, d.length);
+                System.arraycopy(itsRandom, 0, random, at, d.length);
+                System.arraycopy(itsSystematic, 0, systematic, at, d.length);
+            }
+
+            @Override
+            public void restart() {
+                // what comes again takes the place of what came before
+            }
+
+            @Override
+            public void states(int firstRow, byte[] codes) {
+                System.arraycopy(codes, 0, state, firstRow * width, codes.length);
+            }
+        };
+    }
+
     /** Combined standard uncertainty of a pixel, nm. */
     public float uncertainty(int pixel) {
         return (float) Math.hypot(random[pixel], systematic[pixel]);

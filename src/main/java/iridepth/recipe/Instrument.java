@@ -10,6 +10,7 @@ import iridepth.reading.FilmReader;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.Collections;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
@@ -84,6 +85,22 @@ public final class Instrument {
         return rig().signal(photos);
     }
 
+    /**
+     * Reads what the recipe names now rather than with the first photo, so that a fault of the rig is told apart from a fault of
+     * a photo.
+     *
+     * @throws iridepth.photo.PhotoException if dark or flat cannot be used
+     */
+    public void ready() {
+        rig();
+    }
+
+    /** Whether a file is one that the recipe names, such as its flat. */
+    public boolean uses(Path file) {
+        return Provenance.files(recipe).stream().anyMatch(own -> own.toAbsolutePath().normalize()
+                .equals(file.toAbsolutePath().normalize()));
+    }
+
     private synchronized Rig rig() {
         if (rig == null) {
             rig = Rig.of(recipe);
@@ -141,6 +158,15 @@ public final class Instrument {
     /** Edge of a photo's pixels in um by the recipe, else by the photo; NaN if neither tells. */
     public double pixelUm(PhotoInfo photo) {
         return Double.isNaN(recipe.pixelUm()) ? photo.pixelUm() : recipe.pixelUm();
+    }
+
+    /**
+     * SHA-256 of the recipe and the files that it names, by name.
+     *
+     * @throws iridepth.photo.PhotoException if a file cannot be read
+     */
+    public Map<String, String> hashes() {
+        return Collections.unmodifiableMap(own());
     }
 
     /**

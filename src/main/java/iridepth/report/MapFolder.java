@@ -26,9 +26,12 @@ public final class MapFolder implements AutoCloseable {
     static final String STATE = "state.tif";
     /** The two parts of the uncertainty against thickness. */
     static final String UNCERTAINTY_PARTS = "uncertainty.csv";
-    /** What every map's folder holds beside its summary. */
-    static final List<String> FILES = List.of(THICKNESS, UNCERTAINTY, STATE, "thickness.png", "histogram.csv",
-            "histogram.png", UNCERTAINTY_PARTS);
+    /** The page that shows it all. */
+    static final String REPORT = "report.html";
+    /** The maps and tables from which a result can be measured again. */
+    static final List<String> DATA = List.of(THICKNESS, UNCERTAINTY, STATE, UNCERTAINTY_PARTS);
+    /** What is there to be looked at. */
+    static final List<String> VIEWS = List.of("thickness.png", "histogram.csv", "histogram.png", REPORT);
 
     private final ResultFolder folder;
     private final int width;
