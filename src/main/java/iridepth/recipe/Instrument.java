@@ -70,7 +70,18 @@ public final class Instrument {
      * @throws iridepth.photo.PhotoException if it, the dark or the flat cannot be used
      */
     public SignalSource signal(PhotoFile photo) {
-        return rig().signal(photo);
+        return signal(List.of(photo));
+    }
+
+    /**
+     * The linear signal of photos of one field, one under each of the recipe's lights, with its noise.
+     *
+     * @param photos the open photos in the order of the lights; they stay the caller's to close
+     * @throws RecipeException                if there are not as many as lights
+     * @throws iridepth.photo.PhotoException if one, or its dark or flat, cannot be used, or they are not in register
+     */
+    public SignalSource signal(List<PhotoFile> photos) {
+        return rig().signal(photos);
     }
 
     /**
@@ -99,6 +110,7 @@ public final class Instrument {
     /**
      * Colour curve and view for a photo.
      *
+     * @param photo one of the photos, where several are read jointly
      * @throws RecipeException                if the recipe does not fix them
      * @throws iridepth.photo.PhotoException if the photo or a table contradicts it
      */
@@ -121,7 +133,7 @@ public final class Instrument {
      * @throws RecipeException if the recipe's steps cannot be used
      */
     public Setup setup(SignalSource photo) {
-        Setup general = setup(photo.info());
+        Setup general = setup(photo.parts().get(0).info());
         return calibration.isPresent() ? general : general.refined(rig(), photo);
     }
 
@@ -155,13 +167,15 @@ public final class Instrument {
     }
 
     /**
-     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the photo.
+     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the photos.
      *
      * @throws iridepth.photo.PhotoException if a file cannot be read
      */
-    public Map<String, String> hashes(Path photo) {
+    public Map<String, String> hashes(Path... photos) {
         Map<String, String> all = new LinkedHashMap<>(own());
-        Provenance.add(all, recipe, photo);
+        for (Path photo : photos) {
+            Provenance.add(all, recipe, photo);
+        }
         return all;
     }
 

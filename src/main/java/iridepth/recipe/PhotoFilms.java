@@ -1,8 +1,12 @@
 package iridepth.recipe;
 
 import iridepth.calibration.StepSignal;
+import iridepth.curve.ColourCurve;
+import iridepth.curve.ThicknessRange;
+import iridepth.photo.ChannelNoise;
 import iridepth.photo.Signal;
 import iridepth.photo.SignalSource;
+import iridepth.planning.Forecast;
 import iridepth.reading.FilmReader;
 import iridepth.reading.State;
 import iridepth.reading.ThicknessMap;
@@ -26,6 +30,8 @@ final class PhotoFilms {
     private static final double LEAST_UNCERTAINTY_NM = 3;
     private static final double SIGMAS = 3;
     private static final int BAND = 64;
+    /** Pixels of a slice in a photo still to be taken. */
+    private static final int FORESEEN_PIXELS = 1000;
 
     private final double first;
     private final double spacing;
@@ -68,6 +74,33 @@ final class PhotoFilms {
         PhotoFilms films = new PhotoFilms(least, most, channels);
         for (int y = 0; y < map.height(); y += BAND) {
             films.add(map, y, photo.rows(0, y, Math.min(BAND, map.height() - y)));
+        }
+        return films.signals();
+    }
+
+    /**
+     * The films that a photo still to be taken will show.
+     *
+     * @param forecast what its pixels will tell
+     * @param curve    the curve
+     * @param noise    noise of a pixel
+     * @param shown    thicknesses that it will show
+     */
+    static List<StepSignal> foreseen(Forecast forecast, ColourCurve curve, ChannelNoise noise, ThicknessRange shown) {
+        PhotoFilms films = new PhotoFilms(shown.fromNm(), shown.toNm(), curve.channels());
+        double step = forecast.thickness(1) - forecast.thickness(0);
+        double[] value = new double[curve.channels()];
+        double[] unused = new double[value.length];
+        for (int k = 0; k < films.count.length; k++) {
+            double thickness = films.first + k * films.spacing;
+            curve.at(thickness, value, unused, unused);
+            int at = (int) Math.max(0, Math.min(forecast.size() - 1, Math.round((thickness - forecast.thickness(0)) / step)));
+            films.count[k] = FORESEEN_PIXELS;
+            films.uncertainty[k] = FORESEEN_PIXELS * forecast.uncertainty(at).combinedNm();
+            for (int c = 0; c < value.length; c++) {
+                films.sum[k][c] = FORESEEN_PIXELS * value[c];
+                films.squares[k][c] = FORESEEN_PIXELS * (value[c] * value[c] + noise.variance(c, value[c]));
+            }
         }
         return films.signals();
     }

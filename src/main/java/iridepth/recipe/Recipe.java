@@ -71,7 +71,7 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
         film.finish();
         ViewSpec view = view(top.section("view"), stack, range);
         List<Light> lights = LightSpec.read(top, tables);
-        CameraSpec camera = CameraSpec.read(top.section("camera"), tables, materials);
+        CameraSpec camera = CameraSpec.read(top.section("camera"), tables, materials, lights.size());
         Section scale = top.section("scale");
         double pixelUm = scale.has("pixel_um") ? scale.number("pixel_um", 0, 1e-4, 1e6) : Double.NaN;
         scale.finish();

@@ -77,7 +77,7 @@ class RecipeTest {
                 """);
         assertEquals(2, recipe.lights().size());
         assertEquals(2, recipe.camera().steps().size());
-        assertEquals(folder.toAbsolutePath().resolve("s.tif"), recipe.camera().steps().get(0).image());
+        assertEquals(folder.toAbsolutePath().resolve("s.tif"), recipe.camera().steps().get(0).images().get(0));
         assertEquals(1, recipe.camera().steps().get(1).uncertaintyNm());
         assertEquals(1.6 + 0.01 / 0.25, recipe.stack().film().nAt(500), 1e-9);
         assertEquals(295, recipe.tolerance()[1]);

@@ -3,6 +3,7 @@ package iridepth.app.cli;
 import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
 import java.nio.file.Path;
+import java.util.List;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Model.CommandSpec;
@@ -15,7 +16,8 @@ import picocli.CommandLine.Spec;
         description = {"Reads the film thickness of every pixel of a photograph.", "",
             "The result folder holds thickness.tif and uncertainty.tif (nm; NaN where not read), state.tif, thickness.png, "
                 + "histogram.csv, histogram.png and summary.json. It appears whole or not at all.", "",
-            "Example:", "  map --recipe oxide.toml --out result photo.png", ""},
+            "Examples:", "  map --recipe oxide.toml --out result photo.png",
+            "  map --recipe two-lights.toml --out result blue.tif red.tif", ""},
         footer = {"", Iridepth.CAUTION})
 final class MapCommand implements Callable<Integer> {
     @Spec
@@ -34,13 +36,14 @@ final class MapCommand implements Callable<Integer> {
     @Option(names = "--replace", description = "Replace a result folder that exists.")
     private boolean replace;
 
-    @Parameters(paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB.")
-    private Path photo;
+    @Parameters(arity = "1..*", paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB; where the recipe "
+            + "has several lights, one photo of the field under each, in their order, without moving camera or sample.")
+    private List<Path> photos;
 
     @Override
     public Integer call() {
         Recipe read = Recipe.read(recipe);
         Instrument instrument = calibration == null ? Instrument.of(read) : Instrument.of(read, calibration);
-        return new MapRun(instrument, photo, spec.commandLine().getOut()).write(out, replace);
+        return new MapRun(instrument, photos, spec.commandLine().getOut()).write(out, replace);
     }
 }

@@ -84,6 +84,9 @@ record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSou
     private Map<String, Object> photo() {
         Map<String, Object> photograph = new LinkedHashMap<>();
         photograph.put("file", info.path().getFileName().toString());
+        if (signal.parts().size() > 1) {
+            photograph.put("read_jointly", signal.parts().stream().map(p -> p.info().path().getFileName().toString()).toList());
+        }
         photograph.put("width", info.width());
         photograph.put("height", info.height());
         photograph.put("pixel_um", instrument.pixelUm(info));

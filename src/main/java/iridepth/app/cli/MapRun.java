@@ -1,6 +1,6 @@
 package iridepth.app.cli;
 
-import iridepth.photo.PhotoFile;
+import iridepth.photo.OpenPhotos;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
 import iridepth.quality.Tolerance;
@@ -25,14 +25,18 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.concurrent.CompletableFuture;
 
-/** One photo before an instrument: reads it and writes its result folder. */
-record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
+/** A photo before an instrument, or one under each of its lights: reads it and writes its result folder. */
+record MapRun(Instrument instrument, List<Path> photos, PrintWriter terminal) {
+    MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
+        this(instrument, List.of(photo), terminal);
+    }
+
     /** Reads the photo, writes the folder and tells the essentials; returns the exit code. */
     int write(Path out, boolean replace) {
-        try (ResultFolder folder = ResultFolder.create(out, replace); PhotoFile file = PhotoFile.open(photo)) {
-            CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photo));
-            SignalSource signal = instrument.signal(file);
-            PhotoInfo info = file.info();
+        try (ResultFolder folder = ResultFolder.create(out, replace); OpenPhotos files = OpenPhotos.of(photos)) {
+            CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photos.toArray(Path[]::new)));
+            SignalSource signal = instrument.signal(files.files());
+            PhotoInfo info = signal.info();
             Setup setup = instrument.setup(signal);
             OtherCandidates others = OtherCandidates.of(setup.curve(), recipe().excluded(), signal, 0);
             try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
@@ -42,7 +46,7 @@ record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
                 map.finish(recipe().title(), tolerance);
                 MapFindings findings = new MapFindings(instrument, setup, info, signal, map, doubts, tolerance.map(map::judge), hashes.join());
                 SummaryJson.write(findings.summary(), folder.file("summary.json"));
-                PagePhoto preview = PagePhoto.of(signal, 0, !recipe().camera().isColourManaged());
+                PagePhoto preview = PagePhoto.of(signal.parts().get(0), 0, !recipe().camera().isColourManaged());
                 ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview));
                 folder.commit();
                 findings.tell(terminal);
