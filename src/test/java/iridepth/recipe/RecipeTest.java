@@ -85,6 +85,24 @@ class RecipeTest {
     }
 
     @Test
+    void knownPlacesPinTheOrder() throws IOException {
+        Recipe recipe = read(GOOD.replace("[light]", "zero_edge = \"left\"\n[[film.known]]\npixel = [10, 20]\nthickness_nm = 300\n[light]"));
+        assertEquals(300, recipe.pins().points().get(0).thicknessNm());
+        assertEquals("left", recipe.pins().edges().get(0));
+        assertTrue(refusal(GOOD.replace("[light]", "zero_edge = \"middle\"\n[light]")).contains("must be one of left, right"));
+        assertTrue(refusal(GOOD.replace("[light]", "[[film.known]]\npixel = [1.5, 2]\nthickness_nm = 3\n[light]"))
+                .contains("in whole pixels"));
+    }
+
+    @Test
+    void uncertaintiesOfInputsAreReadInTheirUnits() throws IOException {
+        Recipe recipe = read(GOOD + "[uncertainty]\nfilm_index_percent = 0.5\nlamp_K = 100\n");
+        assertEquals(0.005, recipe.inputs().orElseThrow().relativeIndex(), 1e-12);
+        assertEquals(0, recipe.inputs().orElseThrow().numericalAperture());
+        assertTrue(read(GOOD).inputs().isEmpty());
+    }
+
+    @Test
     void unknownKeyNamesItsLineAndTheNearestKey() {
         assertEquals("r.toml, line 4: unknown key film.range_mm; the nearest known is film.range_nm",
                 refusal(GOOD.replace("range_nm", "range_mm = [0, 450]\nrange_nm")));
