@@ -57,11 +57,8 @@ class RecipeTest {
                 [view]
                 incidence_deg = 45
                 polarisation = "s"
-                [[light]]
+                [light]
                 table = "lamp.csv"
-                [[light]]
-                wavelength_nm = 546
-                bandwidth_nm = 10
                 [camera]
                 encoding = "linear"
                 flat = "flat.tif"
@@ -75,7 +72,7 @@ class RecipeTest {
                 [tolerance]
                 limits_nm = [275, 295]
                 """);
-        assertEquals(2, recipe.lights().size());
+        assertEquals(2, recipe.lights().get(0).power().at(400) / recipe.lights().get(0).power().at(0), 1e-9);
         assertEquals(2, recipe.camera().steps().size());
         assertEquals(folder.toAbsolutePath().resolve("s.tif"), recipe.camera().steps().get(0).images().get(0));
         assertEquals(1, recipe.camera().steps().get(1).uncertaintyNm());
