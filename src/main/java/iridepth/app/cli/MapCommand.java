@@ -1,6 +1,7 @@
 package iridepth.app.cli;
 
 import java.nio.file.Path;
+import java.util.List;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
@@ -14,7 +15,8 @@ import picocli.CommandLine.Spec;
         description = {"Reads the film thickness of every pixel of a photograph.", "",
             "The result folder holds thickness.tif and uncertainty.tif (nm; NaN where not read), state.tif, thickness.png, "
                 + "histogram.csv, histogram.png and summary.json. It appears whole or not at all.", "",
-            "Example:", "  map --recipe oxide.toml --out result photo.png", ""},
+            "Examples:", "  map --recipe oxide.toml --out result photo.png",
+            "  map --recipe two-lights.toml --out result blue.tif red.tif", ""},
         footer = {"", Iridepth.CAUTION})
 final class MapCommand implements Callable<Integer> {
     @Spec
@@ -29,11 +31,12 @@ final class MapCommand implements Callable<Integer> {
     @Option(names = "--replace", description = "Replace a result folder that exists.")
     private boolean replace;
 
-    @Parameters(paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB.")
-    private Path photo;
+    @Parameters(arity = "1..*", paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB; where the recipe "
+            + "has several lights, one photo of the field under each, in their order, without moving camera or sample.")
+    private List<Path> photos;
 
     @Override
     public Integer call() {
-        return new MapRun(given.instrument(), photo, spec.commandLine().getOut()).write(out, replace);
+        return new MapRun(given.instrument(), photos, spec.commandLine().getOut()).write(out, replace);
     }
 }
