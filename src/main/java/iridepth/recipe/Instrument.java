@@ -158,7 +158,7 @@ public final class Instrument {
     }
 
     /**
-     * SHA-256 of the recipe and the files that it names, by name.
+     * SHA-256 of the recipe, the files that it names and the calibration, by name.
      *
      * @throws iridepth.photo.PhotoException if a file cannot be read
      */
@@ -167,7 +167,7 @@ public final class Instrument {
     }
 
     /**
-     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the photos.
+     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the calibration, the photos.
      *
      * @throws iridepth.photo.PhotoException if a file cannot be read
      */
@@ -182,7 +182,9 @@ public final class Instrument {
     private Map<String, String> own() {
         synchronized (hashing) {
             if (hashes == null) {
-                hashes = Provenance.of(recipe);
+                Map<String, String> made = Provenance.of(recipe);
+                calibration.ifPresent(file -> Provenance.add(made, recipe, CalibrationFile.in(file)));
+                hashes = made;
             }
             return hashes;
         }
