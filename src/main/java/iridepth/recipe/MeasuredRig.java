@@ -1,11 +1,13 @@
 package iridepth.recipe;
 
 import iridepth.curve.ColourCurve;
+import iridepth.curve.ThicknessRange;
 import iridepth.photo.ChannelNoise;
 import iridepth.photo.Encoding;
 import iridepth.photo.NoiseModel;
-import iridepth.photo.PhotoFile;
-import iridepth.photo.ShadingField;
+import iridepth.photo.OpenPhotos;
+import iridepth.photo.PhotoInfo;
+import iridepth.planning.Forecast;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.Arrays;
@@ -26,26 +28,32 @@ public record MeasuredRig(ColourCurve curve, ChannelNoise noise, NoiseModel nois
      *
      * @param known noise of the camera in fractions of full scale; empty to take it from the steps or the flat, which is right
      *              only as far as these are single exposures like the part's, not means of several
+     * @param shown thicknesses that the part's photo will show, which then refines the calibration; empty if hardly more than one
      * @return empty where the recipe names no flat, or one of its photos has not been taken yet, or nothing fixes the responses
      * @throws iridepth.photo.PhotoException if a photo that is there cannot be used
      */
-    public static Optional<MeasuredRig> of(Recipe recipe, Optional<NoiseModel> known) {
+    public static Optional<MeasuredRig> of(Recipe recipe, Optional<NoiseModel> known, Optional<ThicknessRange> shown) {
         CameraSpec camera = recipe.camera();
         boolean open = !camera.isColourManaged() && camera.sensitivities() == null && camera.steps().isEmpty();
-        if (open || camera.flat() == null || !Stream.concat(Stream.of(camera.flat(), camera.dark()), camera.steps().stream()
-                .map(CameraSpec.Step::image)).allMatch(file -> file == null || Files.exists(file))) {
+        Stream<Path> photos = Stream.concat(Stream.concat(camera.flats().stream(), camera.darks().stream()),
+                camera.steps().stream().flatMap(step -> step.images().stream()));
+        if (open || camera.flats().isEmpty() || !photos.allMatch(Files::exists)) {
             return Optional.empty();
         }
-        Path like = camera.steps().isEmpty() ? camera.flat() : camera.steps().get(0).image();
-        try (PhotoFile photo = PhotoFile.open(like)) {
+        try (OpenPhotos like = OpenPhotos.of(camera.steps().isEmpty() ? camera.flats() : camera.steps().get(0).images())) {
             Rig rig = Rig.of(recipe);
-            Encoding encoding = rig.encoding(photo.info());
-            NoiseModel noise = known.orElseGet(() -> rig.signal(photo).noise());
-            ShadingField flat = rig.flat().orElseThrow();
-            double[] level = new double[photo.info().channels()];
-            Arrays.setAll(level, flat::mean);
-            ColourCurve curve = Setup.of(rig, photo.info()).curve();
-            return Optional.of(new MeasuredRig(curve, ChannelNoise.of(noise, encoding, level), noise, encoding));
+            PhotoInfo info = like.files().get(0).info();
+            Encoding encoding = rig.encoding(info);
+            NoiseModel noise = known.orElseGet(() -> rig.signal(like.files()).noise());
+            double[] level = new double[info.channels() * recipe.lights().size()];
+            Arrays.setAll(level, c -> rig.flats().get(c / info.channels()).orElseThrow().mean(c % info.channels()));
+            ChannelNoise pixel = ChannelNoise.of(noise, encoding, level);
+            Setup setup = Setup.of(rig, info);
+            ColourCurve curve = shown.map(range -> {
+                Forecast first = Forecast.of(setup.curve(), pixel, Forecast.USUAL_LIMIT);
+                return setup.foreseen(rig, info, PhotoFilms.foreseen(first, setup.curve(), pixel, range)).curve();
+            }).orElse(setup.curve());
+            return Optional.of(new MeasuredRig(curve, pixel, noise, encoding));
         }
     }
 }

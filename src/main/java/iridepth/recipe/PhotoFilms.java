@@ -2,9 +2,11 @@ package iridepth.recipe;
 
 import iridepth.calibration.StepSignal;
 import iridepth.curve.ColourCurve;
-import iridepth.photo.Region;
+import iridepth.curve.ThicknessRange;
+import iridepth.photo.ChannelNoise;
 import iridepth.photo.Signal;
 import iridepth.photo.SignalSource;
+import iridepth.planning.Forecast;
 import iridepth.reading.FilmReader;
 import iridepth.reading.State;
 import iridepth.reading.ThicknessMap;
@@ -21,13 +23,15 @@ import java.util.Locale;
  */
 final class PhotoFilms {
     private static final double LEAST_SPACING_NM = 20;
-    private static final int MOST = 40;
+    private static final int MOST = 24;
     private static final double HALF_SLICE_NM = 1;
     private static final int FEWEST_PIXELS = 20;
     /** The thickness of a film counts as known to no better than this, so that a first calibration's error cannot set. */
     private static final double LEAST_UNCERTAINTY_NM = 3;
     private static final double SIGMAS = 3;
     private static final int BAND = 64;
+    /** Pixels of a slice in a photo still to be taken. */
+    private static final int FORESEEN_PIXELS = 1000;
 
     private final double first;
     private final double spacing;
@@ -49,13 +53,13 @@ final class PhotoFilms {
     /**
      * The films of a photo's first frame.
      *
-     * @param curve    the curve to read it on
+     * @param reader   reads it with the first calibration
+     * @param channels its channels
      * @param photo    the photo
-     * @param excluded regions to leave out
      * @return films in order of rising thickness; none where the photo shows less than about 20 nm of variation
      */
-    static List<StepSignal> gather(ColourCurve curve, SignalSource photo, List<Region> excluded) {
-        ThicknessMap map = FilmReader.of(curve, excluded).read(photo, 0, done -> { });
+    static List<StepSignal> gather(FilmReader reader, int channels, SignalSource photo) {
+        ThicknessMap map = reader.read(photo, 0, done -> { });
         float least = Float.POSITIVE_INFINITY;
         float most = Float.NEGATIVE_INFINITY;
         for (int i = 0; i < map.state().length; i++) {
@@ -67,9 +71,36 @@ final class PhotoFilms {
         if (!(most > least)) {
             return List.of();
         }
-        PhotoFilms films = new PhotoFilms(least, most, curve.channels());
+        PhotoFilms films = new PhotoFilms(least, most, channels);
         for (int y = 0; y < map.height(); y += BAND) {
             films.add(map, y, photo.rows(0, y, Math.min(BAND, map.height() - y)));
+        }
+        return films.signals();
+    }
+
+    /**
+     * The films that a photo still to be taken will show.
+     *
+     * @param forecast what its pixels will tell
+     * @param curve    the curve
+     * @param noise    noise of a pixel
+     * @param shown    thicknesses that it will show
+     */
+    static List<StepSignal> foreseen(Forecast forecast, ColourCurve curve, ChannelNoise noise, ThicknessRange shown) {
+        PhotoFilms films = new PhotoFilms(shown.fromNm(), shown.toNm(), curve.channels());
+        double step = forecast.thickness(1) - forecast.thickness(0);
+        double[] value = new double[curve.channels()];
+        double[] unused = new double[value.length];
+        for (int k = 0; k < films.count.length; k++) {
+            double thickness = films.first + k * films.spacing;
+            curve.at(thickness, value, unused, unused);
+            int at = (int) Math.max(0, Math.min(forecast.size() - 1, Math.round((thickness - forecast.thickness(0)) / step)));
+            films.count[k] = FORESEEN_PIXELS;
+            films.uncertainty[k] = FORESEEN_PIXELS * forecast.uncertainty(at).combinedNm();
+            for (int c = 0; c < value.length; c++) {
+                films.sum[k][c] = FORESEEN_PIXELS * value[c];
+                films.squares[k][c] = FORESEEN_PIXELS * (value[c] * value[c] + noise.variance(c, value[c]));
+            }
         }
         return films.signals();
     }

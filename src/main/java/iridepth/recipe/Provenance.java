@@ -37,12 +37,12 @@ public final class Provenance {
         files.add(recipe.file());
         files.addAll(recipe.tables());
         CameraSpec camera = recipe.camera();
-        for (Path named : new Path[] {camera.dark(), camera.flat(), camera.sensitivities()}) {
-            if (named != null) {
-                files.add(named);
-            }
+        files.addAll(camera.darks());
+        files.addAll(camera.flats());
+        if (camera.sensitivities() != null) {
+            files.add(camera.sensitivities());
         }
-        camera.steps().forEach(step -> files.add(step.image()));
+        camera.steps().forEach(step -> files.addAll(step.images()));
         return files;
     }
 

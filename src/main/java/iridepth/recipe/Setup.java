@@ -14,8 +14,10 @@ import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
+import iridepth.reading.FilmReader;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.function.Function;
@@ -35,6 +37,7 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
     /**
      * The set-up for a photo of a rig: from the steps where the recipe has any, else from what it states.
      *
+     * @param photo one of the photos, where several are read jointly
      * @throws RecipeException if the recipe does not fix the responses, or its steps cannot
      * @throws PhotoException  if a photo or a table contradicts it
      */
@@ -47,6 +50,11 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
     public static Setup of(Recipe recipe, Calibration calibration) {
         ColourCurve curve = calibration.curve(recipe.range(), recipe.range().step(recipe.stack()));
         return new Setup(calibration.view(), curve, Optional.of(calibration));
+    }
+
+    /** A reader of films on this curve, for a photo of a recipe. */
+    public FilmReader reader(Recipe recipe, PhotoInfo photo) {
+        return FilmReader.of(curve, recipe.excluded()).with(recipe.pins().pins(photo));
     }
 
     private static Setup calibrated(Rig rig, PhotoInfo photo) {
@@ -67,9 +75,14 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         if (calibration.isEmpty()) {
             return this;
         }
-        List<StepSignal> films = PhotoFilms.gather(curve, photo, rig.recipe().excluded());
-        Calibration better = ResponseFit.refine(input(rig, photo.info()), calibration.get(), films);
+        List<StepSignal> films = PhotoFilms.gather(reader(rig.recipe(), photo.info()), curve.channels(), photo);
+        Calibration better = ResponseFit.refine(input(rig, photo.parts().get(0).info()), calibration.get(), films);
         return better == calibration.get() ? this : of(rig.recipe(), better);
+    }
+
+    /** This set-up as films of a photo still to be taken will refine it. */
+    Setup foreseen(Rig rig, PhotoInfo photo, List<StepSignal> films) {
+        return calibration.map(first -> of(rig.recipe(), ResponseFit.refine(input(rig, photo), first, films))).orElse(this);
     }
 
     private static FitInput input(Rig rig, PhotoInfo photo) {
@@ -78,9 +91,17 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
         List<String> channels = photo.channels() == 1 ? List.of("grey") : List.of("red", "green", "blue");
         List<StepSignal> steps = Steps.measure(rig, channels.size());
+        List<String> names = new ArrayList<>();
+        List<Light> lights = new ArrayList<>();
+        for (Light light : recipe.lights()) {
+            for (String channel : channels) {
+                names.add(recipe.lights().size() == 1 ? channel : channel + ", " + light.name());
+                lights.add(light);
+            }
+        }
         try {
-            FitInput input = FitInput.of(channels, recipe.lights().get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()),
-                    view, recipe.range(), steps);
+            FitInput input = FitInput.of(names, lights.get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()), view,
+                    recipe.range(), steps).withLights(lights);
             if (recipe.inputs().isPresent()) {
                 input = input.withInputs(recipe.inputs().get());
             }
@@ -118,9 +139,10 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         return EffectiveResponses.ofSensor(table.columns(), table.columns().stream().map(table::spectrum).toList(), light);
     }
 
+    /** Sensitivity of each channel under each light. */
     private static List<Spectrum> sensitivities(Recipe recipe, PhotoInfo photo) {
         SpectralTable table = table(recipe, photo);
-        return table.columns().stream().map(table::spectrum).toList();
+        return recipe.lights().stream().flatMap(light -> table.columns().stream()).map(table::spectrum).toList();
     }
 
     private static SpectralTable table(Recipe recipe, PhotoInfo photo) {

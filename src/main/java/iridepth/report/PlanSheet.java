@@ -74,7 +74,7 @@ public record PlanSheet(String title, List<String> conditions, Plan plan, double
 
     private String order() {
         Forecast f = forecast();
-        if (f.pairs().isEmpty()) {
+        if (f.stretches().isEmpty()) {
             return "order        no two thicknesses are confusable: every pixel tells its order\n";
         }
         StringBuilder text = new StringBuilder(String.format(Locale.ROOT,
@@ -82,9 +82,10 @@ public record PlanSheet(String title, List<String> conditions, Plan plan, double
                 100 * f.meanWrongOrder(), 100 * f.doubtfulShare()));
         text.append(String.format(Locale.ROOT, "             free of doubt: a range from %s to %s nm\n",
                 nm(f.thickness(0)), nm(f.freeToNm())));
-        text.append(String.format(Locale.ROOT, "pairs        %d confusable (chi-square up to %s)%s\n", f.pairs().size(),
-                Numbers.significant(limit, 4), f.pairs().size() > MOST_PAIRS ? "; the widest:" : ":"));
-        f.pairs().stream().sorted(Comparator.comparingDouble(p -> p.thinFromNm() - p.thinToNm())).limit(MOST_PAIRS)
+        text.append(String.format(Locale.ROOT, "pairs        %d confusable pairs of thicknesses 1 nm apart (chi-square up to %s), in %d "
+                + "stretches%s\n", f.confusablePairs(), Numbers.significant(limit, 4), f.stretches().size(),
+                f.stretches().size() > MOST_PAIRS ? "; the widest:" : ":"));
+        f.stretches().stream().sorted(Comparator.comparingDouble(p -> p.thinFromNm() - p.thinToNm())).limit(MOST_PAIRS)
                 .forEach(p -> text.append("             ").append(words(p)).append('\n'));
         return text.toString();
     }
@@ -107,12 +108,12 @@ public record PlanSheet(String title, List<String> conditions, Plan plan, double
     }
 
     private String ranking() {
-        StringBuilder text = new StringBuilder(String.format(Locale.ROOT, "lights       %-52s %9s %11s %6s %9s %9s\n", "",
+        StringBuilder text = new StringBuilder(String.format(Locale.ROOT, "lights       %-52s %9s %11s %7s %9s %9s\n", "",
                 "wrong %", "confus. %", "pairs", "free to", "median u"));
         for (Option o : plan.ranked()) {
             Forecast f = o.forecast();
-            text.append(String.format(Locale.ROOT, "             %-52s %9.2f %11.1f %6d %9s %9s\n", o.name(),
-                    100 * f.meanWrongOrder(), 100 * f.doubtfulShare(), f.pairs().size(), nm(f.freeToNm()),
+            text.append(String.format(Locale.ROOT, "             %-52s %9.2f %11.1f %7d %9s %9s\n", o.name(),
+                    100 * f.meanWrongOrder(), 100 * f.doubtfulShare(), f.confusablePairs(), nm(f.freeToNm()),
                     nm(f.medianUncertaintyNm())));
         }
         return text.toString();
@@ -124,7 +125,7 @@ public record PlanSheet(String title, List<String> conditions, Plan plan, double
         List<String> remarks = new ArrayList<>(List.of(title));
         remarks.addAll(conditions);
         remarks.add("light: " + plan.option().name());
-        f.pairs().forEach(p -> remarks.add("confusable: " + words(p)));
+        f.stretches().forEach(p -> remarks.add("confusable: " + words(p)));
         plan.design().ifPresent(d -> steps(d).lines().forEach(remarks::add));
         if (!plan.ranked().isEmpty()) {
             ranking().lines().forEach(remarks::add);
@@ -161,16 +162,26 @@ public record PlanSheet(String title, List<String> conditions, Plan plan, double
         }
         if (plan.design().isPresent()) {
             double[] steps = plan.design().get().thicknesses();
-            upper = upper.with(Curve.points("steps to calibrate with", steps, new double[steps.length]));
+            upper = upper.with(Curve.points("steps to calibrate with", steps, level(steps.length)));
+        }
+        if (f.stretches().isEmpty()) {
+            LineFigure.write(png, List.of(upper), UPPER + 80);
+            return;
         }
         double[] wrong = new double[x.length];
         Arrays.setAll(wrong, i -> 100 * f.wrongOrder(i));
         LineFigure lower = LineFigure.of("", "thickness (nm)", "pixels that take a wrong order (%)").zeroBased()
-                .with(Curve.line("wrong order, each pixel on its own", x, wrong).inColour(0xCC79A7));
-        if (!f.pairs().isEmpty()) {
-            lower = lower.xLimit("a range up to here is free of order doubt", f.freeToNm());
-        }
+                .with(Curve.line("wrong order, each pixel on its own", x, wrong).inColour(0xCC79A7))
+                .xLimit("a range up to here is free of order doubt", f.freeToNm());
         LineFigure.write(png, List.of(upper, lower), UPPER, LOWER);
+    }
+
+    /** A level just above the axis, so that points on it show whole. */
+    private double[] level(int count) {
+        double[] level = new double[count];
+        Arrays.fill(level, 0.03 * Arrays.stream(cut(values(ExpectedUncertainty::combinedNm))).filter(v -> !Double.isNaN(v)).max()
+                .orElse(1));
+        return level;
     }
 
     /** The values as far as they stay on the figure. */

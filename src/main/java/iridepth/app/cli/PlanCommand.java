@@ -84,6 +84,10 @@ final class PlanCommand implements Callable<Integer> {
             + "uncertainty of the steps' thickness by the reference instrument, nm (default: 0.5).")
     private double stepUncertainty;
 
+    @Option(names = "--shown", paramLabel = "FROM:TO", description = "With a recipe whose steps are photographed: thicknesses that "
+            + "the part's photo will show, on which map refines the calibration (default: hardly more than one).")
+    private String shown;
+
     @Option(names = "--out", paramLabel = "FILE.png", description = "The figure; its table goes beside it as "
             + "FILE.csv.")
     private Path out;
@@ -134,7 +138,8 @@ final class PlanCommand implements Callable<Integer> {
         String title = String.format(Locale.ROOT, "Plan for %s, %.0f to %.0f nm", film, nm.fromNm(), nm.toNm());
         boolean asGiven = given != null && lights.isEmpty() && stack == null && range == null && !cameraOptions.given()
                 && !viewOptions.given();
-        Optional<MeasuredRig> measured = asGiven ? MeasuredRig.of(given, cameraOptions.known(given.camera())) : Optional.empty();
+        Optional<MeasuredRig> measured = asGiven ? MeasuredRig.of(given, cameraOptions.known(given.camera()),
+                Optional.ofNullable(shown).map(ThicknessRange::parse)) : Optional.empty();
         return measured.isPresent() ? measured(title, given, subject, measured.get()) : supposed(title, given, subject);
     }
 
