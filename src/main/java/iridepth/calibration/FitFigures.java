@@ -19,14 +19,26 @@ import java.util.List;
  * @param aperture          estimate of the numerical aperture, 0 for a single direction
  * @param apertureStated    the stated one
  * @param apertureSigma     standard uncertainty of the estimate
+ * @param index             the film's index as fitted, null where it was not
+ * @param expectedErrorNm   systematic error that readings between the outermost steps are expected to have, root mean square over
+ *                          the best 90 % of thicknesses: the stated uncertainty times what the leave-one-out errors say of it
+ * @param remarks           what a user should look into, in sentences; empty where nothing is amiss
  */
 public record FitFigures(List<StepResidual> residuals, List<LeaveOneOut> leaveOneOut, double chiSquare,
                          double degreesOfFreedom, double pValue, double logEvidence, double determined, double condition,
-                         double misfit, double stepNm, double aperture, double apertureStated, double apertureSigma) {
+                         double misfit, double stepNm, double aperture, double apertureStated, double apertureSigma,
+                         IndexEstimate index, double expectedErrorNm, List<String> remarks) {
     /** Keeps copies of the lists. */
     public FitFigures {
         residuals = List.copyOf(residuals);
         leaveOneOut = List.copyOf(leaveOneOut);
+        remarks = List.copyOf(remarks);
+    }
+
+    /** These figures with remarks. */
+    FitFigures with(List<String> other) {
+        return new FitFigures(residuals, leaveOneOut, chiSquare, degreesOfFreedom, pValue, logEvidence, determined, condition, misfit,
+                stepNm, aperture, apertureStated, apertureSigma, index, expectedErrorNm, other);
     }
 
     /**
