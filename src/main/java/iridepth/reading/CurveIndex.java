@@ -39,6 +39,16 @@ record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, do
         return of(curve, photo::variance, LightLevels.of(light[0], light[1]));
     }
 
+    /** The table at a middle level of light. */
+    TangentTable middle() {
+        return tables[tables.length / 2];
+    }
+
+    /** Whether the curve turns back on itself, so that only the slope of a film tells how it goes on there. */
+    boolean turnsBack() {
+        return curve.channels() == 1;
+    }
+
     /** Whether a candidate passes the off-curve test. */
     boolean explains(float thicknessNm, float cost, int level) {
         TangentTable table = tables[level];

@@ -31,7 +31,7 @@ final class JumpPenalty {
     }
 
     static JumpPenalty of(CurveIndex index) {
-        return new JumpPenalty(index.tables()[index.tables().length / 2], steepest(index));
+        return new JumpPenalty(index.middle(), steepest(index));
     }
 
     /** The finest fringe of a curve, nm. */

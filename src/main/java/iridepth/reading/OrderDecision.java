@@ -1,7 +1,5 @@
 package iridepth.reading;
 
-import java.util.Arrays;
-
 /**
  * Decides the order of every pixel, row after row from the bottom up, by what the two sweeps downwards say from above and from
  * the sides, and by what has been decided below and beside: the candidate of least
@@ -13,21 +11,14 @@ import java.util.Arrays;
  * likely comes out as one of them throughout. Rows are gone through by turns from the left and from the right.
  */
 final class OrderDecision {
-    private static final float T = JumpPenalty.TRUNCATION;
-
     private final CurveIndex index;
-    private final JumpPenalty penalty;
-    private final float[] below;
-    private final byte[] gapBelow;
-    private float beside;
-    private int gapBeside;
+    private final Continuity below;
+    private final Continuity beside;
 
     OrderDecision(CurveIndex index, JumpPenalty penalty, int width) {
         this.index = index;
-        this.penalty = penalty;
-        this.below = new float[width];
-        this.gapBelow = new byte[width];
-        Arrays.fill(gapBelow, (byte) Sweep.WIDEST_GAP);
+        this.below = Continuity.of(index, penalty, width);
+        this.beside = Continuity.of(index, penalty, 1);
     }
 
     /** Decides the next row upwards. */
@@ -36,7 +27,7 @@ final class OrderDecision {
         boolean forward = (y & 1) == 0;
         int candidate = forward ? 0 : row.thickness().length;
         int open = forward ? 0 : row.cost().length;
-        gapBeside = Sweep.WIDEST_GAP;
+        beside.forget();
         for (int i = 0; i < row.width(); i++) {
             int x = forward ? i : row.width() - 1 - i;
             int kind = row.kind(x);
@@ -51,7 +42,8 @@ final class OrderDecision {
             } else {
                 choose(x, row, candidate, open, kind, read);
             }
-            remember(x, read.thickness()[x]);
+            below.go(x, read.thickness()[x]);
+            beside.go(0, read.thickness()[x]);
             candidate += forward ? count : 0;
             open += forward ? priced : 0;
         }
@@ -64,8 +56,7 @@ final class OrderDecision {
         float second = Float.POSITIVE_INFINITY;
         for (int k = 0; k < count; k++) {
             float d = row.thickness()[candidate + k];
-            float stiffness = penalty.stiffness(d);
-            float energy = row.total(open + k) + jump(d - below[x], stiffness, gapBelow[x]) + jump(d - beside, stiffness, gapBeside);
+            float energy = row.total(open + k) + below.cost(x, d) + beside.cost(0, d);
             if (energy < least) {
                 second = least;
                 least = energy;
@@ -75,24 +66,5 @@ final class OrderDecision {
             }
         }
         read.take(x, row, candidate + best, open + best, second - least, index);
-    }
-
-    private static float jump(float difference, float stiffness, int gap) {
-        if (gap >= Sweep.WIDEST_GAP) {
-            return 0;
-        }
-        return Math.min(T, difference * difference * stiffness / (1 + gap)) * (1 - (float) gap / Sweep.WIDEST_GAP);
-    }
-
-    private void remember(int x, float d) {
-        if (d == d) {
-            below[x] = d;
-            gapBelow[x] = 0;
-            beside = d;
-            gapBeside = 0;
-        } else {
-            gapBelow[x] = (byte) Math.min(Sweep.WIDEST_GAP, gapBelow[x] + 1);
-            gapBeside++;
-        }
     }
 }

@@ -126,6 +126,13 @@ final class OrderEvidence {
      * @param pixels number of pixels of the region
      */
     List<OrderChain> alternatives(long pixels) {
+        List<Link> chains = new ArrayList<>(chains(pixels, 1));
+        chains.addAll(chains(pixels, -1));
+        return likeliest(chains);
+    }
+
+    /** The chains that rise, or fall, with the thickness chosen. */
+    private List<Link> chains(long pixels, int direction) {
         int heard = witnesses.values().stream().mapToInt(Integer::intValue).sum();
         List<Link> chains = null;
         int before = 0;
@@ -136,10 +143,10 @@ final class OrderEvidence {
                 continue;
             }
             List<Link> links = links(bin, count, (double) pixels / heard);
-            chains = chains == null ? links : extended(chains, links, STEEPEST * (bin - before) + 1);
+            chains = chains == null ? links : extended(chains, links, direction, STEEPEST * (bin - before) + 1);
             before = bin;
         }
-        return chains == null ? List.of() : likeliest(chains);
+        return chains == null ? List.of() : chains;
     }
 
     /** The alternatives of one bin. */
@@ -171,13 +178,17 @@ final class OrderEvidence {
     }
 
     /** Each link with the likeliest chain that leads to it. */
-    private static List<Link> extended(List<Link> chains, List<Link> links, int reach) {
+    private static List<Link> extended(List<Link> chains, List<Link> links, int direction, int reach) {
         List<Link> result = new ArrayList<>();
         for (Link link : links) {
-            chains.stream().filter(chain -> Math.abs(chain.bin() - link.bin()) <= reach)
+            chains.stream().filter(chain -> isWithin((link.bin() - chain.bin()) * direction, reach))
                     .min(Comparator.comparingDouble(Link::evidence)).ifPresent(chain -> result.add(link.after(chain)));
         }
         return result;
+    }
+
+    private static boolean isWithin(int step, int reach) {
+        return step >= 0 && step <= reach;
     }
 
     private List<OrderChain> likeliest(List<Link> chains) {

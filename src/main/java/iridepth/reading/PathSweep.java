@@ -23,9 +23,10 @@ final class PathSweep extends Sweep {
             here.loss[at] = 0;
             return;
         }
-        float fromBeside = weightBeside(i);
-        float fromBefore = weightBefore(i);
-        float scale = scale(fromBeside, fromBefore);
+        float fromBeside = weightBeside();
+        float fromBefore = weightBefore();
+        float mean = mean();
+        float authority = authority();
         for (int k = 0; k < count; k++) {
             float d = row.thickness()[candidate + k];
             float stiffness = penalty.stiffness(d);
@@ -36,9 +37,10 @@ final class PathSweep extends Sweep {
             if (fromBefore > 0) {
                 said += fromBefore * message(d, stiffness / (1 + before().gap(i)), before(), beforeAt(), before().count(i));
             }
-            message[open + k] = said * scale;
+            said *= mean;
+            message[open + k] = said * authority;
             here.value[at + k] = d;
-            here.loss[at + k] = row.cost()[open + k] + said * scale;
+            here.loss[at + k] = row.cost()[open + k] + said;
         }
         normalise(here.loss, at, count);
     }

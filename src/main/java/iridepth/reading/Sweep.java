@@ -11,12 +11,18 @@ package iridepth.reading;
  * short candidate lists, with two predecessors so that each path fans out over a quarter of the picture (G. Facciolo, C. de
  * Franchis and E. Meinhardt, MGM: a significantly more global matching for stereovision, BMVC 2015).
  *
+ * <p>The mean is weighted by authority, so that what follows from pixels that leave no choice is not diluted by what follows
+ * from nothing, such as behind an obstacle.
+ *
  * <p>A pixel without candidates lets what reaches it pass. What it passes weighs less with each pixel of the gap, and nothing
  * beyond {@link #WIDEST_GAP}.
  */
 abstract class Sweep {
     /** Across more pixels without a word a film says nothing of its order. */
     static final int WIDEST_GAP = 8;
+    /** Share of its authority that a pixel takes over from its neighbours. */
+    private static final float FADING = 0.999f;
+    private static final float LEAST_AUTHORITY = 0.25f;
 
     private final boolean forward;
     private SweepRow before;
@@ -26,6 +32,9 @@ abstract class Sweep {
     private int beforeAt;
     /** Where those of the pixel in work begin. */
     private int at;
+    private float beside;
+    private float previous;
+    private float nearness;
 
     /**
      * @param width   pixels a row
@@ -70,8 +79,9 @@ abstract class Sweep {
             open -= forward ? 0 : priced;
             if (kind > 0) {
                 here.reserve(kind);
+                hear(i);
                 weigh(row, candidate, kind, open, i, message);
-                here.close(i, kind, 0);
+                here.close(i, kind, 0, kind == 1 ? 1 : FADING * Math.max(beside, previous));
             } else {
                 pass(i);
             }
@@ -100,7 +110,7 @@ abstract class Sweep {
         boolean hasBeside = i > 0 && here.count(i - 1) > 0;
         boolean hasBefore = before.count(i) > 0;
         if (!hasBeside && !hasBefore) {
-            here.close(i, 0, 0);
+            here.close(i, 0, 0, 0);
             return;
         }
         boolean takeBeside = hasBeside && (!hasBefore || here.gap(i - 1) <= before.gap(i));
@@ -109,7 +119,7 @@ abstract class Sweep {
         int gap = from.gap(index) + 1;
         int entries = gap > WIDEST_GAP ? 0 : from.count(index);
         here.reserve(entries);
-        here.carry(from, takeBeside ? besideAt : beforeAt, i, entries, gap);
+        here.carry(from, takeBeside ? besideAt : beforeAt, i, entries, gap, from.authority(index));
     }
 
     /** The row in work. */
@@ -137,23 +147,37 @@ abstract class Sweep {
         return beforeAt;
     }
 
-    /** What the pixel beside weighs, 0 where there is none. */
-    final float weightBeside(int i) {
-        return i > 0 && here.count(i - 1) > 0 ? weight(here.gap(i - 1)) : 0;
-    }
-
-    /** What the pixel in the row before weighs, 0 where there is none. */
-    final float weightBefore(int i) {
-        return before.count(i) > 0 ? weight(before.gap(i)) : 0;
+    /** Works out what the two neighbours behind weigh. */
+    private void hear(int i) {
+        float besideGap = i > 0 && here.count(i - 1) > 0 ? weight(here.gap(i - 1)) : 0;
+        float beforeGap = before.count(i) > 0 ? weight(before.gap(i)) : 0;
+        beside = besideGap == 0 ? 0 : besideGap * Math.max(LEAST_AUTHORITY, here.authority(i - 1));
+        previous = beforeGap == 0 ? 0 : beforeGap * Math.max(LEAST_AUTHORITY, before.authority(i));
+        nearness = Math.max(besideGap, beforeGap);
     }
 
     private static float weight(int gap) {
         return 1 - (float) gap / (WIDEST_GAP + 1);
     }
 
-    /** What scales the weighted sum of two messages to their mean, less where both came over a gap. */
-    static float scale(float beside, float before) {
-        return beside + before > 0 ? Math.max(beside, before) / (beside + before) : 0;
+    /** What the pixel beside weighs, 0 where there is none. */
+    final float weightBeside() {
+        return beside;
+    }
+
+    /** What the pixel in the row before weighs, 0 where there is none. */
+    final float weightBefore() {
+        return previous;
+    }
+
+    /** What makes the weighted sum of two messages their mean, less where both came over a gap. */
+    final float mean() {
+        return beside + previous > 0 ? nearness / (beside + previous) : 0;
+    }
+
+    /** What makes that mean what is to be said to the pixel itself: less where it rests on little. */
+    final float authority() {
+        return nearness > 0 ? Math.max(beside, previous) / nearness : 0;
     }
 
     /** Takes the least of the losses of a pixel from all of them. */

@@ -11,6 +11,7 @@ final class SweepRow {
     private final int fields;
     private final byte[] count;
     private final byte[] gap;
+    private final float[] authority;
     /** Losses of all entries. */
     float[] loss;
     /** The values of all entries, {@link #fields} each. */
@@ -22,6 +23,7 @@ final class SweepRow {
         this.fields = fields;
         this.count = new byte[width];
         this.gap = new byte[width];
+        this.authority = new float[width];
         this.loss = new float[2 * width];
         this.value = new float[2 * width * fields];
     }
@@ -30,6 +32,7 @@ final class SweepRow {
         this.fields = other.fields;
         this.count = other.count.clone();
         this.gap = other.gap.clone();
+        this.authority = other.authority.clone();
         this.loss = Arrays.copyOf(other.loss, other.size);
         this.value = Arrays.copyOf(other.value, other.size * fields);
         this.size = other.size;
@@ -54,17 +57,18 @@ final class SweepRow {
     }
 
     /** Ends a pixel whose entries have been put in place. */
-    void close(int i, int entries, int distance) {
+    void close(int i, int entries, int distance, float itsAuthority) {
         count[i] = (byte) entries;
         gap[i] = (byte) distance;
+        authority[i] = itsAuthority;
         size += entries;
     }
 
     /** Copies the entries of a pixel, which begin at a place in another row or this, to the next pixel. */
-    void carry(SweepRow from, int at, int i, int entries, int distance) {
+    void carry(SweepRow from, int at, int i, int entries, int distance, float itsAuthority) {
         System.arraycopy(from.loss, at, loss, size, entries);
         System.arraycopy(from.value, at * fields, value, size * fields, entries * fields);
-        close(i, entries, distance);
+        close(i, entries, distance, itsAuthority);
     }
 
     /** Number of entries of a pixel. */
@@ -75,5 +79,10 @@ final class SweepRow {
     /** How many pixels ago the entries of a pixel come from; 0 for its own. */
     int gap(int i) {
         return gap[i];
+    }
+
+    /** How far what a pixel says rests on pixels that leave no choice, up to 1. */
+    float authority(int i) {
+        return authority[i];
     }
 }

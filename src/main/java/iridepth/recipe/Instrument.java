@@ -31,7 +31,6 @@ public final class Instrument {
     private Rig rig;
     private Channels channels;
     private Setup setup;
-    private FilmReader reader;
 
     /** What the curve depends on: the number of channels, and their matrix to XYZ where the file tells it. */
     private record Channels(int count, String toXyz) {
@@ -121,7 +120,6 @@ public final class Instrument {
         if (!wanted.equals(channels)) {
             Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
                     : Setup.of(recipe, CalibrationFile.read(calibration.get(), recipe));
-            reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;
         }
@@ -141,8 +139,7 @@ public final class Instrument {
 
     /** The reader of films for a photo, on the curve of {@link #setup}. */
     public synchronized FilmReader reader(PhotoInfo photo) {
-        setup(photo);
-        return reader;
+        return setup(photo).reader(recipe, photo);
     }
 
     /** What a user should know of the tables that the recipe uses, a line each. */
@@ -161,7 +158,7 @@ public final class Instrument {
     }
 
     /**
-     * SHA-256 of the recipe and the files that it names, by name.
+     * SHA-256 of the recipe, the files that it names and the calibration, by name.
      *
      * @throws iridepth.photo.PhotoException if a file cannot be read
      */
@@ -170,7 +167,7 @@ public final class Instrument {
     }
 
     /**
-     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the photos.
+     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the calibration, the photos.
      *
      * @throws iridepth.photo.PhotoException if a file cannot be read
      */
@@ -185,7 +182,9 @@ public final class Instrument {
     private Map<String, String> own() {
         synchronized (hashing) {
             if (hashes == null) {
-                hashes = Provenance.of(recipe);
+                Map<String, String> made = Provenance.of(recipe);
+                calibration.ifPresent(file -> Provenance.add(made, recipe, CalibrationFile.in(file)));
+                hashes = made;
             }
             return hashes;
         }

@@ -4,7 +4,6 @@ import iridepth.calibration.StepSignal;
 import iridepth.curve.ColourCurve;
 import iridepth.curve.ThicknessRange;
 import iridepth.photo.ChannelNoise;
-import iridepth.photo.Region;
 import iridepth.photo.Signal;
 import iridepth.photo.SignalSource;
 import iridepth.planning.Forecast;
@@ -24,7 +23,7 @@ import java.util.Locale;
  */
 final class PhotoFilms {
     private static final double LEAST_SPACING_NM = 20;
-    private static final int MOST = 40;
+    private static final int MOST = 24;
     private static final double HALF_SLICE_NM = 1;
     private static final int FEWEST_PIXELS = 20;
     /** The thickness of a film counts as known to no better than this, so that a first calibration's error cannot set. */
@@ -54,13 +53,13 @@ final class PhotoFilms {
     /**
      * The films of a photo's first frame.
      *
-     * @param curve    the curve to read it on
+     * @param reader   reads it with the first calibration
+     * @param channels its channels
      * @param photo    the photo
-     * @param excluded regions to leave out
      * @return films in order of rising thickness; none where the photo shows less than about 20 nm of variation
      */
-    static List<StepSignal> gather(ColourCurve curve, SignalSource photo, List<Region> excluded) {
-        ThicknessMap map = FilmReader.of(curve, excluded).read(photo, 0, done -> { });
+    static List<StepSignal> gather(FilmReader reader, int channels, SignalSource photo) {
+        ThicknessMap map = reader.read(photo, 0, done -> { });
         float least = Float.POSITIVE_INFINITY;
         float most = Float.NEGATIVE_INFINITY;
         for (int i = 0; i < map.state().length; i++) {
@@ -72,7 +71,7 @@ final class PhotoFilms {
         if (!(most > least)) {
             return List.of();
         }
-        PhotoFilms films = new PhotoFilms(least, most, curve.channels());
+        PhotoFilms films = new PhotoFilms(least, most, channels);
         for (int y = 0; y < map.height(); y += BAND) {
             films.add(map, y, photo.rows(0, y, Math.min(BAND, map.height() - y)));
         }

@@ -14,6 +14,7 @@ import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
+import iridepth.reading.FilmReader;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
 import java.util.ArrayList;
@@ -51,6 +52,11 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         return new Setup(calibration.view(), curve, Optional.of(calibration));
     }
 
+    /** A reader of films on this curve, for a photo of a recipe. */
+    public FilmReader reader(Recipe recipe, PhotoInfo photo) {
+        return FilmReader.of(curve, recipe.excluded()).with(recipe.pins().pins(photo));
+    }
+
     private static Setup calibrated(Rig rig, PhotoInfo photo) {
         Recipe recipe = rig.recipe();
         FitInput input = input(rig, photo);
@@ -69,7 +75,7 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         if (calibration.isEmpty()) {
             return this;
         }
-        List<StepSignal> films = PhotoFilms.gather(curve, photo, rig.recipe().excluded());
+        List<StepSignal> films = PhotoFilms.gather(reader(rig.recipe(), photo.info()), curve.channels(), photo);
         Calibration better = ResponseFit.refine(input(rig, photo.parts().get(0).info()), calibration.get(), films);
         return better == calibration.get() ? this : of(rig.recipe(), better);
     }

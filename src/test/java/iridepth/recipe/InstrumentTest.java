@@ -75,6 +75,16 @@ class InstrumentTest {
     }
 
     @Test
+    void hashesNameTheCalibrationThatWasMadeBefore() throws IOException {
+        Path photo = photo("a.png", BufferedImage.TYPE_INT_RGB);
+        Path calibration = Files.createDirectory(folder.resolve("calibration"));
+        Files.writeString(calibration.resolve("calibration.json"), "{}");
+        Instrument instrument = Instrument.of(instrument().recipe(), calibration);
+        assertEquals(List.of("r.toml", "lamp.csv", "calibration/calibration.json", "a.png"),
+                List.copyOf(instrument.hashes(photo).keySet()));
+    }
+
+    @Test
     void photoElsewhereOfATakenNameGoesByItsWholePath() throws IOException {
         Path elsewhere = Files.createDirectory(folder.resolve("other"));
         Path recipes = Files.createDirectory(folder.resolve("recipes"));

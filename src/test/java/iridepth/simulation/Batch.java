@@ -21,12 +21,13 @@ public record Batch(Path recipe, Path photos, Path stack, List<double[]> truth) 
      * Writes a batch.
      *
      * @param dir folder, made where it is missing
-     * @param scene rig, stack, flat and what is believed of them; the noise of each photograph follows from its seed
+     * @param scene rig, stack, flat, steps and what is believed of them; without steps the sensor is known; the noise of each
+     *     photograph follows from the seed
      * @param fields the samples
      * @param more lines to add to the recipe
      */
     public static Batch write(Path dir, Scene scene, List<Field> fields, String more) throws IOException {
-        SceneFolder folder = SceneFolder.write(dir, scene, true);
+        SceneFolder folder = SceneFolder.write(dir, scene, scene.steps() == null);
         Files.delete(folder.photo());
         Files.writeString(folder.recipe(), Files.readString(folder.recipe()) + more);
         Path photos = Files.createDirectories(dir.resolve("photos"));
@@ -45,13 +46,10 @@ public record Batch(Path recipe, Path photos, Path stack, List<double[]> truth) 
         return new Batch(folder.recipe(), photos, stack, truth);
     }
 
-    /** A draining soap film, frame by frame, before a camera of known sensitivities. */
+    /** A draining soap film, frame by frame, before a camera that nobody has characterised, with steps. */
     public static Batch soap(Path dir, int frames) throws IOException {
         List<Scene> scenes = Fields.drainingSoap(frames);
-        Scene s = scenes.get(0);
-        Scene known = new Scene("Draining soap film", s.rig(), s.stack(), s.flatStack(), s.rangeNm(), null, s.field(),
-                s.believedLamp(), s.believedView(), s.seed());
-        return write(dir, known, scenes.stream().map(Scene::field).toList(), "");
+        return write(dir, scenes.get(0), scenes.stream().map(Scene::field).toList(), "");
     }
 
     /** Oxide of about 100 nm on small pieces of silicon, tilted by 4 nm across, before a camera of known sensitivities. */

@@ -97,7 +97,7 @@ public record Sensor(String name, double[][] curves) {
      * let through far from it, and common cut-offs towards the ultraviolet and the infrared.
      */
     public static Sensor drawn(long seed) {
-        Random random = new Random(seed);
+        Random random = new Random(seed * 0x9E3779B97F4A7C15L);
         Spectrum window = edge(between(random, 395, 420), between(random, 2, 6)).times(edge(between(random, 655, 705),
                 -between(random, 3, 12)));
         double[] centre = {between(random, 590, 615), between(random, 522, 545), between(random, 448, 468)};

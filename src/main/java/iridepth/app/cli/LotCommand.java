@@ -2,11 +2,11 @@ package iridepth.app.cli;
 
 import iridepth.photo.PhotoList;
 import iridepth.recipe.Instrument;
-import iridepth.recipe.Recipe;
 import java.nio.file.Path;
 import java.util.List;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Parameters;
@@ -28,8 +28,8 @@ final class LotCommand implements Callable<Integer> {
     @Spec
     private CommandSpec spec;
 
-    @Option(names = "--recipe", required = true, paramLabel = "FILE", description = "What is known of film, view, light and camera.")
-    private Path recipe;
+    @Mixin
+    private InstrumentOptions given;
 
     @Option(names = "--out", required = true, paramLabel = "DIR", description = "The lot's folder: a new one, or one that this command "
             + "has begun.")
@@ -40,7 +40,7 @@ final class LotCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
-        Instrument instrument = Instrument.of(Recipe.read(recipe));
+        Instrument instrument = given.ofOnePhoto();
         List<Path> files = PhotoList.of(photos, file -> !instrument.uses(file));
         return LotRun.of(instrument, files, out, spec.commandLine().getOut()).write();
     }

@@ -1,11 +1,10 @@
 package iridepth.app.cli;
 
-import iridepth.recipe.Instrument;
-import iridepth.recipe.Recipe;
 import java.nio.file.Path;
 import java.util.List;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Parameters;
@@ -23,15 +22,11 @@ final class MapCommand implements Callable<Integer> {
     @Spec
     private CommandSpec spec;
 
-    @Option(names = "--recipe", required = true, paramLabel = "FILE", description = "What is known of film, view, light and camera.")
-    private Path recipe;
+    @Mixin
+    private InstrumentOptions given;
 
     @Option(names = "--out", required = true, paramLabel = "DIR", description = "The result folder.")
     private Path out;
-
-    @Option(names = "--calibration", paramLabel = "DIR", description = "What calibrate wrote, to be taken instead of fitting the "
-            + "recipe's steps anew.")
-    private Path calibration;
 
     @Option(names = "--replace", description = "Replace a result folder that exists.")
     private boolean replace;
@@ -42,8 +37,6 @@ final class MapCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
-        Recipe read = Recipe.read(recipe);
-        Instrument instrument = calibration == null ? Instrument.of(read) : Instrument.of(read, calibration);
-        return new MapRun(instrument, photos, spec.commandLine().getOut()).write(out, replace);
+        return new MapRun(given.instrument(), photos, spec.commandLine().getOut()).write(out, replace);
     }
 }

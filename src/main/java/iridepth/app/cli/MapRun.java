@@ -6,8 +6,9 @@ import iridepth.photo.SignalSource;
 import iridepth.quality.Tolerance;
 import iridepth.quality.Tolerance.Judgement;
 import iridepth.quality.Verdict;
+import iridepth.reading.DoubtfulRegion;
 import iridepth.reading.FilmReader;
-import iridepth.reading.ThicknessMap;
+import iridepth.reading.OtherCandidates;
 import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
 import iridepth.recipe.Setup;
@@ -18,6 +19,7 @@ import iridepth.report.ResultFolder;
 import iridepth.report.SummaryJson;
 import java.io.PrintWriter;
 import java.nio.file.Path;
+import java.util.List;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
@@ -36,16 +38,16 @@ record MapRun(Instrument instrument, List<Path> photos, PrintWriter terminal) {
             SignalSource signal = instrument.signal(files.files());
             PhotoInfo info = signal.info();
             Setup setup = instrument.setup(signal);
-            FilmReader reader = FilmReader.of(setup.curve(), recipe().excluded());
+            OtherCandidates others = OtherCandidates.of(setup.curve(), recipe().excluded(), signal, 0);
             try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
-                    recipe().range().fromNm(), recipe().range().toNm())) {
-                read(reader, signal, map);
+                    recipe().range().fromNm(), recipe().range().toNm(), others)) {
+                List<DoubtfulRegion> doubts = read(setup.reader(recipe(), info), signal, map);
                 Optional<Tolerance> tolerance = Optional.ofNullable(recipe().tolerance()).map(t -> Tolerance.between(t[0], t[1]));
                 map.finish(recipe().title(), tolerance);
-                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, tolerance.map(map::judge), hashes.join());
+                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, doubts, tolerance.map(map::judge), hashes.join());
                 SummaryJson.write(findings.summary(), folder.file("summary.json"));
                 PagePhoto preview = PagePhoto.of(signal.parts().get(0), 0, !recipe().camera().isColourManaged());
-                ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview, List.of()));
+                ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview));
                 folder.commit();
                 findings.tell(terminal);
                 terminal.println("wrote        " + out);
@@ -61,11 +63,10 @@ record MapRun(Instrument instrument, List<Path> photos, PrintWriter terminal) {
         return instrument.recipe();
     }
 
-    private void read(FilmReader reader, SignalSource signal, MapFolder map) {
-        long pixels = (long) signal.info().width() * signal.info().height();
+    private static List<DoubtfulRegion> read(FilmReader reader, SignalSource signal, MapFolder map) {
+        long pixels = 2L * signal.info().width() * signal.info().height();
         try (ProgressBar bar = new ProgressBar("reading", pixels)) {
-            ThicknessMap result = reader.read(signal, 0, bar);
-            map.add(0, result.thickness(), result.random(), result.systematic(), result.state());
+            return reader.read(signal, 0, map, bar);
         }
     }
 }

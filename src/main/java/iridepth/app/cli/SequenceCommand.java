@@ -3,7 +3,6 @@ package iridepth.app.cli;
 import iridepth.photo.PhotoList;
 import iridepth.quality.Position;
 import iridepth.recipe.Instrument;
-import iridepth.recipe.Recipe;
 import java.nio.file.Path;
 import java.util.List;
 import java.util.Optional;
@@ -30,8 +29,8 @@ final class SequenceCommand implements Callable<Integer> {
     @Spec
     private CommandSpec spec;
 
-    @Option(names = "--recipe", required = true, paramLabel = "FILE", description = "What is known of film, view, light and camera.")
-    private Path recipe;
+    @Mixin
+    private InstrumentOptions given;
 
     @Option(names = "--interval", required = true, paramLabel = "S", description = "Seconds from one photo to the next.")
     private double interval;
@@ -64,7 +63,7 @@ final class SequenceCommand implements Callable<Integer> {
             throw new IllegalArgumentException("say what to follow: --point X,Y or other places, --line X0,Y0,X1,Y1, or both");
         }
         Optional<Position[]> ends = Optional.ofNullable(line).map(text -> Coordinates.line("--line", text));
-        Instrument instrument = Instrument.of(Recipe.read(recipe));
+        Instrument instrument = given.ofOnePhoto();
         List<Path> files = PhotoList.of(photos, file -> !instrument.uses(file));
         return new SequenceRun(instrument, files, interval, where, ends, width, spec.commandLine().getOut()).write(out, replace);
     }
