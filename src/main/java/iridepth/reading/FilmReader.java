@@ -99,7 +99,7 @@ public final class FilmReader {
             UpwardPass up = new UpwardPass(index, penalty, width, height, orderChoice, corrections, sink);
             up.run(bands, down, done -> progress.accept(pixels + done));
             OrderCorrection correction = up.regions().correction();
-            if (!orderChoice || correction.chains().isEmpty() || corrections.size() == MOST_CORRECTIONS) {
+            if (correction.chains().isEmpty() || corrections.size() == MOST_CORRECTIONS) {
                 return up.judge();
             }
             corrections.add(correction);

@@ -26,7 +26,6 @@ final class Regions {
     /** Pixels of a border that must agree on another order. */
     private static final int AGREEING = 3;
 
-    private final boolean specks;
     private final CurveIndex index;
     private final JumpPenalty penalty;
     private final int width;
@@ -37,8 +36,9 @@ final class Regions {
     private final RegionRuns runs;
     private final RegionWitnesses witnesses;
     private final List<FilmRegion> all = new ArrayList<>();
+    private final boolean specks;
 
-    /** @param specks whether the readings of specks are taken out */
+    /** @param specks whether the readings of regions that are too small to have an order of their own are taken out */
     Regions(CurveIndex index, JumpPenalty penalty, int width, int height, boolean specks) {
         this.specks = specks;
         this.index = index;

@@ -50,24 +50,24 @@ final class UpwardPass {
     }
 
     /**
-     * @param looks       whether to look at each pixel again with those around it, and to take specks out
+     * @param specks      whether the readings of specks are taken out
      * @param corrections other orders to take, in the order in which they were found
      */
-    UpwardPass(CurveIndex index, JumpPenalty penalty, int width, int height, boolean looks, List<OrderCorrection> corrections,
+    UpwardPass(CurveIndex index, JumpPenalty penalty, int width, int height, boolean specks, List<OrderCorrection> corrections,
                ReadingSink sink) {
         this.index = index;
         this.width = width;
         this.height = height;
         this.decision = new OrderDecision(index, penalty, width);
         this.consensus = new Consensus(index, penalty);
-        this.regions = new Regions(index, penalty, width, height, looks);
+        this.regions = new Regions(index, penalty, width, height, specks);
         this.output = new RowOutput(sink, width);
         this.pixels = new PixelRow[height];
         this.present = height;
         this.gathered = height;
         this.done = height;
         stages.add(new Stage(height, 0, (y, none) -> decision.decide(y, pixels[y])));
-        addLooks(looks ? LOOKS : 0);
+        addLooks(LOOKS);
         for (OrderCorrection correction : corrections) {
             stages.add(new Stage(height, 0, (y, before) -> correction.correct(y, pixels[y], before[y], this.index)));
             addLooks(LOOKS_AFTER_CORRECTION);
