@@ -32,7 +32,7 @@ class StepDesignTest {
     private static FitInput input() {
         FitInput with = new RigTrial(Rigs.oxideMixture()).input();
         return new FitInput(with.channels(), with.lights(), List.of(), with.stack(), with.flatStack(), with.view(), with.range(),
-                List.of(), List.of(), with.inputs());
+                List.of(), List.of(), with.inputs(), with.indexPrior());
     }
 
     private static StepDesign design(double[] films, int count) {
