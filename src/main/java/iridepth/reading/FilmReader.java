@@ -96,7 +96,7 @@ public final class FilmReader {
         long pixels = (long) width * height;
         List<OrderCorrection> corrections = new ArrayList<>();
         while (true) {
-            UpwardPass up = new UpwardPass(index, penalty, width, height, corrections, sink);
+            UpwardPass up = new UpwardPass(index, penalty, width, height, orderChoice, corrections, sink);
             up.run(bands, down, done -> progress.accept(pixels + done));
             OrderCorrection correction = up.regions().correction();
             if (correction.chains().isEmpty() || corrections.size() == MOST_CORRECTIONS) {

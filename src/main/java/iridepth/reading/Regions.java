@@ -36,8 +36,11 @@ final class Regions {
     private final RegionRuns runs;
     private final RegionWitnesses witnesses;
     private final List<FilmRegion> all = new ArrayList<>();
+    private final boolean specks;
 
-    Regions(CurveIndex index, JumpPenalty penalty, int width, int height) {
+    /** @param specks whether the readings of regions that are too small to have an order of their own are taken out */
+    Regions(CurveIndex index, JumpPenalty penalty, int width, int height, boolean specks) {
+        this.specks = specks;
         this.index = index;
         this.penalty = penalty;
         this.width = width;
@@ -103,8 +106,8 @@ final class Regions {
         return region.pinned() || region.settled() >= SETTLING && region.settled() >= SETTLING_SHARE * region.pixels();
     }
 
-    private static boolean isSpeck(FilmRegion region) {
-        return region.pixels() < SPECK && region.contacts() > 0;
+    private boolean isSpeck(FilmRegion region) {
+        return specks && region.pixels() < SPECK && region.contacts() > 0;
     }
 
     /** Takes the readings of specks out of a row that lies {@link #SPECK_ROWS} below the last one added, or of any at the end. */

@@ -14,6 +14,7 @@ import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
+import iridepth.photo.StripSignal;
 import iridepth.reading.FilmReader;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
@@ -32,6 +33,9 @@ import java.util.function.Function;
 public record Setup(View view, ColourCurve curve, Optional<Calibration> calibration) {
     /** White of the ICC profile connection space (ISO 15076-1). */
     private static final Xyz D50 = new Xyz(0.9642, 1, 0.8249);
+    /** Pixels that are enough to refine a calibration on. */
+    private static final int REFINING_PIXELS = 1 << 19;
+    private static final int MOST_ROUNDS = 4;
     private static final double[][] LUMINANCE = {{0, 1, 0}};
 
     /**
@@ -69,15 +73,28 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
 
     /**
      * This set-up with its calibration refined on the films that a photo shows, or itself where there is no calibration or nothing
-     * to refine it on.
+     * to refine it on. Refined again as long as that lets more films be trusted.
      */
     public Setup refined(Rig rig, SignalSource photo) {
         if (calibration.isEmpty()) {
             return this;
         }
-        List<StepSignal> films = PhotoFilms.gather(reader(rig.recipe(), photo.info()), curve.channels(), photo);
-        Calibration better = ResponseFit.refine(input(rig, photo.parts().get(0).info()), calibration.get(), films);
-        return better == calibration.get() ? this : of(rig.recipe(), better);
+        FitInput input = input(rig, photo.parts().get(0).info());
+        StripSignal strips = StripSignal.of(photo, REFINING_PIXELS);
+        Setup refined = this;
+        int used = 0;
+        for (int round = 0; round < MOST_ROUNDS; round++) {
+            PhotoFilms shown = PhotoFilms.gather(refined.curve, rig.recipe().excluded(), strips);
+            if (shown.films().size() <= used) {
+                break;
+            }
+            used = shown.films().size();
+            refined = of(rig.recipe(), ResponseFit.refine(input, calibration.get(), shown.films()));
+            if (shown.waiting() == 0) {
+                break;
+            }
+        }
+        return refined;
     }
 
     /** This set-up as films of a photo still to be taken will refine it. */

@@ -3,10 +3,8 @@ package iridepth.trial;
 import ij.ImagePlus;
 import ij.io.Opener;
 import iridepth.calibration.Calibration;
-import iridepth.curve.ColourCurve;
 import iridepth.photo.PhotoFile;
 import iridepth.photo.SignalSource;
-import iridepth.reading.FilmReader;
 import iridepth.reading.ThicknessMap;
 import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
@@ -67,8 +65,7 @@ record Trial(Path recipe, Path photo, double[] truth, double[] bound) {
         try (PhotoFile file = PhotoFile.open(photo)) {
             SignalSource signal = instrument.signal(file);
             Setup setup = choice == null ? instrument.setup(signal) : choice.apply(instrument.setup(file.info()));
-            ColourCurve curve = setup.curve();
-            ThicknessMap map = FilmReader.of(curve, read.excluded()).read(signal, 0, done -> { });
+            ThicknessMap map = setup.reader(read, file.info()).read(signal, 0, done -> { });
             return Outcome.of(map, truth, bound, least);
         }
     }

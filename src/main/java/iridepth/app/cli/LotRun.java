@@ -93,7 +93,7 @@ final class LotRun {
         }
         instrument.ready();
         try {
-            new MapRun(instrument, photo, new PrintWriter(Writer.nullWriter())).write(folder, true);
+            new MapRun(instrument, List.of(photo), true, new PrintWriter(Writer.nullWriter())).write(folder, true);
             return LotRow.of(name, SavedResult.open(folder));
         } catch (RecipeException | OutputException e) {
             throw e;

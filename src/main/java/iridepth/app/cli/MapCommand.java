@@ -31,12 +31,16 @@ final class MapCommand implements Callable<Integer> {
     @Option(names = "--replace", description = "Replace a result folder that exists.")
     private boolean replace;
 
+    @Option(names = "--alone", description = "Read each pixel on its own, whatever its neighbours say of the order: what plan tells of "
+            + "wrong orders is for this.")
+    private boolean alone;
+
     @Parameters(arity = "1..*", paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB; where the recipe "
             + "has several lights, one photo of the field under each, in their order, without moving camera or sample.")
     private List<Path> photos;
 
     @Override
     public Integer call() {
-        return new MapRun(given.instrument(), photos, spec.commandLine().getOut()).write(out, replace);
+        return new MapRun(given.instrument(), photos, !alone, spec.commandLine().getOut()).write(out, replace);
     }
 }

@@ -20,16 +20,16 @@ import iridepth.report.SummaryJson;
 import java.io.PrintWriter;
 import java.nio.file.Path;
 import java.util.List;
-import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.concurrent.CompletableFuture;
 
-/** A photo before an instrument, or one under each of its lights: reads it and writes its result folder. */
-record MapRun(Instrument instrument, List<Path> photos, PrintWriter terminal) {
-    MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
-        this(instrument, List.of(photo), terminal);
-    }
+/**
+ * A photo before an instrument, or one under each of its lights: reads it and writes its result folder.
+ *
+ * @param orderChoice whether neighbours settle the order of a pixel
+ */
+record MapRun(Instrument instrument, List<Path> photos, boolean orderChoice, PrintWriter terminal) {
 
     /** Reads the photo, writes the folder and tells the essentials; returns the exit code. */
     int write(Path out, boolean replace) {
@@ -41,7 +41,7 @@ record MapRun(Instrument instrument, List<Path> photos, PrintWriter terminal) {
             OtherCandidates others = OtherCandidates.of(setup.curve(), recipe().excluded(), signal, 0);
             try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
                     recipe().range().fromNm(), recipe().range().toNm(), others)) {
-                List<DoubtfulRegion> doubts = read(setup.reader(recipe(), info), signal, map);
+                List<DoubtfulRegion> doubts = read(reader(setup, info), signal, map);
                 Optional<Tolerance> tolerance = Optional.ofNullable(recipe().tolerance()).map(t -> Tolerance.between(t[0], t[1]));
                 map.finish(recipe().title(), tolerance);
                 MapFindings findings = new MapFindings(instrument, setup, info, signal, map, doubts, tolerance.map(map::judge), hashes.join());
@@ -61,6 +61,11 @@ record MapRun(Instrument instrument, List<Path> photos, PrintWriter terminal) {
 
     private Recipe recipe() {
         return instrument.recipe();
+    }
+
+    private FilmReader reader(Setup setup, PhotoInfo info) {
+        FilmReader reader = setup.reader(recipe(), info);
+        return orderChoice ? reader : reader.withoutOrderChoice();
     }
 
     private static List<DoubtfulRegion> read(FilmReader reader, SignalSource signal, MapFolder map) {

@@ -15,7 +15,6 @@ import iridepth.recipe.LightSpec;
 import iridepth.recipe.MeasuredRig;
 import iridepth.recipe.Recipe;
 import iridepth.recipe.Recipe.ViewSpec;
-import iridepth.report.OutputFile;
 import iridepth.report.PlanSheet;
 import java.io.PrintWriter;
 import java.nio.file.Path;
@@ -88,12 +87,8 @@ final class PlanCommand implements Callable<Integer> {
             + "the part's photo will show, on which map refines the calibration (default: hardly more than one).")
     private String shown;
 
-    @Option(names = "--out", paramLabel = "FILE.png", description = "The figure; its table goes beside it as "
-            + "FILE.csv.")
-    private Path out;
-
-    @Option(names = "--replace", description = "Replace files that exist.")
-    private boolean replace;
+    @Mixin
+    private OptionalPicture output;
 
     @Mixin
     private ViewOptions viewOptions;
@@ -109,19 +104,9 @@ final class PlanCommand implements Callable<Integer> {
         }
         PlanSheet sheet = sheet(given);
         PrintWriter terminal = spec.commandLine().getOut();
-        if (out != null) {
-            Path csv = OutputNames.table(out);
-            try (OutputFile picture = OutputFile.create(out, replace); OutputFile table = OutputFile.create(csv, replace)) {
-                sheet.write(picture.path());
-                sheet.csv().write(table.path());
-                picture.commit();
-                table.commit();
-            }
-        }
+        Optional<String> written = output.write(sheet::write, sheet.csv());
         terminal.print(sheet.text());
-        if (out != null) {
-            terminal.println("wrote        " + out + " and " + OutputNames.table(out));
-        }
+        written.ifPresent(terminal::println);
         terminal.println(Iridepth.CAUTION);
         terminal.flush();
         return Iridepth.DONE;

@@ -166,7 +166,8 @@ class LotCommandTest {
         Answer.refusal(3, "holds no photo", "lot", "--recipe", batch.recipe(), "--out", folder.resolve("lot"), folder.resolve("strange"));
         Answer.refusal(2, "Missing required parameter", "lot", "--recipe", batch.recipe(), "--out", folder.resolve("lot"));
         Path two = Files.writeString(folder.resolve("two.toml"), Files.readString(batch.recipe()).replace("[light]",
-                "[[light]]\nwavelength_nm = 546\nbandwidth_nm = 10\n\n[[light]]"));
+                "[[light]]\nwavelength_nm = 546\nbandwidth_nm = 10\n\n[[light]]").replace("flat = \"flat.tif\"",
+                "flat = [\"flat.tif\", \"flat.tif\"]"));
         Answer.refusal(2, "it has 2 lights", "lot", "--recipe", two, "--out", folder.resolve("lot"), batch.photos());
         Files.delete(folder.resolve("flat.tif"));
         Answer.refusal(3, "flat.tif", lot(batch));
