@@ -20,7 +20,7 @@ import java.util.List;
 record Observations(double[][][] design, double[][][] slope, double[][] signal, double[][] variance, double[] thickness,
                     int stepsFrom, int steps) {
     /** The flat's own signal is 1 but for the noise of its smoothed field. */
-    private static final double FLAT_NOISE = 1e-4;
+    private static final double FLAT_NOISE = 2e-4;
 
     /** The observations of an input. */
     static Observations of(FitInput input) {
