@@ -20,12 +20,11 @@ public final class ResponseFit {
      */
     public static Calibration fit(FitInput input) {
         StepCheck.require(input);
-        SensorPrior middle = Suppositions.middle(input, Observations.of(input));
-        NoiseLevel level = Suppositions.middleLevel(input);
-        Optional<IndexEstimate> index = input.indexPrior().map(spread -> IndexFit.of(input, middle, level, spread));
+        Optional<IndexEstimate> index = input.indexPrior().map(spread -> IndexFit.of(input, spread));
         IndexChange change = index.map(e -> new IndexChange(1, e.a(), e.b())).orElse(IndexChange.NONE);
         FitInput film = input.withStack(change.apply(input.stack()));
-        ApertureEstimate aperture = ApertureEstimate.of(film, middle, level);
+        SensorPrior middle = Suppositions.middle(input, Observations.of(film));
+        ApertureEstimate aperture = ApertureEstimate.of(film, middle, Suppositions.middleLevel(input));
         FitInput corrected = film.withView(aperture.view(input.view()));
         Observations data = Observations.of(corrected);
         Suppositions suppositions = Suppositions.of(input, middle, data);

@@ -78,6 +78,21 @@ record Suppositions(List<SensorPrior> priors, List<NoiseLevel> levels) {
                 Arrays.stream(order).mapToObj(all.levels::get).toList());
     }
 
+    /** A coarse selection for fits that must be made many times. */
+    static Suppositions coarse(FitInput input, SensorPrior middle) {
+        Suppositions all = combined(input, middle, Arrays.stream(RESIDUALS)
+                .mapToObj(r -> new NoiseLevel(r * input.inputs().flatResidual(), STEP_NM[1])).toList());
+        int[] those = IntStream.range(0, all.priors.size()).filter(i -> i / RESIDUALS.length % 2 == 0).toArray();
+        return new Suppositions(Arrays.stream(those).mapToObj(all.priors::get).toList(),
+                Arrays.stream(those).mapToObj(all.levels::get).toList());
+    }
+
+    /** The evidence of each. */
+    double[] evidence(Observations data) {
+        return IntStream.range(0, priors.size()).parallel()
+                .mapToDouble(i -> LaplaceFit.of(data, priors.get(i), levels.get(i)).evidence()).toArray();
+    }
+
     private static Suppositions combined(FitInput input, SensorPrior middle, List<NoiseLevel> levels) {
         List<SensorPrior> priors = new ArrayList<>();
         List<NoiseLevel> all = new ArrayList<>();

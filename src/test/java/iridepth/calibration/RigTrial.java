@@ -124,6 +124,20 @@ final class RigTrial {
         return signal;
     }
 
+    /** Signal of the true rig for a surface of any reflectance, relative to the flat. */
+    double[] seen(double[] reflectance) {
+        double[][] e = scene.rig().responses();
+        double[] signal = new double[flat.length];
+        for (int c = 0; c < flat.length; c++) {
+            double sum = glare[c];
+            for (int i = 0; i < reflectance.length; i++) {
+                sum += e[c][i] * reflectance[i];
+            }
+            signal[c] = sum / flat[c];
+        }
+        return signal;
+    }
+
     /** Noise of a pixel's signal relative to the flat. */
     double[] noise(double[] signal) {
         double[] sigma = new double[flat.length];
