@@ -36,7 +36,7 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
     private static final Xyz D50 = new Xyz(0.9642, 1, 0.8249);
     /** Pixels that are enough to refine a calibration on. */
     private static final int REFINING_PIXELS = 1 << 19;
-    private static final int MOST_ROUNDS = 4;
+    private static final int MOST_ROUNDS = 6;
     private static final double[][] LUMINANCE = {{0, 1, 0}};
 
     /**
