@@ -15,14 +15,15 @@ import org.apache.commons.math3.linear.SingularValueDecomposition;
  * What a user would do otherwise: take any camera for a generic one, and at best correct its signals by a matrix fitted to the
  * steps, as colour profiles do.
  */
-final class GenericSensor {
+public final class GenericSensor {
     /** Centre and standard deviation of the lobes of blue, green, red and deep red filters, nm. */
     private static final double[][] LOBES = {{455, 28}, {535, 35}, {605, 32}, {690, 30}};
 
     private final FitInput input;
     private final EffectiveResponses responses;
 
-    GenericSensor(FitInput input) {
+    /** The generic sensor in the place of a rig's own. */
+    public GenericSensor(FitInput input) {
         this.input = input;
         Light light = input.lights().get(0);
         List<Spectrum> lobes = new ArrayList<>();
@@ -39,7 +40,7 @@ final class GenericSensor {
     }
 
     /** The curve of the generic sensor as it is. */
-    ColourCurve uncalibrated() {
+    public ColourCurve uncalibrated() {
         return curve(responses);
     }
 
@@ -48,7 +49,7 @@ final class GenericSensor {
     }
 
     /** The curve after the matrix from generic to measured signals that fits flat and steps best, in the sense of least squares. */
-    ColourCurve matrix() {
+    public ColourCurve matrix() {
         int n = responses.count();
         Reflectance film = Reflectance.of(input.stack(), input.view());
         RealMatrix generic = new Array2DRowRealMatrix(input.steps().size() + 1, n);

@@ -23,7 +23,7 @@ import java.util.Optional;
 /**
  * A simulated scene as a calibration sees it: patch means relative to the flat, and pixels to read with the result.
  */
-final class RigTrial {
+public final class RigTrial {
     private static final int STRIDE = 7;
     private static final double NEAR_NM = 5;
     private static final double SPACING_NM = 3;
@@ -44,10 +44,11 @@ final class RigTrial {
      * @param stated   root mean square of their stated uncertainty, nm
      * @param limit    root mean square of the Cramer-Rao bound, nm: what noise alone leaves
      */
-    record Outcome(int readings, double near, double rms, double bias, double coverage, double stated, double limit) {
+    public record Outcome(int readings, double near, double rms, double bias, double coverage, double stated, double limit) {
     }
 
-    RigTrial(Scene scene) {
+    /** The trial of a scene with a flat and steps. */
+    public RigTrial(Scene scene) {
         this.scene = scene;
         this.shot = scene.shot();
         double[][] e = scene.rig().responses();
@@ -60,7 +61,7 @@ final class RigTrial {
     }
 
     /** The stated stack, view, lamp and steps. */
-    FitInput input() {
+    public FitInput input() {
         Stack stack = stack();
         double thickest = scene.rangeNm()[1];
         String statement = scene.believedView().statement();
@@ -148,7 +149,7 @@ final class RigTrial {
     }
 
     /** Reads every few pixels of the photograph on a curve, each by itself. */
-    Outcome read(ColourCurve curve) {
+    public Outcome read(ColourCurve curve) {
         return read(new ScanReader(curve));
     }
 
@@ -193,7 +194,7 @@ final class RigTrial {
      * Error of the curve itself: the root mean square over thicknesses between the outermost steps, the worst tenth left out, of what
      * the noiseless true signal reads on it.
      */
-    double curveError(ColourCurve curve) {
+    public double curveError(ColourCurve curve) {
         double[] known = scene.steps().thickness();
         double from = Arrays.stream(known).min().orElseThrow();
         double to = Arrays.stream(known).max().orElseThrow();

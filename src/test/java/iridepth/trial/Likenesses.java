@@ -68,4 +68,13 @@ final class Likenesses {
                 new double[] {0, 1500}, new Steps(width, height, new double[] {0, 100, 200, 350, 500, 800}, 8),
                 Field.dome(width, height, rim, between(random, 850, 1200) - rim), lamp, View.aperture(0.1), 1000 + seed);
     }
+
+    /** The same dome under a halogen lamp stated 300 K wrong, through an aperture stated 0.05 wrong. */
+    static Scene misstatedDome(int width, int height, long seed) {
+        Random random = random(-seed);
+        Scene scene = dome(width, height, seed);
+        Rig rig = scene.rig().lamp(Lamp.planck(random.nextBoolean() ? 3500 : 2900)).view(View.aperture(random.nextBoolean() ? 0.05 : 0.15));
+        return new Scene("misstated-" + scene.name(), rig, scene.stack(), scene.flatStack(), scene.rangeNm(), scene.steps(),
+                scene.field(), Lamp.planck(3200), scene.believedView(), scene.seed());
+    }
 }
