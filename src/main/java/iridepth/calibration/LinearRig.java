@@ -24,6 +24,8 @@ record LinearRig(FitInput input, double[] weights, double[] thickness, double st
                  double[][][] rows) {
     static final int WIDTH = Bumps.COUNT + 1;
     private static final double BEND_STEP_NM = 0.5;
+    /** Signal of a film on which the usual glare is reckoned, a perfect reflector's being 1: that of an oxide on silicon. */
+    private static final double TYPICAL_SIGNAL = 0.3;
 
     /** The rig with a supposed sensor, at {@code size} evenly spaced thicknesses. */
     static LinearRig evenly(FitInput input, List<Spectrum> supposed, double fromNm, double stepNm, int size) {
@@ -57,7 +59,7 @@ record LinearRig(FitInput input, double[] weights, double[] thickness, double st
             for (int k = 0; k < Bumps.COUNT; k++) {
                 weights[c * WIDTH + k] = (lobe[k] + SensorPrior.FLOOR) / white;
             }
-            weights[c * WIDTH + Bumps.COUNT] = SensorPrior.GLARE * 0.3;
+            weights[c * WIDTH + Bumps.COUNT] = SensorPrior.GLARE * TYPICAL_SIGNAL;
         }
         return weights;
     }

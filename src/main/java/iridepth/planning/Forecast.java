@@ -21,7 +21,7 @@ public final class Forecast {
     public static final double USUAL_LIMIT = 16;
     /** Spacing of the thicknesses as a share of the curve's step. */
     private static final int PER_STEP = 8;
-    /** From one thickness to the next a rival moves by less than this share of a fringe's 64 samples. */
+    /** From one thickness to the next a rival moves by less than so many steps of the curve. */
     private static final int REACH = 4;
 
     private final double[] thickness;

@@ -31,11 +31,6 @@ final class AnyChannelProbe extends TangentProbe {
     }
 
     @Override
-    float chiSquare(int k) {
-        return chiSquare(k, 0);
-    }
-
-    @Override
     float chiSquare(int k, float t) {
         float beside = distance(k) - t;
         int at = k * stride + 2 * channels;
@@ -46,18 +41,5 @@ final class AnyChannelProbe extends TangentProbe {
             }
         }
         return sum + beside * beside * samples[at];
-    }
-
-    @Override
-    int nearest(int first, int last, int steps) {
-        int k = (first + last) >>> 1;
-        for (int i = 0; i < steps; i++) {
-            int next = step(k, distance(k), first, last);
-            if (next == k) {
-                break;
-            }
-            k = next;
-        }
-        return k;
     }
 }

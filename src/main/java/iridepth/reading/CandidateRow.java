@@ -48,9 +48,13 @@ final class CandidateRow {
         cost[size++] = itsCost;
     }
 
-    /** Adds a candidate to the pixel in work unless it is the one added last. */
-    void addOnce(float thicknessNm, float itsCost, boolean explains) {
-        if (size == first || thicknessNm > thickness[size - 1]) {
+    /**
+     * Adds a candidate to the pixel in work unless it is the one added last, found from another sample.
+     *
+     * @param spacingNm spacing of the samples there
+     */
+    void addOnce(float thicknessNm, double spacingNm, float itsCost, boolean explains) {
+        if (size == first || thicknessNm - thickness[size - 1] > spacingNm / 2) {
             add(thicknessNm, itsCost, explains);
         }
     }

@@ -38,40 +38,81 @@ final class CellRuns {
     /** Values a run takes when packed: first and last sample, and how slowly the curve goes. */
     static final int PACKED = 3;
 
-    /** Where each cell's runs begin when they stand one after another, rising; one more entry at the end. */
-    int[] starts() {
-        int[] start = new int[newest.length + 1];
-        int at = 0;
-        for (int cell = 0; cell < newest.length; cell++) {
-            start[cell] = at;
-            for (int run = newest[cell]; run != NONE; run = previous[run]) {
-                at += PACKED;
-            }
-        }
-        start[newest.length] = at;
-        return start;
+    /** How the curve goes along a run. */
+    interface Course {
+        /** Whether it bends gently and nowhere comes to a halt, so that it is straight in parts. */
+        boolean isSmooth(int first, int last);
+
+        /** The last sample up to which a smooth run is straight from the first on. */
+        int straightUpTo(int first, int last);
+
+        /** Samples per standard deviation of the noise where it goes fastest. */
+        float slowness(int first, int last);
     }
 
-    /** How slowly the curve goes along a run. */
-    @FunctionalInterface
-    interface Slowness {
-        /** 0 where the run is straight, else samples per standard deviation of the noise where the curve goes fastest. */
-        float of(int first, int last);
+    /** The runs of all cells, those that are straight in parts cut into these. */
+    void pack(Course course, PackedRuns into) {
+        int[] order = new int[16];
+        for (int cell = 0; cell < newest.length; cell++) {
+            int count = 0;
+            for (int run = newest[cell]; run != NONE; run = previous[run]) {
+                if (count == order.length) {
+                    order = Arrays.copyOf(order, 2 * count);
+                }
+                order[count++] = run;
+            }
+            while (--count >= 0) {
+                pack(first[order[count]], last[order[count]], course, into);
+            }
+            into.endCell(cell);
+        }
     }
 
-    /** The runs of all cells. */
-    int[] packed(Slowness slowness) {
-        int[] start = starts();
-        int[] packed = new int[start[newest.length]];
-        for (int cell = 0; cell < newest.length; cell++) {
-            int at = start[cell + 1];
-            for (int run = newest[cell]; run != NONE; run = previous[run]) {
-                at -= PACKED;
-                packed[at] = first[run];
-                packed[at + 1] = last[run];
-                packed[at + 2] = Float.floatToIntBits(slowness.of(first[run], last[run]));
-            }
+    private static void pack(int from, int to, Course course, PackedRuns into) {
+        if (!course.isSmooth(from, to)) {
+            into.add(from, to, course.slowness(from, to));
+            return;
         }
-        return packed;
+        int first = from;
+        while (first <= to) {
+            int last = course.straightUpTo(first, to);
+            into.add(first, last, 0);
+            first = last + 1;
+        }
+    }
+
+    /** Receives runs cell by cell. */
+    static final class PackedRuns {
+        private final int[] start;
+        private int[] runs = new int[1024];
+        private int size;
+
+        PackedRuns(int cells) {
+            start = new int[cells + 1];
+        }
+
+        private void add(int first, int last, float slowness) {
+            if (size + PACKED > runs.length) {
+                runs = Arrays.copyOf(runs, 2 * runs.length);
+            }
+            runs[size] = first;
+            runs[size + 1] = last;
+            runs[size + 2] = Float.floatToIntBits(slowness);
+            size += PACKED;
+        }
+
+        private void endCell(int cell) {
+            start[cell + 1] = size;
+        }
+
+        /** Where the runs of each cell begin, one more entry at the end. */
+        int[] start() {
+            return start;
+        }
+
+        /** {@link #PACKED} values a run: first sample, last sample, and the bits of a float, 0 where it is straight. */
+        int[] runs() {
+            return Arrays.copyOf(runs, size);
+        }
     }
 }

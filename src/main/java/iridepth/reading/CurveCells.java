@@ -9,18 +9,9 @@ import iridepth.curve.ColourCurve;
  * <p>chi^2 = r^T C^-1 r bounds a weighted sum of residuals, |w^T r| <= sqrt(chi^2 w^T C w) (Cauchy and Schwarz), so that the
  * curve between two samples can only explain pixels in the box around it whose half-widths are these bounds, widened by how far
  * the curve leaves its chord. Every cell that such a box touches lists the piece. A pixel outside the grid has no candidates.
- *
- * <p>A run is straight when a pixel within the threshold of it sees one minimum of chi-square along it. In the metric of the
- * noise and by arc length, half the second derivative of chi-square is 1 - k n . r, with k the curvature, n the normal and r the
- * residual. A pixel within rho of a curve of length l has n . r < rho + k l^2 / 2 all along, so that chi-square is convex where
- * k (rho + k l^2 / 2) < 1. And the curve must not come to a halt in between, as that of one channel does at each extremum.
  */
 final class CurveCells {
     private static final int[] MOST_CELLS = {8192, 512, 96};
-    /** Share of the highest speed along a run below which the curve comes to a halt. */
-    private static final double SLOW = 0.3;
-    /** Bound of the curvature condition: 1, less a margin for other levels of light. */
-    private static final double CONVEX = 0.7;
 
     private final CellFrame frame;
     /** [cell]: where its runs begin, one more entry at the end. */
@@ -54,25 +45,9 @@ final class CurveCells {
         for (int k = 0; k + 1 < table.size(); k++) {
             mark(frame, boxes, k, lists);
         }
-        return new CurveCells(frame, lists.starts(), lists.packed((first, last) -> slowness(table, first, last, threshold)));
-    }
-
-    private static float slowness(TangentTable table, int first, int last, double threshold) {
-        double length = 0;
-        double curvature = 0;
-        double slowest = Double.POSITIVE_INFINITY;
-        double fastest = 0;
-        for (int k = first; k <= last; k++) {
-            double speed = Math.sqrt(table.information(k));
-            length += speed;
-            slowest = Math.min(slowest, speed);
-            fastest = Math.max(fastest, speed);
-            curvature = Math.max(curvature, table.curvature(k));
-        }
-        if (slowest > SLOW * fastest && curvature * (Math.sqrt(threshold) + curvature * length * length / 2) < CONVEX) {
-            return 0;
-        }
-        return (float) (1 / fastest);
+        CellRuns.PackedRuns packed = new CellRuns.PackedRuns(frame.size());
+        lists.pack(new CurveCourse(table, threshold), packed);
+        return new CurveCells(frame, packed.start(), packed.runs());
     }
 
     private static void mark(CellFrame frame, CurveBoxes boxes, int k, CellRuns lists) {

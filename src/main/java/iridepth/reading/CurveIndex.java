@@ -11,14 +11,14 @@ import org.apache.commons.math3.distribution.ChiSquaredDistribution;
  * @param curve      the colour curve
  * @param noise      the expected noise
  * @param levels     levels of light in the picture
- * @param threshold  chi-square of the farthest candidates, which one good pixel in a million exceeds
+ * @param threshold  chi-square of the farthest candidates, which one good pixel in a hundred thousand exceeds
  * @param acceptance chi-square above which a thickness does not explain a pixel, which one good pixel in ten thousand exceeds
  * @param tables     the curve as tangents, one table for each level
  * @param cells      which parts of it can explain a pixel
  */
 record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, double threshold, double acceptance,
                   TangentTable[] tables, CurveCells cells) {
-    private static final double CANDIDATE_PROBABILITY = 1e-6;
+    private static final double CANDIDATE_PROBABILITY = 1e-5;
     private static final double OFF_CURVE_PROBABILITY = 1e-4;
 
     static CurveIndex of(ColourCurve curve, ExpectedNoise noise, LightLevels levels) {

@@ -5,9 +5,11 @@ package iridepth.reading;
  * until the nearest is found, in others by looking along it. Pixels with censored channels go to the exhaustive search.
  */
 final class GridSearch implements CandidateSearch {
-    private static final int HOPS = 8;
-    /** A minimum may lie this many samples off the nearest one, since the tangents of neighbours differ a little. */
-    private static final float SLACK = 0.6f;
+    private static final float HALF = 0.5f;
+    /** Chi-square by the tangent of a sample may exceed that of the minimum by this factor. */
+    private static final float FAR = 1.5f;
+    /** Curvature times residual below which the tangent of one sample does. */
+    private static final float BENT = 0.05f;
     /** Share of a distance that is skipped: the metric changes somewhat along the curve. */
     private static final float SKIPPED = 0.8f;
     private final TangentTable[] tables;
@@ -62,26 +64,54 @@ final class GridSearch implements CandidateSearch {
         result = into;
         for (; i < end; i += CellRuns.PACKED) {
             if (runs[i + 2] == 0) {
-                int k = probe.nearest(runs[i], runs[i + 1], HOPS);
-                accept(k, probe.distance(k));
+                straight(runs[i], runs[i + 1]);
             } else {
                 look(runs[i], runs[i + 1], Float.intBitsToFloat(runs[i + 2]));
             }
         }
     }
 
-    /** Keeps the minimum t samples beyond k, unless it lies beyond what k stands for or does not explain the pixel. */
-    private void accept(int k, float t) {
-        float held = t;
-        if (k == 0 && t < 0 || k == size - 1 && t > 0) {
-            held = 0;
-        } else if (t < -SLACK || t > SLACK) {
+    /**
+     * The minimum along a straight run. Where the curve bends, the tangent of a sample misses it by a share that grows with
+     * the residual; then the tangent of the next sample beyond it tells where it lies between the two.
+     */
+    private void straight(int first, int last) {
+        int k = probe.nearest(first, last);
+        float t = probe.distance(k);
+        float chiSquare = probe.chiSquare(k, t);
+        if (chiSquare > FAR * threshold) {
             return;
         }
-        float chiSquare = probe.chiSquare(k, held);
+        boolean isSure = t <= HALF && t >= -HALF && k > first && k < last
+                && probe.table().curvature(k) * probe.table().curvature(k) * chiSquare < BENT * BENT;
+        if (isSure || k == 0 && t < 0 || k == size - 1 && t > 0) {
+            accept(k, t);
+            return;
+        }
+        int next = t > 0 ? k + 1 : k - 1;
+        if (next < 0 || next >= size) {
+            return;
+        }
+        float beyond = probe.distance(next);
+        if (t * beyond <= 0) {
+            float share = t == 0 ? 0 : t / (t - beyond);
+            float drop = t * share * (next - k) * probe.table().information(k);
+            keep(k, share * (next - k), chiSquare + t * t * probe.table().information(k) - drop);
+        }
+    }
+
+    /** Keeps the minimum t samples beyond k, or the end of the curve where it would lie beyond that. */
+    private void accept(int k, float t) {
+        float held = k == 0 ? Math.max(0, t) : k == size - 1 ? Math.min(0, t) : t;
+        keep(k, held, probe.chiSquare(k, held));
+    }
+
+    /** Keeps a minimum unless it does not explain the pixel. */
+    private void keep(int k, float t, float chiSquare) {
         if (chiSquare <= threshold) {
-            result.add((float) probe.table().thickness(k, held), chiSquare + probe.table().logDeterminant(k),
-                    chiSquare <= acceptance);
+            TangentTable table = probe.table();
+            float least = Math.max(0, chiSquare);
+            result.addOnce((float) table.thickness(k, t), table.spacing(k), least + table.logDeterminant(k), least <= acceptance);
         }
     }
 
@@ -95,7 +125,7 @@ final class GridSearch implements CandidateSearch {
         float least = Float.POSITIVE_INFINITY;
         boolean falling = false;
         while (true) {
-            float here = probe.chiSquare(k);
+            float here = probe.chiSquare(k, 0);
             if (falling && here >= least) {
                 settle(lowest);
             }
@@ -116,26 +146,21 @@ final class GridSearch implements CandidateSearch {
     /** Walks down to the minimum near a sample and places it by the parabola through its neighbours. */
     private void settle(int near) {
         int k = near;
-        float here = probe.chiSquare(k);
-        while (k > 0 && probe.chiSquare(k - 1) < here) {
-            here = probe.chiSquare(--k);
+        float here = probe.chiSquare(k, 0);
+        while (k > 0 && probe.chiSquare(k - 1, 0) < here) {
+            here = probe.chiSquare(--k, 0);
         }
-        while (k < size - 1 && probe.chiSquare(k + 1) < here) {
-            here = probe.chiSquare(++k);
+        while (k < size - 1 && probe.chiSquare(k + 1, 0) < here) {
+            here = probe.chiSquare(++k, 0);
         }
         if (k == 0 || k == size - 1) {
-            float t = probe.distance(k);
-            accept(k, k == 0 ? Math.min(t, SLACK) : Math.max(t, -SLACK));
+            accept(k, Math.max(-HALF, Math.min(HALF, probe.distance(k))));
             return;
         }
-        float before = probe.chiSquare(k - 1);
-        float after = probe.chiSquare(k + 1);
+        float before = probe.chiSquare(k - 1, 0);
+        float after = probe.chiSquare(k + 1, 0);
         float bend = after - 2 * here + before;
         float t = bend > 0 ? (before - after) / (2 * bend) : 0;
-        float chiSquare = Math.max(0, here - (before - after) * t / 4);
-        if (chiSquare <= threshold) {
-            result.addOnce((float) probe.table().thickness(k, t), chiSquare + probe.table().logDeterminant(k),
-                    chiSquare <= acceptance);
-        }
+        keep(k, t, here - (before - after) * t / 4);
     }
 }

@@ -2,6 +2,8 @@ package iridepth.reading;
 
 /** Chi-square of one pixel along the curve, by the tangents of its samples. Serves one thread. */
 abstract class TangentProbe {
+    private static final int HOPS = 8;
+
     private TangentTable table;
     /** The samples of the table. */
     protected float[] samples;
@@ -25,14 +27,21 @@ abstract class TangentProbe {
     /** Chi-square t samples beyond a sample along its tangent. */
     abstract float chiSquare(int k, float t);
 
-    /** Chi-square at a sample. */
-    abstract float chiSquare(int k);
-
     /** The sample of a straight run that is nearest, by steps from its middle. */
-    abstract int nearest(int first, int last, int steps);
+    final int nearest(int first, int last) {
+        int k = (first + last) >>> 1;
+        for (int i = 0; i < HOPS; i++) {
+            int next = step(k, distance(k), first, last);
+            if (next == k) {
+                break;
+            }
+            k = next;
+        }
+        return k;
+    }
 
     /** The sample nearest to t samples beyond k, inside a run. */
-    static int step(int k, float t, int first, int last) {
+    private static int step(int k, float t, int first, int last) {
         float place = k + t + 0.5f;
         return place < first ? first : place > last ? last : (int) place;
     }

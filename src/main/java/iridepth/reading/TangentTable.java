@@ -79,6 +79,11 @@ final class TangentTable {
         return sampling.thickness(k) + t * sampling.spacing(k);
     }
 
+    /** Spacing of the samples around one, nm. */
+    double spacing(int k) {
+        return sampling.spacing(k);
+    }
+
     /** The sample nearest to a thickness. */
     int nearest(float thicknessNm) {
         return sampling.nearest(thicknessNm);
@@ -95,12 +100,12 @@ final class TangentTable {
     }
 
     /** A at a sample, per squared sample. */
-    double information(int sample) {
+    float information(int sample) {
         return samples[sample * stride + stride - 2];
     }
 
     /** Curvature of the curve at a sample: the reciprocal of its radius in standard deviations of the noise. */
-    double curvature(int sample) {
+    float curvature(int sample) {
         return curvature[sample];
     }
 

@@ -23,11 +23,6 @@ final class ThreeChannelProbe extends TangentProbe {
     }
 
     @Override
-    float chiSquare(int k) {
-        return chiSquare(k, 0);
-    }
-
-    @Override
     float chiSquare(int k, float t) {
         float[] s = samples;
         int at = k * STRIDE;
@@ -37,18 +32,5 @@ final class ThreeChannelProbe extends TangentProbe {
         float beside = r0 * s[at + 3] + r1 * s[at + 4] + r2 * s[at + 5] - t;
         return r0 * (r0 * s[at + 6] + r1 * s[at + 7] + r2 * s[at + 8]) + r1 * (r1 * s[at + 9] + r2 * s[at + 10])
                 + r2 * r2 * s[at + 11] + beside * beside * s[at + 12];
-    }
-
-    @Override
-    int nearest(int first, int last, int steps) {
-        int k = (first + last) >>> 1;
-        for (int i = 0; i < steps; i++) {
-            int next = step(k, distance(k), first, last);
-            if (next == k) {
-                break;
-            }
-            k = next;
-        }
-        return k;
     }
 }

@@ -28,11 +28,12 @@ import java.util.Optional;
  * @param tolerance limits in nm, lower and upper, or null
  * @param tables    tables of materials and lamps that it names, as read
  * @param pins      what is known of the thickness at places
+ * @param fitIndex  whether the steps are also to fix the film's index
  * @param inputs    how well the inputs are known, empty where the recipe does not say
  */
 public record Recipe(Path file, String title, Stack stack, ThicknessRange range, ViewSpec view, List<Light> lights,
                      CameraSpec camera, double pixelUm, List<Region> excluded, double[] tolerance, List<Path> tables,
-                     PinSpec pins, Optional<InputUncertainty> inputs) {
+                     PinSpec pins, boolean fitIndex, Optional<InputUncertainty> inputs) {
     /**
      * Directions of view as the recipe gives them.
      *
@@ -67,6 +68,7 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
             throw film.error("stack", "film.stack has no unknown layer; leave out the thickness of the film that is to be read");
         }
         ThicknessRange range = range(film, stack);
+        boolean fitIndex = MaterialSpec.fitsIndex(film.section("material"), stack.film().name());
         PinSpec pins = PinSpec.read(film);
         film.finish();
         ViewSpec view = view(top.section("view"), stack, range);
@@ -82,7 +84,7 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
         String title = top.text("title", file.getFileName().toString());
         top.finish();
         return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance,
-                List.copyOf(tables.read()), pins, inputs);
+                List.copyOf(tables.read()), pins, fitIndex, inputs);
     }
 
     static Stack stack(Section section, String key, Materials materials) {

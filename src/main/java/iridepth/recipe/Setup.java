@@ -2,6 +2,7 @@ package iridepth.recipe;
 
 import iridepth.calibration.Calibration;
 import iridepth.calibration.FitInput;
+import iridepth.calibration.IndexPrior;
 import iridepth.calibration.InputUncertainty;
 import iridepth.calibration.ResponseFit;
 import iridepth.calibration.StepSignal;
@@ -121,6 +122,9 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
                     recipe.range(), steps).withLights(lights);
             if (recipe.inputs().isPresent()) {
                 input = input.withInputs(recipe.inputs().get());
+            }
+            if (recipe.fitIndex()) {
+                input = input.withIndexFitted(IndexPrior.DEFAULT);
             }
             return camera.sensitivities() == null ? input : input.withSensitivities(sensitivities(recipe, photo));
         } catch (IllegalArgumentException e) {

@@ -38,7 +38,7 @@ public record PlanSheet(String title, List<String> conditions, Plan plan, double
     }
 
     private static String nm(double value) {
-        return Numbers.fixed(value, value < 10 ? 2 : 1);
+        return Numbers.fixed(value, value == 0 ? 0 : value < 10 ? 2 : 1);
     }
 
     /** A few lines for people. */

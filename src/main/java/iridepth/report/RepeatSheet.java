@@ -82,12 +82,17 @@ public record RepeatSheet(String title, List<String> names, int width, Repeatabi
         double[] number = new double[names.size()];
         Arrays.setAll(number, i -> i + 1);
         double[] shift = repeatability.runs().stream().mapToDouble(Repeatability.Run::shift).toArray();
-        double[] scatter = new double[shift.length];
-        Arrays.fill(scatter, repeatability.noise());
         LineFigure figure = LineFigure.of(title, "map", "mean difference from the first map (nm)")
-                .remark("bars: repeatability standard deviation of a pixel without the shift of whole maps, "
-                        + nm(repeatability.noise()) + " nm")
-                .with(Curve.points("maps", number, shift).withHalfWidth(scatter));
+                .remark("repeatability standard deviation of a pixel without the shift of whole maps: " + nm(repeatability.noise())
+                        + " nm");
+        if (names.size() > 2) {
+            double slope = repeatability.drift().value();
+            double mean = Arrays.stream(shift).average().orElseThrow();
+            double middle = (number.length + 1) / 2.0;
+            figure = figure.with(Curve.line("drift", number, Arrays.stream(number).map(n -> mean + slope * (n - middle)).toArray())
+                    .inColour(0x8A8A8A));
+        }
+        figure = figure.with(Curve.points("maps", number, shift).inColour(0x0072B2));
         LineFigure.write(png, List.of(figure), HEIGHT);
     }
 }

@@ -92,6 +92,14 @@ class RecipeTest {
     }
 
     @Test
+    void indexCanBeFittedFromACauchyFormOnly() throws IOException {
+        String own = GOOD.replace("SiO2", "resist").replace("[light]", "[film.material.resist]\ncauchy = [1.6, 0.01]\nfit_index = true\n[light]");
+        assertTrue(read(own).fitIndex());
+        assertTrue(refusal(own.replace("cauchy = [1.6, 0.01]", "n = 1.6")).contains("goes with a Cauchy form"));
+        assertTrue(!read(GOOD).fitIndex());
+    }
+
+    @Test
     void uncertaintiesOfInputsAreReadInTheirUnits() throws IOException {
         Recipe recipe = read(GOOD + "[uncertainty]\nfilm_index_percent = 0.5\nlamp_K = 100\n");
         assertEquals(0.005, recipe.inputs().orElseThrow().relativeIndex(), 1e-12);
