@@ -1,6 +1,7 @@
 package iridepth.calibration;
 
 import iridepth.spectrum.Grid;
+import java.util.Arrays;
 
 /**
  * The overlapping smooth bumps of which a sensitivity is a non-negative sum: cubic B-splines on evenly spaced knots over the
@@ -13,6 +14,14 @@ final class Bumps {
     static final int COUNT = (int) ((Grid.LAST_NM - Grid.FIRST_NM) / SPACING_NM) + 3;
     /** Bumps that are not 0 at a wavelength. */
     static final int OVERLAP = 4;
+
+    private static final double[][] VALUES = new double[Grid.SIZE][];
+
+    static {
+        for (int i = 0; i < Grid.SIZE; i++) {
+            VALUES[i] = values(i);
+        }
+    }
 
     private Bumps() {
     }
@@ -41,7 +50,7 @@ final class Bumps {
      * @param into     receives the sum over wavelength of spectrum times bump, from place 0 on
      */
     static void project(double[] spectrum, double[] into) {
-        java.util.Arrays.fill(into, 0, COUNT, 0);
+        Arrays.fill(into, 0, COUNT, 0);
         for (int i = 0; i < Grid.SIZE; i++) {
             double[] value = VALUES[i];
             int at = first(i);
@@ -61,13 +70,5 @@ final class Bumps {
             }
         }
         return result;
-    }
-
-    private static final double[][] VALUES = new double[Grid.SIZE][];
-
-    static {
-        for (int i = 0; i < Grid.SIZE; i++) {
-            VALUES[i] = values(i);
-        }
     }
 }

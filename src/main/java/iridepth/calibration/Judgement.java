@@ -15,12 +15,13 @@ import org.apache.commons.math3.linear.SingularValueDecomposition;
 final class Judgement {
     /** Reach of the curve around a step on which it is read when left out, nm. */
     private static final double REACH_NM = 40;
+    private static final int LOCAL_STEPS = 40;
     /** Ratio of singular values below which rounding decides. */
     private static final double SMALLEST_RATIO = 1e-14;
 
     /** A pixel's noise that is supposed where a reading's weights need one, as a fraction of the flat's signal. */
     private static final double PIXEL_NOISE = 0.005;
-    private static final double SAMPLING_NM = 2;
+    private static final double SAMPLING_NM = 4;
     /** Leave-one-out errors count against the stated uncertainty as so many errors of just that size do for it. */
     private static final double TRUST = 4;
     private static final double LARGEST_SCORE = 3;
@@ -108,7 +109,7 @@ final class Judgement {
             ResponseModel model = new ResponseModel(input.channels(), input.carriers(), without.mean(), input.stack(), IndexChange.NONE,
                     input.view());
             ThicknessRange near = new ThicknessRange(Math.max(0, step.thicknessNm() - REACH_NM), step.thicknessNm() + REACH_NM);
-            ColourCurve curve = new Calibration(model, without.factors(), List.of(), null).curve(near, 1);
+            ColourCurve curve = new Calibration(model, without.factors(), List.of(), null).curve(near, (near.toNm() - near.fromNm()) / LOCAL_STEPS);
             double[] variance = step.variance();
             for (int c = 0; c < variance.length; c++) {
                 variance[c] += Math.pow(level.residual() * step.signal()[c], 2);

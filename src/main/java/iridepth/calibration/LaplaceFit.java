@@ -15,7 +15,8 @@ final class LaplaceFit {
     private static final int NOISE_ROUNDS = 6;
     private static final double[] SOFTENED = {0.1, 0.01, 0.001};
     private static final double LARGEST_CHANGE = 3;
-    private static final double CONVERGED = 1e-4;
+    /** A step that gains less than this in ln of the probability is the last. */
+    private static final double CONVERGED = 1e-8;
 
     private final Observations data;
     private final PriorCovariance covariance;
@@ -88,10 +89,10 @@ final class LaplaceFit {
             }
             f = nextF;
             dual = nextDual;
-            current = next;
-            if (step > NOISE_ROUNDS && share * largest < CONVERGED) {
+            if (step >= NOISE_ROUNDS && current - next < CONVERGED) {
                 return;
             }
+            current = next;
         }
     }
 

@@ -1,8 +1,8 @@
 package iridepth.calibration;
 
+import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
-import org.apache.commons.math3.linear.Array2DRowRealMatrix;
-import org.apache.commons.math3.linear.EigenDecomposition;
 
 /**
  * Several fits of the same data under different suppositions, each weighted by its evidence (Bayesian model averaging: J. A.
@@ -12,7 +12,7 @@ import org.apache.commons.math3.linear.EigenDecomposition;
  * @param probability their probabilities, with sum 1
  */
 record Mixture(List<Posterior> fits, double[] probability) {
-    private static final double NEGLIGIBLE = 1e-3;
+    private static final double NEGLIGIBLE = 1e-2;
     private static final double SMALLEST_PART = 1e-12;
 
     /**
@@ -60,8 +60,7 @@ record Mixture(List<Posterior> fits, double[] probability) {
     }
 
     /**
-     * Directions whose outer products sum to the covariance of the parameters: eigenvectors times the roots of eigenvalues, the
-     * largest first, negligible ones left out.
+     * Directions whose outer products sum to the covariance of the parameters, negligible ones left out.
      */
     double[][] factors() {
         double[] mean = mean();
@@ -80,16 +79,40 @@ record Mixture(List<Posterior> fits, double[] probability) {
                 }
             }
         }
-        EigenDecomposition eigen = new EigenDecomposition(new Array2DRowRealMatrix(covariance, false));
-        double[] values = eigen.getRealEigenvalues();
-        int rank = 0;
-        while (rank < values.length && values[rank] > SMALLEST_PART * values[0]) {
-            rank++;
+        return pivoted(covariance);
+    }
+
+    /** Cholesky's factor with pivoting, column by column until what is left is negligible (N. J. Higham, Cambridge 1990). */
+    private static double[][] pivoted(double[][] matrix) {
+        int n = matrix.length;
+        double[] diagonal = new double[n];
+        for (int i = 0; i < n; i++) {
+            diagonal[i] = matrix[i][i];
         }
-        double[][] factors = new double[rank][];
-        for (int r = 0; r < rank; r++) {
-            factors[r] = eigen.getEigenvector(r).mapMultiply(Math.sqrt(values[r])).toArray();
+        double largest = Arrays.stream(diagonal).max().orElseThrow();
+        List<double[]> columns = new ArrayList<>();
+        while (columns.size() < n) {
+            int pivot = 0;
+            for (int i = 1; i < n; i++) {
+                pivot = diagonal[i] > diagonal[pivot] ? i : pivot;
+            }
+            if (!(diagonal[pivot] > SMALLEST_PART * largest)) {
+                break;
+            }
+            double[] column = matrix[pivot].clone();
+            for (double[] before : columns) {
+                for (int i = 0; i < n; i++) {
+                    column[i] -= before[pivot] * before[i];
+                }
+            }
+            double root = Math.sqrt(diagonal[pivot]);
+            for (int i = 0; i < n; i++) {
+                column[i] /= root;
+                diagonal[i] -= column[i] * column[i];
+            }
+            diagonal[pivot] = 0;
+            columns.add(column);
         }
-        return factors;
+        return columns.toArray(double[][]::new);
     }
 }

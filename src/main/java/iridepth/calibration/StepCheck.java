@@ -1,6 +1,7 @@
 package iridepth.calibration;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Locale;
 import java.util.stream.Collectors;
@@ -27,7 +28,7 @@ final class StepCheck {
         List<double[]> colours = new ArrayList<>();
         if (input.flatStack().isPresent()) {
             double[] flat = new double[input.channels().size()];
-            java.util.Arrays.fill(flat, 1);
+            Arrays.fill(flat, 1);
             colours.add(flat);
         }
         for (StepSignal step : input.steps()) {

@@ -16,13 +16,15 @@ import java.util.stream.IntStream;
 record Suppositions(List<SensorPrior> priors, List<NoiseLevel> levels) {
     private static final double[] LENGTHS_NM = {15, 22, 32, 48};
     private static final double[][] UNKNOWN_SENSOR = {{0.2, 1}, {0.2, 2}, {0.6, 1}, {0.6, 2}};
-    private static final double[][] KNOWN_SENSOR = {{0.02, 0}, {0.06, 0}, {0.2, 0}};
+    private static final double[][] KNOWN_SENSOR = {{0.03, 0}, {0.1, 0}, {0.3, 0}};
     /** In units of the flat's stated residual. */
     private static final double[] RESIDUALS = {0.3, 1, 3};
     private static final double[] STEP_NM = {0.04, 0.13, 0.4};
     private static final double MIDDLE_LENGTH_NM = 30;
     private static final double[] MIDDLE_UNKNOWN = {0.4, 1.5};
     private static final double COUPLING = 0.4;
+    /** What a known sensor strays is mostly the lamp, common to all channels. */
+    private static final double KNOWN_COUPLING = 0.8;
     private static final double UNLIKELY = 0.05;
     private static final int FEW = 3;
 
@@ -42,7 +44,7 @@ record Suppositions(List<SensorPrior> priors, List<NoiseLevel> levels) {
                     new double[][] {lobe}, spread[0], spread[1], MIDDLE_LENGTH_NM, 0), level).evidence()).toArray();
             best[c] = lobes.get(IntStream.range(0, evidence.length).reduce(0, (a, b) -> evidence[b] > evidence[a] ? b : a));
         }
-        return new SensorPrior(best, spread[0], spread[1], MIDDLE_LENGTH_NM, COUPLING);
+        return new SensorPrior(best, spread[0], spread[1], MIDDLE_LENGTH_NM, known ? KNOWN_COUPLING : COUPLING);
     }
 
     /** The noise level in the middle of what is supposed. */

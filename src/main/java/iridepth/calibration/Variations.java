@@ -1,5 +1,6 @@
 package iridepth.calibration;
 
+import iridepth.optics.Stack;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
@@ -14,7 +15,7 @@ import java.util.Optional;
  * @param level    the most probable noise level
  * @param mixture  the fits
  */
-record Variations(FitInput input, iridepth.optics.Stack stated, IndexChange index, SensorPrior prior, NoiseLevel level,
+record Variations(FitInput input, Stack stated, IndexChange index, SensorPrior prior, NoiseLevel level,
                   Mixture mixture) {
     /** The refits; an input that is exact has none. */
     List<Variation> all(ApertureEstimate aperture, Optional<IndexEstimate> fitted) {
