@@ -62,6 +62,7 @@ final class RowReader {
     PixelRow read(Frame counts, int row, int y) {
         photo.convert(counts, row, y, line);
         found.clear();
+        search.begin();
         notedCount = 0;
         pinnedCount = 0;
         boolean[] excludedHere = excludedColumns(y);
