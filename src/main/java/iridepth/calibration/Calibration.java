@@ -61,8 +61,13 @@ public final class Calibration {
      */
     public CalibrationData data(String flat) {
         List<CalibrationData.Moved> moved = variations.stream()
-                .map(v -> new CalibrationData.Moved(v.input(), CalibrationData.of(v.moved(), model.stack()))).toList();
-        return new CalibrationData(model.stack().toString(), flat, CalibrationData.of(model, model.stack()), factors, moved, figures);
+                .map(v -> new CalibrationData.Moved(v.input(), CalibrationData.of(v.moved()))).toList();
+        return new CalibrationData(model.stack().toString(), flat, CalibrationData.of(model), factors, moved, figures);
+    }
+
+    /** This calibration with its figures. */
+    Calibration with(FitFigures judged) {
+        return new Calibration(model, factors, variations, judged);
     }
 
     /** The effective responses E_c: relative to the flat where there is one, glare apart. */
@@ -75,9 +80,9 @@ public final class Calibration {
         return model.glare();
     }
 
-    /** The stack with the film. */
+    /** The stack, its film with the index that the steps call for where that was fitted. */
     public Stack stack() {
-        return model.stack();
+        return model.film();
     }
 
     /** The directions of view as the steps corrected them. */

@@ -4,6 +4,7 @@ import iridepth.optics.Polarisation;
 import iridepth.optics.Stack;
 import iridepth.optics.View;
 import iridepth.spectrum.Spectrum;
+import java.util.Arrays;
 import java.util.List;
 
 /**
@@ -29,10 +30,10 @@ public record CalibrationData(String stack, String flat, Model model, double[][]
      * @param sine         sines of the angles of incidence
      * @param weight       their weights
      * @param polarisation the light's polarisation
-     * @param indexFactor  factor on the film's index
+     * @param index        how the film's index differs from the stated one
      */
     public record Model(List<String> channels, double[][] carriers, double[] parameters, String view, double[] sine, double[] weight,
-                        Polarisation polarisation, double indexFactor) {
+                        Polarisation polarisation, IndexChange index) {
     }
 
     /**
@@ -44,17 +45,16 @@ public record CalibrationData(String stack, String flat, Model model, double[][]
     public record Moved(String input, Model model) {
     }
 
-    static Model of(ResponseModel model, Stack nominal) {
+    static Model of(ResponseModel model) {
         double[][] carriers = model.carriers().stream().map(Spectrum::toArray).toArray(double[][]::new);
         View view = model.view();
         return new Model(model.channels(), carriers, model.parameters(), view.text(), view.sine(), view.weight(), view.polarisation(),
-                model.stack().film().n().at(0) / nominal.film().n().at(0));
+                model.index());
     }
 
     static ResponseModel model(Model data, Stack stack) {
-        Stack moved = data.indexFactor() == 1 ? stack : stack.withFilm(stack.film().denser(data.indexFactor()));
-        List<Spectrum> carriers = java.util.Arrays.stream(data.carriers()).map(Spectrum::of).toList();
-        return new ResponseModel(data.channels(), carriers, data.parameters(), moved,
+        List<Spectrum> carriers = Arrays.stream(data.carriers()).map(Spectrum::of).toList();
+        return new ResponseModel(data.channels(), carriers, data.parameters(), stack, data.index(),
                 new View(data.view(), data.sine(), data.weight(), data.polarisation()));
     }
 }

@@ -23,10 +23,11 @@ import java.util.Optional;
  * @param steps         films of known thickness
  * @param patches       patches of known reflectance
  * @param inputs        how well the inputs are known
+ * @param indexPrior    how far the film's index may lie from the stated one, where it is to be fitted; else empty
  */
 public record FitInput(List<String> channels, List<Light> lights, List<Spectrum> sensitivities, Stack stack,
                        Optional<Stack> flatStack, View view, ThicknessRange range, List<StepSignal> steps,
-                       List<PatchSignal> patches, InputUncertainty inputs) {
+                       List<PatchSignal> patches, InputUncertainty inputs, Optional<IndexPrior> indexPrior) {
     /**
      * Keeps copies of the lists and checks that they fit together.
      *
@@ -75,51 +76,57 @@ public record FitInput(List<String> channels, List<Light> lights, List<Spectrum>
     public static FitInput of(List<String> channels, Light light, Stack stack, Optional<Stack> flatStack, View view,
                               ThicknessRange range, List<StepSignal> steps) {
         return new FitInput(channels, new ArrayList<>(Collections.nCopies(channels.size(), light)), List.of(), stack, flatStack,
-                view, range, steps, List.of(), InputUncertainty.DEFAULT);
+                view, range, steps, List.of(), InputUncertainty.DEFAULT, Optional.empty());
     }
 
     /** This input with known sensitivities, one per channel. */
     public FitInput withSensitivities(List<Spectrum> known) {
-        return new FitInput(channels, lights, known, stack, flatStack, view, range, steps, patches, inputs);
+        return new FitInput(channels, lights, known, stack, flatStack, view, range, steps, patches, inputs, indexPrior);
     }
 
     /** This input with other lights, one per channel. */
     public FitInput withLights(List<Light> others) {
-        return new FitInput(channels, others, sensitivities, stack, flatStack, view, range, steps, patches, inputs);
+        return new FitInput(channels, others, sensitivities, stack, flatStack, view, range, steps, patches, inputs, indexPrior);
     }
 
     /** This input with patches of known reflectance. */
     public FitInput withPatches(List<PatchSignal> known) {
-        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, steps, known, inputs);
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, steps, known, inputs, indexPrior);
     }
 
     /** This input with other uncertainties. */
     public FitInput withInputs(InputUncertainty others) {
-        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, steps, patches, others);
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, steps, patches, others, indexPrior);
     }
 
     /** This input with another stack, such as one whose film has another index. */
     public FitInput withStack(Stack other) {
-        return new FitInput(channels, lights, sensitivities, other, flatStack, view, range, steps, patches, inputs);
+        return new FitInput(channels, lights, sensitivities, other, flatStack, view, range, steps, patches, inputs, indexPrior);
     }
 
     /** This input seen from other directions. */
     public FitInput withView(View other) {
-        return new FitInput(channels, lights, sensitivities, stack, flatStack, other, range, steps, patches, inputs);
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, other, range, steps, patches, inputs, indexPrior);
+    }
+
+    /** This input with the film's index to be fitted. */
+    public FitInput withIndexFitted(IndexPrior spread) {
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, steps, patches, inputs,
+                Optional.of(spread));
     }
 
     /** This input with films beside its steps. */
     FitInput withMore(List<StepSignal> films) {
         List<StepSignal> all = new ArrayList<>(steps);
         all.addAll(films);
-        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, all, patches, inputs);
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, all, patches, inputs, indexPrior);
     }
 
     /** This input without one of its steps. */
     public FitInput without(int step) {
         List<StepSignal> fewer = new ArrayList<>(steps);
         fewer.remove(step);
-        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, fewer, patches, inputs);
+        return new FitInput(channels, lights, sensitivities, stack, flatStack, view, range, fewer, patches, inputs, indexPrior);
     }
 
     /** What the bumps of each channel multiply: the light, times the sensitivity where it is known, with largest magnitude 1. */

@@ -3,35 +3,45 @@ package iridepth.calibration;
 import iridepth.optics.Reflectance;
 import iridepth.spectrum.Grid;
 import iridepth.spectrum.Spectrum;
+import java.util.Arrays;
 import java.util.List;
 import java.util.stream.IntStream;
 
 /**
- * A rig as a calibration sees it before any photo: signals at evenly spaced thicknesses, and how they change with the logarithms
+ * A rig as a calibration sees it before any photo: signals at some thicknesses, and how they change with the logarithms
  * of the bumps' weights and of the glare around those of a supposed sensor.
  *
  * @param input      the rig
  * @param weights    weights of the bumps channel by channel, each channel's glare behind its weights
  * @param thickness  thicknesses, nm
+ * @param stepNm     their spacing, NaN where they are not evenly spaced
  * @param signal     [thickness][channel], a perfect reflector's being 1
  * @param slope      its derivative by thickness, 1/nm
  * @param bend       its second derivative, 1/nm^2
  * @param rows       derivatives of the signals by the logarithms, [thickness][channel][parameter]
  */
-record LinearRig(FitInput input, double[] weights, double[] thickness, double[][] signal, double[][] slope, double[][] bend,
+record LinearRig(FitInput input, double[] weights, double[] thickness, double stepNm, double[][] signal, double[][] slope, double[][] bend,
                  double[][][] rows) {
     static final int WIDTH = Bumps.COUNT + 1;
     private static final double BEND_STEP_NM = 0.5;
+    /** Signal of a film on which the usual glare is reckoned, a perfect reflector's being 1: that of an oxide on silicon. */
+    private static final double TYPICAL_SIGNAL = 0.3;
 
-    /** The rig with a supposed sensor, at {@code size} thicknesses. */
-    static LinearRig of(FitInput input, List<Spectrum> supposed, double fromNm, double stepNm, int size) {
-        return at(input, weights(input, supposed), fromNm, stepNm, size);
+    /** The rig with a supposed sensor, at {@code size} evenly spaced thicknesses. */
+    static LinearRig evenly(FitInput input, List<Spectrum> supposed, double fromNm, double stepNm, int size) {
+        double[] thickness = new double[size];
+        Arrays.setAll(thickness, i -> fromNm + stepNm * i);
+        return of(input, weights(input, supposed), thickness, stepNm);
+    }
+
+    /** The rig with a supposed sensor, at any thicknesses. */
+    static LinearRig at(FitInput input, List<Spectrum> supposed, double[] thickness) {
+        return of(input, weights(input, supposed), thickness, Double.NaN);
     }
 
     /** The same weights before other inputs. */
     LinearRig moved(FitInput other) {
-        double step = thickness.length > 1 ? thickness[1] - thickness[0] : 1;
-        return at(other, weights, thickness[0], step, thickness.length);
+        return of(other, weights, thickness, stepNm);
     }
 
     /** Weights that follow the sensitivities, with the generic floor, scaled for a perfect reflector; the usual glare. */
@@ -49,7 +59,7 @@ record LinearRig(FitInput input, double[] weights, double[] thickness, double[][
             for (int k = 0; k < Bumps.COUNT; k++) {
                 weights[c * WIDTH + k] = (lobe[k] + SensorPrior.FLOOR) / white;
             }
-            weights[c * WIDTH + Bumps.COUNT] = SensorPrior.GLARE * 0.3;
+            weights[c * WIDTH + Bumps.COUNT] = SensorPrior.GLARE * TYPICAL_SIGNAL;
         }
         return weights;
     }
@@ -69,24 +79,23 @@ record LinearRig(FitInput input, double[] weights, double[] thickness, double[][
         return lobe;
     }
 
-    private static LinearRig at(FitInput input, double[] weights, double fromNm, double stepNm, int size) {
+    private static LinearRig of(FitInput input, double[] weights, double[] thickness, double stepNm) {
         int channels = input.channels().size();
+        int size = thickness.length;
         Reflectance film = Reflectance.of(input.stack(), input.view());
         double[][] r = new double[Grid.SIZE][size];
         double[][] dr = new double[Grid.SIZE][size];
         double[][] beyond = new double[Grid.SIZE][size];
         IntStream.range(0, Grid.SIZE).parallel().forEach(i -> {
-            film.sweep(i, fromNm + BEND_STEP_NM, stepNm, r[i], beyond[i]);
-            film.sweep(i, fromNm, stepNm, r[i], dr[i]);
+            sweep(film, i, thickness, BEND_STEP_NM, stepNm, r[i], beyond[i]);
+            sweep(film, i, thickness, 0, stepNm, r[i], dr[i]);
         });
         double[][] response = responses(input, weights, channels);
-        double[] thickness = new double[size];
         double[][] signal = new double[size][channels];
         double[][] slope = new double[size][channels];
         double[][] bend = new double[size][channels];
         double[][][] rows = new double[size][channels][];
         for (int t = 0; t < size; t++) {
-            thickness[t] = fromNm + t * stepNm;
             double[] spectrum = new double[Grid.SIZE];
             for (int c = 0; c < channels; c++) {
                 double next = 0;
@@ -99,7 +108,23 @@ record LinearRig(FitInput input, double[] weights, double[] thickness, double[][
             }
             rows[t] = rows(input, weights, spectrum, signal[t]);
         }
-        return new LinearRig(input, weights, thickness, signal, slope, bend, rows);
+        return new LinearRig(input, weights, thickness, stepNm, signal, slope, bend, rows);
+    }
+
+    /** Reflectance and its derivative at the thicknesses, each increased by an offset. */
+    private static void sweep(Reflectance film, int gridIndex, double[] thickness, double offset, double stepNm, double[] value,
+                              double[] derivative) {
+        if (!Double.isNaN(stepNm)) {
+            film.sweep(gridIndex, thickness[0] + offset, stepNm, value, derivative);
+            return;
+        }
+        double[] one = new double[1];
+        double[] change = new double[1];
+        for (int t = 0; t < thickness.length; t++) {
+            film.sweep(gridIndex, thickness[t] + offset, 1, one, change);
+            value[t] = one[0];
+            derivative[t] = change[0];
+        }
     }
 
     private static double[][] responses(FitInput input, double[] weights, int channels) {

@@ -17,10 +17,12 @@ import java.util.List;
  * @param channels   names
  * @param carriers   what each channel's bumps multiply
  * @param parameters weights of the bumps channel by channel, each channel's glare behind its weights
- * @param stack      the film
+ * @param stack      the stack as stated
+ * @param index      how the film's index differs from the stated one
  * @param view       the directions
  */
-record ResponseModel(List<String> channels, List<Spectrum> carriers, double[] parameters, Stack stack, View view) {
+record ResponseModel(List<String> channels, List<Spectrum> carriers, double[] parameters, Stack stack,
+                     IndexChange index, View view) {
     private static final int WIDTH = Bumps.COUNT + 1;
 
     /** Responses of any parameters on these carriers: carrier times sum of weighted bumps. */
@@ -42,6 +44,11 @@ record ResponseModel(List<String> channels, List<Spectrum> carriers, double[] pa
         return new EffectiveResponses(channels, responses(parameters).stream().map(Spectrum::of).toList());
     }
 
+    /** The stack with the film's index as changed. */
+    Stack film() {
+        return index.apply(stack);
+    }
+
     double[] glare() {
         double[] glare = new double[channels.size()];
         for (int c = 0; c < glare.length; c++) {
@@ -51,7 +58,7 @@ record ResponseModel(List<String> channels, List<Spectrum> carriers, double[] pa
     }
 
     ColourCurve curve(ThicknessRange range, double stepNm) {
-        return ColourCurve.of(responses(), Reflectance.of(stack, view), range, stepNm).plus(glare());
+        return ColourCurve.of(responses(), Reflectance.of(film(), view), range, stepNm).plus(glare());
     }
 
     /**
@@ -81,7 +88,7 @@ record ResponseModel(List<String> channels, List<Spectrum> carriers, double[] pa
 
     /** Sum over wavelength of carrier x bump x reflectance, [sample][channel][bump]. */
     private double[][][] design(ColourCurve curve) {
-        Reflectance reflectance = Reflectance.of(stack, view);
+        Reflectance reflectance = Reflectance.of(film(), view);
         double[][][] design = new double[curve.size()][channels.size()][Bumps.COUNT];
         double[] r = new double[curve.size()];
         for (int i = 0; i < Grid.SIZE; i++) {

@@ -26,10 +26,15 @@ final class StepCriterion {
                 .orElseThrow();
     }
 
-    /** The candidate that lowers the mean most when it is added to a posterior; the first of equals. */
-    int best(LinearPosterior posterior, int[] candidates) {
+    /**
+     * The candidate that lowers the mean most when it is added to a posterior; the first of equals.
+     *
+     * @param films      the rig at the thicknesses of the films that may be steps
+     * @param candidates which of these
+     */
+    int best(LinearPosterior posterior, LinearRig films, int[] candidates) {
         double[][][] covariance = Arrays.stream(rig.rows()).parallel().map(posterior::covariance).toArray(double[][][]::new);
-        double[] means = Arrays.stream(candidates).parallel().mapToDouble(at -> meanWith(posterior, covariance, at)).toArray();
+        double[] means = Arrays.stream(candidates).parallel().mapToDouble(at -> meanWith(posterior, covariance, films, at)).toArray();
         int best = 0;
         for (int k = 1; k < means.length; k++) {
             best = means[k] < means[best] ? k : best;
@@ -37,10 +42,10 @@ final class StepCriterion {
         return candidates[best];
     }
 
-    private double meanWith(LinearPosterior posterior, double[][][] covariance, int at) {
-        double[][] spread = posterior.spread(rig.rows()[at]);
-        double[][] system = model.stepNoise(rig, at);
-        double[][] own = LinearPosterior.times(rig.rows()[at], spread);
+    private double meanWith(LinearPosterior posterior, double[][][] covariance, LinearRig films, int at) {
+        double[][] spread = posterior.spread(films.rows()[at]);
+        double[][] system = model.stepNoise(films, at);
+        double[][] own = LinearPosterior.times(films.rows()[at], spread);
         int n = own.length;
         for (int a = 0; a < n; a++) {
             for (int b = 0; b < n; b++) {

@@ -5,9 +5,7 @@ import iridepth.photo.ChannelNoise;
 import iridepth.spectrum.Spectrum;
 import java.util.ArrayList;
 import java.util.Arrays;
-import java.util.LinkedHashMap;
 import java.util.List;
-import java.util.Map;
 import java.util.stream.IntStream;
 
 /**
@@ -31,25 +29,21 @@ public final class StepDesign {
     private static final int EXCHANGES = 2;
 
     private final StepModel model;
-    private final LinearRig rig;
     private final StepCriterion criterion;
-    /** Indices of the rig's thicknesses that may be steps, and what these are called: the films at hand lie near, not on them. */
-    private final Map<Integer, Double> candidates = new LinkedHashMap<>();
+    /** The rig at the thicknesses that may be steps. */
+    private final LinearRig films;
     private final List<Double> meanByCount = new ArrayList<>();
     private List<Integer> chosen = new ArrayList<>();
 
-    private StepDesign(StepModel model, double[] films) {
+    private StepDesign(StepModel model, double[] atHand) {
         this.model = model;
         double from = model.input().range().fromNm();
         double length = model.input().range().toNm() - from;
         int size = (int) Math.max(FEWEST_THICKNESSES, Math.min(MOST_THICKNESSES, length / SPACING_NM + 1));
         double step = length / (size - 1);
-        this.rig = model.rig(from, step, size);
+        LinearRig rig = model.rig(from, step, size);
         this.criterion = new StepCriterion(model, rig);
-        if (films.length == 0) {
-            IntStream.range(0, size).forEach(i -> candidates.put(i, rig.thickness()[i]));
-        }
-        Arrays.stream(films).forEach(d -> candidates.put((int) Math.round((d - from) / step), d));
+        this.films = atHand.length == 0 ? rig : model.rig(atHand);
     }
 
     /**
@@ -68,41 +62,42 @@ public final class StepDesign {
         if (!(uncertaintyNm > 0 && uncertaintyNm < 1e3)) {
             throw new IllegalArgumentException("the uncertainty of the steps must be above 0 nm, not " + uncertaintyNm);
         }
-        int most = films.length > 0 ? Math.min(MOST, films.length) : MOST;
+        double[] distinct = Arrays.stream(films).distinct().sorted().toArray();
+        int most = films.length > 0 ? Math.min(MOST, distinct.length) : MOST;
         if (count < 0 || count > most) {
             throw new IllegalArgumentException("give 1 to " + most + " steps, not " + count);
         }
-        for (double film : films) {
+        for (double film : distinct) {
             if (!(film >= input.range().fromNm() && film <= input.range().toNm())) {
                 throw new IllegalArgumentException("the film of " + film + " nm lies outside the range of " + input.range().fromNm()
                         + " to " + input.range().toNm() + " nm");
             }
         }
-        StepDesign design = new StepDesign(new StepModel(input, supposed, noise, uncertaintyNm), films);
-        design.choose(count, Math.min(most, design.candidates.size()));
+        StepDesign design = new StepDesign(new StepModel(input, supposed, noise, uncertaintyNm), distinct);
+        design.choose(count, most);
         return design;
     }
 
     private void choose(int count, int most) {
-        LinearPosterior posterior = model.start(rig);
+        LinearPosterior posterior = model.start(films);
         while (chosen.size() < most) {
-            int best = criterion.best(posterior, free(-1));
+            int best = criterion.best(posterior, films, free(-1));
             chosen.add(best);
-            posterior = model.with(posterior, rig, best);
+            posterior = model.with(posterior, films, best);
             meanByCount.add(criterion.mean(posterior));
         }
         int wanted = count > 0 ? count : worthwhile();
         chosen = new ArrayList<>(chosen.subList(0, wanted));
         for (int round = 0; round < EXCHANGES; round++) {
             for (int k = 0; k < wanted; k++) {
-                chosen.set(k, criterion.best(posterior(k), free(k)));
+                chosen.set(k, criterion.best(posterior(k), films, free(k)));
             }
         }
     }
 
     /** Candidates that are not chosen yet, the one chosen at a place apart: a film measured twice errs twice alike. */
     private int[] free(int without) {
-        return candidates.keySet().stream().mapToInt(c -> c).filter(c -> {
+        return IntStream.range(0, films.thickness().length).filter(c -> {
             int at = chosen.indexOf(c);
             return at < 0 || at == without;
         }).toArray();
@@ -119,16 +114,16 @@ public final class StepDesign {
 
     /** The posterior of the steps chosen, but for one of them; -1 for all. */
     private LinearPosterior posterior(int without) {
-        LinearPosterior posterior = model.start(rig);
+        LinearPosterior posterior = model.start(films);
         for (int k = 0; k < chosen.size(); k++) {
-            posterior = k == without ? posterior : model.with(posterior, rig, chosen.get(k));
+            posterior = k == without ? posterior : model.with(posterior, films, chosen.get(k));
         }
         return posterior;
     }
 
     /** The steps' thicknesses, rising, nm. */
     public double[] thicknesses() {
-        return chosen.stream().mapToDouble(candidates::get).sorted().toArray();
+        return chosen.stream().mapToDouble(i -> films.thickness()[i]).sorted().toArray();
     }
 
     /** Mean over the range of the systematic standard uncertainty after 1, 2, ... steps, chosen greedily, nm. */
@@ -148,6 +143,6 @@ public final class StepDesign {
      * @param curve signals on a scale on which a perfect reflector gives 1
      */
     public ColourCurve expected(ColourCurve curve) {
-        return model.expected(curve, rig, chosen);
+        return model.expected(curve, films, chosen);
     }
 }

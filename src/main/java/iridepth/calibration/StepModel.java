@@ -31,7 +31,11 @@ record StepModel(FitInput input, List<Spectrum> supposed, ChannelNoise noise, do
     }
 
     LinearRig rig(double fromNm, double stepNm, int size) {
-        return LinearRig.of(input, supposed, fromNm, stepNm, size);
+        return LinearRig.evenly(input, supposed, fromNm, stepNm, size);
+    }
+
+    LinearRig rig(double[] thickness) {
+        return LinearRig.at(input, supposed, thickness);
     }
 
     /** What is known before the first step: the prior, and the flat where there is one. */

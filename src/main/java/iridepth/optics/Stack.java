@@ -121,6 +121,11 @@ public record Stack(Material ambient, List<Layer> layers, Material substrate) {
         return layers.get(filmIndex()).material();
     }
 
+    /** This stack without its film: what is seen where there is none. */
+    public Stack bare() {
+        return new Stack(ambient, layers.stream().filter(layer -> !layer.isFilm()).toList(), substrate);
+    }
+
     /** This stack with the film given a thickness in nm. */
     public Stack withFilm(double thicknessNm) {
         List<Layer> fixed = new ArrayList<>(layers);

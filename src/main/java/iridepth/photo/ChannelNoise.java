@@ -27,7 +27,8 @@ public interface ChannelNoise {
         double[] fill = level.clone();
         return (channel, signal) -> {
             double light = signal * fill[channel];
-            return light >= 1 ? NOTHING : noise.variance(channel, light, encoding.slope(channel, light)) / (fill[channel] * fill[channel]);
+            double rounding = encoding.slope(channel, light);
+            return light >= 1 ? NOTHING : noise.variance(channel, light, rounding) / (fill[channel] * fill[channel]);
         };
     }
 

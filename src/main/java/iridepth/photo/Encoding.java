@@ -129,11 +129,11 @@ public final class Encoding {
     /**
      * Linear values of all counts.
      *
-     * @param channel 0 and up
+     * @param channel 0 and up; channels of photos read jointly begin again after the last of one
      * @return linear[count]; not copied: do not change it
      */
     public float[] table(int channel) {
-        return tables[curves.length == 1 ? 0 : channel];
+        return tables[channel % curves.length];
     }
 
     /**
@@ -143,7 +143,7 @@ public final class Encoding {
      * @return slope[count]; not copied: do not change it
      */
     public float[] slopes(int channel) {
-        return slopes[curves.length == 1 ? 0 : channel];
+        return slopes[channel % curves.length];
     }
 
     /**
@@ -152,7 +152,7 @@ public final class Encoding {
      * @return fraction of full scale; beyond 1 for counts above the full scale of a linear encoding
      */
     public double linear(int channel, double count) {
-        return curves[curves.length == 1 ? 0 : channel].applyAsDouble(count / fullScale);
+        return curves[channel % curves.length].applyAsDouble(count / fullScale);
     }
 
     /**

@@ -3,6 +3,7 @@ package iridepth.photo;
 import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
+import java.util.function.Function;
 
 /**
  * The photon-transfer model of EMVA Standard 1288 (release 4.0, section 2), per channel, in linear fractions of full scale:
@@ -103,6 +104,23 @@ public final class NoiseModel {
             curve = curve.and(PhotonTransfer.ofDifference(flats.get(i - 1), flats.get(i), encoding, dark));
         }
         return fit(curve);
+    }
+
+    /** The noise of photos that are read jointly: the channels of one behind those of the other. */
+    static NoiseModel jointly(List<NoiseModel> models, int[] channels) {
+        return new NoiseModel(joined(models, channels, m -> m.readVariance), joined(models, channels, m -> m.gain),
+                joined(models, channels, m -> m.black), joined(models, channels, m -> m.correlation),
+                joined(models, channels, m -> m.countVariance));
+    }
+
+    private static double[] joined(List<NoiseModel> models, int[] channels, Function<NoiseModel, double[]> figure) {
+        double[] all = new double[Arrays.stream(channels).sum()];
+        for (int m = 0, at = 0; m < channels.length; m++) {
+            for (int c = 0; c < channels[m]; c++) {
+                all[at++] = of(figure.apply(models.get(m)), c);
+            }
+        }
+        return all;
     }
 
     private static double of(double[] values, int channel) {

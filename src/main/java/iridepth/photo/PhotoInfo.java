@@ -9,7 +9,8 @@ import java.util.Optional;
  * @param path the file
  * @param width pixels a row
  * @param height rows
- * @param channels 1 (grey) or 3 (red, green, blue); an opaque alpha channel is not counted
+ * @param channels 1 (grey) or 3 (red, green, blue); an opaque alpha channel is not counted; photos read
+ *     jointly count the channels of all
  * @param bitDepth 8 or 16: counts run from 0 to 2^bitDepth - 1
  * @param frames pictures of this size in the file, 1 or more
  * @param pixelUm pitch of the pixels on the object in um, NaN when the file does not say

@@ -11,19 +11,23 @@ import iridepth.spectrum.Grid;
 import iridepth.spectrum.Spectrum;
 import java.util.Arrays;
 import java.util.List;
+import java.util.Locale;
 
 /**
  * A camera as far as planning needs it.
  *
  * @param name          what it is, for people
+ * @param generic       whether the sensitivities are a guess, so that it wants calibration
+ * @param generic       whether the sensitivities are a guess, so that it wants calibration
  * @param channels      names of the channels
  * @param sensitivities spectral sensitivities, one per channel on a common scale; empty for a colour-managed file
  * @param noise         noise in fractions of full scale
  * @param encoding      how counts stand for light
  * @param exposure      fraction of full scale that the brightest film in the brightest channel fills, above 0 and below 1
+ * @param white         reflectance that fills the scale of every channel, which then takes the place of the exposure; or NaN
  */
-public record Camera(String name, List<String> channels, List<Spectrum> sensitivities, NoiseModel noise, Encoding encoding,
-                     double exposure) {
+public record Camera(String name, boolean generic, List<String> channels, List<Spectrum> sensitivities, NoiseModel noise, Encoding encoding,
+                     double exposure, double white) {
     /** White of the ICC profile connection space (ISO 15076-1). */
     private static final Xyz D50 = new Xyz(0.9642, 1, 0.8249);
     private static final List<String> COLOURS = List.of("red", "green", "blue");
@@ -38,9 +42,9 @@ public record Camera(String name, List<String> channels, List<Spectrum> sensitiv
         }
     }
 
-    /** A camera that writes colour-managed files. */
+    /** A camera that writes colour-managed files, red, green and blue. */
     public static Camera colourManaged(NoiseModel noise, Encoding encoding, double exposure) {
-        return new Camera("colour-managed camera", COLOURS, List.of(), noise, encoding, exposure);
+        return new Camera("colour-managed camera", false, COLOURS, List.of(), noise, encoding, exposure, Double.NaN);
     }
 
     /**
@@ -48,13 +52,15 @@ public record Camera(String name, List<String> channels, List<Spectrum> sensitiv
      * of what makers publish (common practice).
      */
     public static Camera genericColour(NoiseModel noise, Encoding encoding, double exposure) {
-        return new Camera("generic colour camera", COLOURS, List.of(lobe(600), lobe(535), lobe(455)), noise, encoding, exposure);
+        return new Camera("generic colour camera", true, COLOURS, List.of(lobe(600), lobe(535), lobe(455)), noise, encoding, exposure,
+                Double.NaN);
     }
 
     /** A monochrome camera of which nothing is known: silicon's broad rise to 560 nm and slow fall (common practice). */
     public static Camera genericMonochrome(NoiseModel noise, Encoding encoding, double exposure) {
         Spectrum silicon = Spectrum.sample(nm -> Math.exp(-Math.pow((nm - 560) / (nm < 560 ? 150 : 200), 2)));
-        return new Camera("generic monochrome camera", List.of("grey"), List.of(silicon), noise, encoding, exposure);
+        return new Camera("generic monochrome camera", true, List.of("grey"), List.of(silicon), noise, encoding, exposure,
+                Double.NaN);
     }
 
     private static Spectrum lobe(double centreNm) {
@@ -79,7 +85,10 @@ public record Camera(String name, List<String> channels, List<Spectrum> sensitiv
      */
     public ChannelNoise noise(ColourCurve curve, Light light) {
         double[] level = new double[curve.channels()];
-        Arrays.fill(level, 1);
+        Arrays.fill(level, Double.isNaN(white) ? 1 : 1 / white);
+        if (!Double.isNaN(white)) {
+            return ChannelNoise.of(noise, encoding, level);
+        }
         for (int c = 0; c < sensitivities.size(); c++) {
             level[c] = sensitivities.get(c).dot(light.power());
         }
@@ -93,6 +102,20 @@ public record Camera(String name, List<String> channels, List<Spectrum> sensitiv
         return ChannelNoise.of(noise, encoding, Arrays.stream(level).map(l -> l * scale).toArray());
     }
 
+    /** What it is, in a line for people. */
+    public String text() {
+        int counts = encoding.top() + 1;
+        String fill = Double.isNaN(white) ? String.format(Locale.ROOT, "brightest film at %.0f %% of full scale", 100 * exposure)
+                : String.format(Locale.ROOT, "full scale at a reflectance of %.3g", white);
+        return String.format(Locale.ROOT, "%s, %d counts, full well %.0f e, read noise %.3g e, %s", name, counts, 1 / noise.gain(0),
+                noise.readNoise(0) / noise.gain(0), fill);
+    }
+
+    /** This camera with the scale fixed by the reflectance that fills it. */
+    public Camera withWhite(double reflectance) {
+        return new Camera(name, generic, channels, sensitivities, noise, encoding, exposure, reflectance);
+    }
+
     /** This camera with other sensitivities, such as those of a table. */
     public Camera withSensitivities(String itsName, List<String> names, List<Spectrum> known) {
         for (int c = 0; c < known.size(); c++) {
@@ -103,6 +126,6 @@ public record Camera(String name, List<String> channels, List<Spectrum> sensitiv
                 }
             }
         }
-        return new Camera(itsName, names, known, noise, encoding, exposure);
+        return new Camera(itsName, false, names, known, noise, encoding, exposure, white);
     }
 }

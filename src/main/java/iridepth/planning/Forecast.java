@@ -21,14 +21,14 @@ public final class Forecast {
     public static final double USUAL_LIMIT = 16;
     /** Spacing of the thicknesses as a share of the curve's step. */
     private static final int PER_STEP = 8;
-    /** From one thickness to the next a rival moves by less than this share of a fringe's 64 samples. */
+    /** From one thickness to the next a rival moves by less than so many steps of the curve. */
     private static final int REACH = 4;
 
     private final double[] thickness;
     private final ExpectedUncertainty[] uncertainty;
     private final double[] wrongOrder;
     private final int[] rivals;
-    private final List<ConfusablePair> pairs;
+    private final List<ConfusablePair> stretches;
     private final double freeToNm;
 
     private Forecast(double[] thickness, ExpectedUncertainty[] uncertainty, List<List<Rival>> rivals, double reachNm) {
@@ -38,7 +38,7 @@ public final class Forecast {
         this.rivals = rivals.stream().mapToInt(List::size).toArray();
         this.freeToNm = rivals.stream().flatMap(List::stream).mapToDouble(r -> Math.max(r.filmNm(), r.rivalNm())).min()
                 .orElse(thickness[thickness.length - 1]);
-        this.pairs = pairs(rivals, reachNm);
+        this.stretches = stretches(rivals, reachNm);
     }
 
     /**
@@ -76,7 +76,7 @@ public final class Forecast {
     }
 
     /** Joins rivals of neighbouring thicknesses to pairs; each pair is taken once, from its thinner side. */
-    private static List<ConfusablePair> pairs(List<List<Rival>> rivals, double reachNm) {
+    private static List<ConfusablePair> stretches(List<List<Rival>> rivals, double reachNm) {
         List<ConfusablePair> done = new ArrayList<>();
         List<ConfusablePair> open = new ArrayList<>();
         List<Rival> ends = new ArrayList<>();
@@ -141,8 +141,8 @@ public final class Forecast {
     }
 
     /** The stretches that are confusable with each other, the thinnest first. */
-    public List<ConfusablePair> pairs() {
-        return pairs;
+    public List<ConfusablePair> stretches() {
+        return stretches;
     }
 
     /** Up to which thickness a range that begins with the first may reach before it holds a confusable pair, nm. */
@@ -155,9 +155,10 @@ public final class Forecast {
         return Arrays.stream(rivals).filter(r -> r > 0).count() / (double) size();
     }
 
-    /** Mean over the thicknesses of how many others each is confusable with: the confusable pairs, counted by their extent. */
-    public double meanRivals() {
-        return Arrays.stream(rivals).average().orElseThrow();
+    /** Number of confusable pairs among thicknesses one nanometre apart. */
+    public long confusablePairs() {
+        double length = thickness[thickness.length - 1] - thickness[0];
+        return Math.round(Arrays.stream(rivals).average().orElseThrow() * length / 2);
     }
 
     /** Mean over the thicknesses of the probability that a pixel is taken for another order. */

@@ -32,6 +32,11 @@ public record LightChoice(List<Option> singles, List<Option> pairs) {
      * @param forecast what comes of it
      */
     public record Option(List<Light> lights, ColourCurve curve, ChannelNoise noise, Forecast forecast) {
+        /** Forecasts for a curve and its noise. */
+        public static Option of(List<Light> lights, ColourCurve curve, ChannelNoise noise, double limit) {
+            return new Option(List.copyOf(lights), curve, noise, Forecast.of(curve, noise, limit));
+        }
+
         /** The lights' names. */
         public String name() {
             return lights.stream().map(Light::name).collect(Collectors.joining(" + "));
@@ -72,7 +77,7 @@ public record LightChoice(List<Option> singles, List<Option> pairs) {
         static Rig of(Camera camera, Stack stack, View view, ThicknessRange range, List<Light> lights) {
             List<EffectiveResponses> responses = lights.stream().map(camera::responses).toList();
             EffectiveResponses all = EffectiveResponses.jointly(responses, lights.stream().map(Light::name).toList());
-            return new Rig(camera, lights, ColourCurve.of(all, Reflectance.of(stack, view), range, range.step(stack)));
+            return new Rig(camera, lights, ColourCurve.of(lights.size() == 1 ? responses.get(0) : all, Reflectance.of(stack, view), range, range.step(stack)));
         }
 
         Option option(double limit, int... chosen) {
@@ -83,7 +88,7 @@ public record LightChoice(List<Option> singles, List<Option> pairs) {
                 noise = noise == null ? own : own.and(count, noise);
             }
             ColourCurve part = curve.select(channels(count, chosen));
-            return new Option(Arrays.stream(chosen).mapToObj(lights::get).toList(), part, noise, Forecast.of(part, noise, limit));
+            return Option.of(Arrays.stream(chosen).mapToObj(lights::get).toList(), part, noise, limit);
         }
 
         private static int[] channels(int count, int... chosen) {

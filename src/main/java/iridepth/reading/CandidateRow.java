@@ -94,6 +94,17 @@ final class CandidateRow {
         return true;
     }
 
+    /** Of the candidates of the pixel in work keeps the one of least cost. */
+    void keepLikeliest() {
+        int best = first;
+        for (int k = first + 1; k < size; k++) {
+            best = cost[k] < cost[best] ? k : best;
+        }
+        thickness[first] = thickness[best];
+        cost[first] = cost[best];
+        size = first + 1;
+    }
+
     /** Takes back the candidates of the pixel in work. */
     void withdraw() {
         size = first;

@@ -28,13 +28,15 @@ public final class FilmReader {
     private final Pins pins;
     private final int bandHeight;
     private final long kept;
+    private final boolean orderChoice;
 
-    private FilmReader(ColourCurve curve, List<Region> excluded, Pins pins, int bandHeight, long kept) {
+    private FilmReader(ColourCurve curve, List<Region> excluded, Pins pins, int bandHeight, long kept, boolean orderChoice) {
         this.curve = curve;
         this.excluded = List.copyOf(excluded);
         this.pins = pins;
         this.bandHeight = bandHeight;
         this.kept = kept;
+        this.orderChoice = orderChoice;
     }
 
     /**
@@ -43,12 +45,18 @@ public final class FilmReader {
      * @param excluded regions to leave out
      */
     public static FilmReader of(ColourCurve curve, List<Region> excluded) {
-        return new FilmReader(curve, excluded, Pins.none(), 0, Math.min(MOST_KEPT, Runtime.getRuntime().maxMemory() / 4));
+        return new FilmReader(curve, excluded, Pins.none(), 0, Math.min(MOST_KEPT, Runtime.getRuntime().maxMemory() / 4),
+                true);
     }
 
     /** This reader with knowledge of the thickness at places. */
     public FilmReader with(Pins itsPins) {
-        return new FilmReader(curve, excluded, itsPins, bandHeight, kept);
+        return new FilmReader(curve, excluded, itsPins, bandHeight, kept, orderChoice);
+    }
+
+    /** This reader with each pixel on its own: it takes its likeliest thickness, whatever its neighbours say of the order. */
+    public FilmReader withoutOrderChoice() {
+        return new FilmReader(curve, excluded, pins, bandHeight, kept, false);
     }
 
     /**
@@ -58,7 +66,7 @@ public final class FilmReader {
      * @param bytes how much to keep of the candidates between the passes
      */
     FilmReader inBands(int rows, long bytes) {
-        return new FilmReader(curve, excluded, pins, rows, bytes);
+        return new FilmReader(curve, excluded, pins, rows, bytes, orderChoice);
     }
 
     /**
@@ -83,12 +91,12 @@ public final class FilmReader {
         IntFunction<Sweep> newSweep = i -> index.turnsBack() ? new SlopeSweep(index, i % 2 == 0)
                 : new PathSweep(penalty, i % 2 == 0);
         int rows = bandHeight > 0 ? bandHeight : Math.max(LEAST_BAND, Math.min(MOST_BAND, BAND_PIXELS / width));
-        DownwardPass down = new DownwardPass(photo, frame, rows, () -> new RowReader(photo, excluded, pins, index), newSweep);
+        DownwardPass down = new DownwardPass(photo, frame, rows, () -> new RowReader(photo, excluded, pins, index, orderChoice), newSweep);
         List<Band> bands = down.run(kept, progress);
         long pixels = (long) width * height;
         List<OrderCorrection> corrections = new ArrayList<>();
         while (true) {
-            UpwardPass up = new UpwardPass(index, penalty, width, height, corrections, sink);
+            UpwardPass up = new UpwardPass(index, penalty, width, height, orderChoice, corrections, sink);
             up.run(bands, down, done -> progress.accept(pixels + done));
             OrderCorrection correction = up.regions().correction();
             if (correction.chains().isEmpty() || corrections.size() == MOST_CORRECTIONS) {

@@ -30,9 +30,12 @@ final class Regions {
     private final RegionLinks links;
     private final RegionWitnesses witnesses;
     private final List<FilmRegion> all = new ArrayList<>();
+    private final boolean specks;
     private ReadRow below;
 
-    Regions(CurveIndex index, JumpPenalty penalty, int width, int height) {
+    /** @param specks whether the readings of regions that are too small to have an order of their own are taken out */
+    Regions(CurveIndex index, JumpPenalty penalty, int width, int height, boolean specks) {
+        this.specks = specks;
         this.index = index;
         this.penalty = penalty;
         this.width = width;
@@ -84,8 +87,8 @@ final class Regions {
         }
     }
 
-    private static boolean isSpeck(FilmRegion region) {
-        return region.pixels() < SPECK && region.contacts() > 0;
+    private boolean isSpeck(FilmRegion region) {
+        return specks && region.pixels() < SPECK && region.contacts() > 0;
     }
 
     /** Takes the readings of specks out of a row that lies {@link #SPECK_ROWS} below the last one added, or of any at the end. */

@@ -18,6 +18,7 @@ final class RowReader {
     /** How far a candidate may lie from the thickness that is known, nm. */
     private final double tolerance;
     private final CurveIndex index;
+    private final boolean several;
     private final boolean notesAll;
     private final GridSearch search;
     private final Signal line;
@@ -32,7 +33,11 @@ final class RowReader {
     private int notedCount;
     private int pinnedCount;
 
-    RowReader(SignalSource photo, List<Region> excluded, Pins pins, CurveIndex index) {
+    /**
+     * @param several whether to keep all candidates of a pixel, for the choice of order, or the likeliest alone
+     */
+    RowReader(SignalSource photo, List<Region> excluded, Pins pins, CurveIndex index, boolean several) {
+        this.several = several;
         this.photo = photo;
         this.excluded = excluded;
         this.pins = pins;
@@ -104,6 +109,9 @@ final class RowReader {
 
     /** Ends a pixel that has been searched: keeps its candidate or notes them, or judges it if there is none. */
     private void close(int x) {
+        if (!several && found.explained()) {
+            found.keepLikeliest();
+        }
         int count = found.pending();
         if (!found.explained()) {
             found.withdraw();

@@ -49,14 +49,18 @@ final class UpwardPass {
         ReadRow row(int y, ReadRow[] before);
     }
 
-    /** @param corrections other orders to take, in the order in which they were found */
-    UpwardPass(CurveIndex index, JumpPenalty penalty, int width, int height, List<OrderCorrection> corrections, ReadingSink sink) {
+    /**
+     * @param specks      whether the readings of specks are taken out
+     * @param corrections other orders to take, in the order in which they were found
+     */
+    UpwardPass(CurveIndex index, JumpPenalty penalty, int width, int height, boolean specks, List<OrderCorrection> corrections,
+               ReadingSink sink) {
         this.index = index;
         this.width = width;
         this.height = height;
         this.decision = new OrderDecision(index, penalty, width);
         this.consensus = new Consensus(index, penalty);
-        this.regions = new Regions(index, penalty, width, height);
+        this.regions = new Regions(index, penalty, width, height, specks);
         this.outputs = new RowOutput[] {new RowOutput(sink, index, width), new RowOutput(sink, index, width)};
         this.pixels = new PixelRow[height];
         this.present = height;

@@ -21,6 +21,11 @@ public final class CalibrationFile {
     private CalibrationFile() {
     }
 
+    /** The calibration file in a result folder, or the file itself. */
+    static Path in(Path file) {
+        return Files.isDirectory(file) ? file.resolve(NAME) : file;
+    }
+
     /**
      * Reads a calibration for a recipe.
      *
@@ -28,7 +33,7 @@ public final class CalibrationFile {
      * @throws PhotoException if it cannot be read, or was made for another stack or flat
      */
     public static Calibration read(Path file, Recipe recipe) {
-        Path json = Files.isDirectory(file) ? file.resolve(NAME) : file;
+        Path json = in(file);
         try {
             JsonMapper mapper = JsonMapper.builder().propertyNamingStrategy(PropertyNamingStrategies.SNAKE_CASE)
                     .enable(MapperFeature.ACCEPT_CASE_INSENSITIVE_ENUMS).build();

@@ -5,6 +5,7 @@ import iridepth.optics.Stack;
 import iridepth.photo.Region;
 import java.nio.file.Path;
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.List;
 
 /**
@@ -14,36 +15,36 @@ import java.util.List;
  * @param whiteReflectance reflectance that fills the scale
  * @param fullScale        the count that is full scale, NaN for that of the file's bit depth
  * @param sensitivities    table of the sensor's spectral sensitivities, or null
- * @param dark             photo with no light, or null
- * @param flat             photo of the reference surface, or null
+ * @param darks            photo with no light for each of the recipe's lights, or none
+ * @param flats            photo of the reference surface under each of the recipe's lights, or none
  * @param flatStack        stack of that surface, or null
  * @param steps            patches of known thickness
  * @param readNoise        read noise in counts, NaN to estimate
  * @param fullWell         electrons at full scale, NaN to estimate
  */
-public record CameraSpec(String encoding, double whiteReflectance, double fullScale, Path sensitivities, Path dark,
-                         Path flat, Stack flatStack, List<Step> steps, double readNoise, double fullWell) {
+public record CameraSpec(String encoding, double whiteReflectance, double fullScale, Path sensitivities,
+                         List<Path> darks, List<Path> flats, Stack flatStack, List<Step> steps, double readNoise, double fullWell) {
     /**
      * A patch of the film of known thickness.
      *
-     * @param image         the photo that shows it
+     * @param images        the photos that show it, one under each of the recipe's lights
      * @param region        where it is in the photo
      * @param thicknessNm   its thickness
      * @param uncertaintyNm standard uncertainty of that, NaN where nobody stated it
      */
-    public record Step(Path image, Region region, double thicknessNm, double uncertaintyNm) {
+    public record Step(List<Path> images, Region region, double thicknessNm, double uncertaintyNm) {
     }
 
-    static CameraSpec read(Section camera, Tables tables, Materials materials) {
+    static CameraSpec read(Section camera, Tables tables, Materials materials, int lights) {
         String encoding = camera.choice("encoding", "srgb", List.of("srgb", "linear"));
         double white = camera.number("white_reflectance", 1, 1e-4, 100);
         double fullScale = camera.number("full_scale", Double.NaN, 1, 65535);
         Path sensitivities = path(camera, "sensitivities", tables);
-        Path dark = path(camera, "dark", tables);
-        Path flat = path(camera, "flat", tables);
+        List<Path> darks = photos(camera, "dark", tables, lights, true);
+        List<Path> flats = photos(camera, "flat", tables, lights, false);
         Stack flatStack = camera.has("flat_stack") ? Recipe.stack(camera, "flat_stack", materials) : null;
-        if ((flat == null) != (flatStack == null)) {
-            throw camera.error(flat == null ? "flat_stack" : "flat", "camera.flat and camera.flat_stack go together: the photo of "
+        if (flats.isEmpty() != (flatStack == null)) {
+            throw camera.error(flats.isEmpty() ? "flat_stack" : "flat", "camera.flat and camera.flat_stack go together: the photo of "
                     + "the reference surface and what it is made of");
         }
         if (flatStack != null && flatStack.hasFilm()) {
@@ -51,7 +52,7 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
         }
         List<Step> steps = new ArrayList<>();
         for (Section section : camera.sections("steps")) {
-            steps.add(step(section, tables));
+            steps.add(step(section, tables, lights));
             section.finish();
         }
         double readNoise = camera.number("read_noise_counts", Double.NaN, 0, 65535);
@@ -60,21 +61,37 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
             throw camera.error("read_noise_counts", "camera.read_noise_counts and camera.full_well_e go together");
         }
         camera.finish();
-        return new CameraSpec(encoding, white, fullScale, sensitivities, dark, flat, flatStack, List.copyOf(steps), readNoise,
+        return new CameraSpec(encoding, white, fullScale, sensitivities, darks, flats, flatStack, List.copyOf(steps), readNoise,
                 fullWell);
+    }
+
+    /** One photo for each light; a single one may serve all where it does not depend on the light. */
+    private static List<Path> photos(Section section, String key, Tables tables, int lights, boolean shared) {
+        if (!section.has(key) && !key.equals("image")) {
+            return List.of();
+        }
+        List<Path> photos = section.texts(key).stream().map(tables::resolve).toList();
+        if (photos.size() == 1 && shared) {
+            return Collections.nCopies(lights, photos.get(0));
+        }
+        if (photos.size() != lights) {
+            throw section.error(key, section.path(key) + ": the recipe has " + lights + (lights == 1 ? " light, so give one photo"
+                    : " lights, so give a list of " + lights + " photos in their order") + ", not " + photos.size());
+        }
+        return photos;
     }
 
     private static Path path(Section camera, String key, Tables tables) {
         return camera.has(key) ? tables.resolve(camera.text(key)) : null;
     }
 
-    private static Step step(Section section, Tables tables) {
+    private static Step step(Section section, Tables tables, int lights) {
         Region region = Recipe.region(section, "region", section.numbers("region", 4));
         double thickness = section.number("thickness_nm", Double.NaN, 0, 1e6);
         if (Double.isNaN(thickness)) {
             throw section.error("", section.path("thickness_nm") + " is missing from a step");
         }
-        return new Step(tables.resolve(section.text("image")), region, thickness,
+        return new Step(photos(section, "image", tables, lights, false), region, thickness,
                 section.number("uncertainty_nm", Double.NaN, 0, 1e4));
     }
 

@@ -10,6 +10,7 @@ import iridepth.reading.FilmReader;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.Collections;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
@@ -30,7 +31,6 @@ public final class Instrument {
     private Rig rig;
     private Channels channels;
     private Setup setup;
-    private FilmReader reader;
 
     /** What the curve depends on: the number of channels, and their matrix to XYZ where the file tells it. */
     private record Channels(int count, String toXyz) {
@@ -70,7 +70,34 @@ public final class Instrument {
      * @throws iridepth.photo.PhotoException if it, the dark or the flat cannot be used
      */
     public SignalSource signal(PhotoFile photo) {
-        return rig().signal(photo);
+        return signal(List.of(photo));
+    }
+
+    /**
+     * The linear signal of photos of one field, one under each of the recipe's lights, with its noise.
+     *
+     * @param photos the open photos in the order of the lights; they stay the caller's to close
+     * @throws RecipeException                if there are not as many as lights
+     * @throws iridepth.photo.PhotoException if one, or its dark or flat, cannot be used, or they are not in register
+     */
+    public SignalSource signal(List<PhotoFile> photos) {
+        return rig().signal(photos);
+    }
+
+    /**
+     * Reads what the recipe names now rather than with the first photo, so that a fault of the rig is told apart from a fault of
+     * a photo.
+     *
+     * @throws iridepth.photo.PhotoException if dark or flat cannot be used
+     */
+    public void ready() {
+        rig();
+    }
+
+    /** Whether a file is one that the recipe names, such as its flat. */
+    public boolean uses(Path file) {
+        return Provenance.files(recipe).stream().anyMatch(own -> own.toAbsolutePath().normalize()
+                .equals(file.toAbsolutePath().normalize()));
     }
 
     private synchronized Rig rig() {
@@ -83,6 +110,7 @@ public final class Instrument {
     /**
      * Colour curve and view for a photo.
      *
+     * @param photo one of the photos, where several are read jointly
      * @throws RecipeException                if the recipe does not fix them
      * @throws iridepth.photo.PhotoException if the photo or a table contradicts it
      */
@@ -92,7 +120,6 @@ public final class Instrument {
         if (!wanted.equals(channels)) {
             Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
                     : Setup.of(recipe, CalibrationFile.read(calibration.get(), recipe));
-            reader = FilmReader.of(made.curve(), recipe.excluded());
             setup = made;
             channels = wanted;
         }
@@ -106,14 +133,13 @@ public final class Instrument {
      * @throws RecipeException if the recipe's steps cannot be used
      */
     public Setup setup(SignalSource photo) {
-        Setup general = setup(photo.info());
+        Setup general = setup(photo.parts().get(0).info());
         return calibration.isPresent() ? general : general.refined(rig(), photo);
     }
 
     /** The reader of films for a photo, on the curve of {@link #setup}. */
     public synchronized FilmReader reader(PhotoInfo photo) {
-        setup(photo);
-        return reader;
+        return setup(photo).reader(recipe, photo);
     }
 
     /** What a user should know of the tables that the recipe uses, a line each. */
@@ -132,20 +158,33 @@ public final class Instrument {
     }
 
     /**
-     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the photo.
+     * SHA-256 of the recipe, the files that it names and the calibration, by name.
      *
      * @throws iridepth.photo.PhotoException if a file cannot be read
      */
-    public Map<String, String> hashes(Path photo) {
+    public Map<String, String> hashes() {
+        return Collections.unmodifiableMap(own());
+    }
+
+    /**
+     * SHA-256 of all that goes into a reading, by name: the recipe, the files that it names, the calibration, the photos.
+     *
+     * @throws iridepth.photo.PhotoException if a file cannot be read
+     */
+    public Map<String, String> hashes(Path... photos) {
         Map<String, String> all = new LinkedHashMap<>(own());
-        Provenance.add(all, recipe, photo);
+        for (Path photo : photos) {
+            Provenance.add(all, recipe, photo);
+        }
         return all;
     }
 
     private Map<String, String> own() {
         synchronized (hashing) {
             if (hashes == null) {
-                hashes = Provenance.of(recipe);
+                Map<String, String> made = Provenance.of(recipe);
+                calibration.ifPresent(file -> Provenance.add(made, recipe, CalibrationFile.in(file)));
+                hashes = made;
             }
             return hashes;
         }

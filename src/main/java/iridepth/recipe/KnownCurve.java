@@ -28,7 +28,7 @@ record KnownCurve(Recipe recipe, Function<Light, EffectiveResponses> responses) 
      * uncertainty of it makes, as an outer product over the channels; inputs are taken as independent (JCGM 100, 5.1.2).
      */
     ColourCurve curve(InputUncertainty inputs) {
-        Light light = recipe.lights().get(0);
+        List<Light> light = recipe.lights();
         ColourCurve base = curve(recipe.stack(), view(), light);
         List<ColourCurve> moved = new ArrayList<>();
         if (inputs.relativeIndex() > 0) {
@@ -36,7 +36,7 @@ record KnownCurve(Recipe recipe, Function<Light, EffectiveResponses> responses) 
             moved.add(curve(denser, view(), light));
         }
         if (inputs.lampK() > 0) {
-            moved.add(curve(recipe.stack(), view(), light.hotter(inputs.lampK())));
+            moved.add(curve(recipe.stack(), view(), light.stream().map(l -> l.hotter(inputs.lampK())).toList()));
         }
         if (inputs.numericalAperture() > 0 && Double.isNaN(recipe.view().incidenceDeg())) {
             double wider = recipe.view().numericalAperture() + inputs.numericalAperture();
@@ -45,8 +45,9 @@ record KnownCurve(Recipe recipe, Function<Light, EffectiveResponses> responses) 
         return moved.isEmpty() ? base : base.withCovariance(covariance(base, moved));
     }
 
-    private ColourCurve curve(Stack stack, View view, Light light) {
-        EffectiveResponses scaled = responses.apply(light);
+    private ColourCurve curve(Stack stack, View view, List<Light> lights) {
+        EffectiveResponses scaled = lights.size() == 1 ? responses.apply(lights.get(0))
+                : EffectiveResponses.jointly(lights.stream().map(responses).toList(), lights.stream().map(Light::name).toList());
         Stack flat = recipe.camera().flatStack();
         if (flat == null) {
             double[] factor = new double[scaled.count()];

@@ -18,10 +18,23 @@ final class MaterialSpec {
         Map<String, Material> own = new LinkedHashMap<>();
         for (String name : materials.keys()) {
             Section section = materials.section(name);
-            own.put(name, material(name, section, tables));
+            own.put(name, material(name, section.knows("fit_index"), tables));
             section.finish();
         }
         return new Materials(own);
+    }
+
+    /** Whether a material's index is to be fitted, {@code fit_index = true} beside its Cauchy form. */
+    static boolean fitsIndex(Section materials, String name) {
+        if (!materials.has(name)) {
+            return false;
+        }
+        Section section = materials.section(name);
+        boolean fits = section.flag("fit_index", false);
+        if (fits && !section.has("cauchy")) {
+            throw section.error("fit_index", section.path("fit_index") + " goes with a Cauchy form; give cauchy = [A, B] to start from");
+        }
+        return fits;
     }
 
     private static Material material(String name, Section section, Tables tables) {

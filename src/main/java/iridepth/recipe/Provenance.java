@@ -9,7 +9,9 @@ import java.security.MessageDigest;
 import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
 import java.util.LinkedHashMap;
+import java.util.LinkedHashSet;
 import java.util.Map;
+import java.util.Set;
 
 /** What is needed to repeat a run: the SHA-256 (FIPS 180-4) of every file that went into it. */
 public final class Provenance {
@@ -25,16 +27,23 @@ public final class Provenance {
      */
     public static Map<String, String> of(Recipe recipe) {
         Map<String, String> hashes = new LinkedHashMap<>();
-        add(hashes, recipe, recipe.file());
-        recipe.tables().forEach(table -> add(hashes, recipe, table));
-        CameraSpec camera = recipe.camera();
-        for (Path named : new Path[] {camera.dark(), camera.flat(), camera.sensitivities()}) {
-            if (named != null) {
-                add(hashes, recipe, named);
-            }
-        }
-        camera.steps().stream().map(CameraSpec.Step::image).distinct().forEach(image -> add(hashes, recipe, image));
+        files(recipe).forEach(file -> add(hashes, recipe, file));
         return hashes;
+    }
+
+    /** The recipe and the files that it names, each once, the recipe first. */
+    static Set<Path> files(Recipe recipe) {
+        Set<Path> files = new LinkedHashSet<>();
+        files.add(recipe.file());
+        files.addAll(recipe.tables());
+        CameraSpec camera = recipe.camera();
+        files.addAll(camera.darks());
+        files.addAll(camera.flats());
+        if (camera.sensitivities() != null) {
+            files.add(camera.sensitivities());
+        }
+        camera.steps().forEach(step -> files.addAll(step.images()));
+        return files;
     }
 
     /**

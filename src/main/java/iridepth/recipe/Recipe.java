@@ -27,11 +27,13 @@ import java.util.Optional;
  * @param excluded  regions to leave out
  * @param tolerance limits in nm, lower and upper, or null
  * @param tables    tables of materials and lamps that it names, as read
+ * @param pins      what is known of the thickness at places
+ * @param fitIndex  whether the steps are also to fix the film's index
  * @param inputs    how well the inputs are known, empty where the recipe does not say
  */
 public record Recipe(Path file, String title, Stack stack, ThicknessRange range, ViewSpec view, List<Light> lights,
                      CameraSpec camera, double pixelUm, List<Region> excluded, double[] tolerance, List<Path> tables,
-                     Optional<InputUncertainty> inputs) {
+                     PinSpec pins, boolean fitIndex, Optional<InputUncertainty> inputs) {
     /**
      * Directions of view as the recipe gives them.
      *
@@ -66,10 +68,12 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
             throw film.error("stack", "film.stack has no unknown layer; leave out the thickness of the film that is to be read");
         }
         ThicknessRange range = range(film, stack);
+        boolean fitIndex = MaterialSpec.fitsIndex(film.section("material"), stack.film().name());
+        PinSpec pins = PinSpec.read(film);
         film.finish();
         ViewSpec view = view(top.section("view"), stack, range);
         List<Light> lights = LightSpec.read(top, tables);
-        CameraSpec camera = CameraSpec.read(top.section("camera"), tables, materials);
+        CameraSpec camera = CameraSpec.read(top.section("camera"), tables, materials, lights.size());
         Section scale = top.section("scale");
         double pixelUm = scale.has("pixel_um") ? scale.number("pixel_um", 0, 1e-4, 1e6) : Double.NaN;
         scale.finish();
@@ -80,7 +84,7 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
         String title = top.text("title", file.getFileName().toString());
         top.finish();
         return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance,
-                List.copyOf(tables.read()), inputs);
+                List.copyOf(tables.read()), pins, fitIndex, inputs);
     }
 
     static Stack stack(Section section, String key, Materials materials) {

@@ -60,6 +60,25 @@ final class Section {
         return node.get(key).textValue();
     }
 
+    /** A text, or a list of texts. */
+    List<String> texts(String key) {
+        require(key);
+        if (node.get(key).isTextual()) {
+            return List.of(text(key));
+        }
+        List<String> texts = new ArrayList<>();
+        node.get(key).forEach(item -> {
+            if (!item.isTextual()) {
+                throw wrongType(key, "a text in quotes or a list of such");
+            }
+            texts.add(item.textValue());
+        });
+        if (texts.isEmpty()) {
+            throw wrongType(key, "a text in quotes or a list of such");
+        }
+        return texts;
+    }
+
     String text(String key, String otherwise) {
         return has(key) ? text(key) : otherwise;
     }

@@ -2,6 +2,7 @@ package iridepth.recipe;
 
 import iridepth.calibration.Calibration;
 import iridepth.calibration.FitInput;
+import iridepth.calibration.IndexPrior;
 import iridepth.calibration.InputUncertainty;
 import iridepth.calibration.ResponseFit;
 import iridepth.calibration.StepSignal;
@@ -14,8 +15,11 @@ import iridepth.photo.Encoding;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
+import iridepth.photo.StripSignal;
+import iridepth.reading.FilmReader;
 import iridepth.spectrum.SpectralTable;
 import iridepth.spectrum.Spectrum;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.function.Function;
@@ -30,11 +34,15 @@ import java.util.function.Function;
 public record Setup(View view, ColourCurve curve, Optional<Calibration> calibration) {
     /** White of the ICC profile connection space (ISO 15076-1). */
     private static final Xyz D50 = new Xyz(0.9642, 1, 0.8249);
+    /** Pixels that are enough to refine a calibration on. */
+    private static final int REFINING_PIXELS = 1 << 19;
+    private static final int MOST_ROUNDS = 4;
     private static final double[][] LUMINANCE = {{0, 1, 0}};
 
     /**
      * The set-up for a photo of a rig: from the steps where the recipe has any, else from what it states.
      *
+     * @param photo one of the photos, where several are read jointly
      * @throws RecipeException if the recipe does not fix the responses, or its steps cannot
      * @throws PhotoException  if a photo or a table contradicts it
      */
@@ -49,6 +57,11 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         return new Setup(calibration.view(), curve, Optional.of(calibration));
     }
 
+    /** A reader of films on this curve, for a photo of a recipe. */
+    public FilmReader reader(Recipe recipe, PhotoInfo photo) {
+        return FilmReader.of(curve, recipe.excluded()).with(recipe.pins().pins(photo));
+    }
+
     private static Setup calibrated(Rig rig, PhotoInfo photo) {
         Recipe recipe = rig.recipe();
         FitInput input = input(rig, photo);
@@ -61,15 +74,33 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
 
     /**
      * This set-up with its calibration refined on the films that a photo shows, or itself where there is no calibration or nothing
-     * to refine it on.
+     * to refine it on. Refined again as long as that lets more films be trusted.
      */
     public Setup refined(Rig rig, SignalSource photo) {
         if (calibration.isEmpty()) {
             return this;
         }
-        List<StepSignal> films = PhotoFilms.gather(curve, photo, rig.recipe().excluded());
-        Calibration better = ResponseFit.refine(input(rig, photo.info()), calibration.get(), films);
-        return better == calibration.get() ? this : of(rig.recipe(), better);
+        FitInput input = input(rig, photo.parts().get(0).info());
+        StripSignal strips = StripSignal.of(photo, REFINING_PIXELS);
+        Setup refined = this;
+        int used = 0;
+        for (int round = 0; round < MOST_ROUNDS; round++) {
+            PhotoFilms shown = PhotoFilms.gather(refined.curve, rig.recipe().excluded(), strips);
+            if (shown.films().size() <= used) {
+                break;
+            }
+            used = shown.films().size();
+            refined = of(rig.recipe(), ResponseFit.refine(input, calibration.get(), shown.films()));
+            if (shown.waiting() == 0) {
+                break;
+            }
+        }
+        return refined;
+    }
+
+    /** This set-up as films of a photo still to be taken will refine it. */
+    Setup foreseen(Rig rig, PhotoInfo photo, List<StepSignal> films) {
+        return calibration.map(first -> of(rig.recipe(), ResponseFit.refine(input(rig, photo), first, films))).orElse(this);
     }
 
     private static FitInput input(Rig rig, PhotoInfo photo) {
@@ -78,11 +109,22 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         View view = recipe.view().view(recipe.stack(), recipe.range().toNm());
         List<String> channels = photo.channels() == 1 ? List.of("grey") : List.of("red", "green", "blue");
         List<StepSignal> steps = Steps.measure(rig, channels.size());
+        List<String> names = new ArrayList<>();
+        List<Light> lights = new ArrayList<>();
+        for (Light light : recipe.lights()) {
+            for (String channel : channels) {
+                names.add(recipe.lights().size() == 1 ? channel : channel + ", " + light.name());
+                lights.add(light);
+            }
+        }
         try {
-            FitInput input = FitInput.of(channels, recipe.lights().get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()),
-                    view, recipe.range(), steps);
+            FitInput input = FitInput.of(names, lights.get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()), view,
+                    recipe.range(), steps).withLights(lights);
             if (recipe.inputs().isPresent()) {
                 input = input.withInputs(recipe.inputs().get());
+            }
+            if (recipe.fitIndex()) {
+                input = input.withIndexFitted(IndexPrior.DEFAULT);
             }
             return camera.sensitivities() == null ? input : input.withSensitivities(sensitivities(recipe, photo));
         } catch (IllegalArgumentException e) {
@@ -118,9 +160,10 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         return EffectiveResponses.ofSensor(table.columns(), table.columns().stream().map(table::spectrum).toList(), light);
     }
 
+    /** Sensitivity of each channel under each light. */
     private static List<Spectrum> sensitivities(Recipe recipe, PhotoInfo photo) {
         SpectralTable table = table(recipe, photo);
-        return table.columns().stream().map(table::spectrum).toList();
+        return recipe.lights().stream().flatMap(light -> table.columns().stream()).map(table::spectrum).toList();
     }
 
     private static SpectralTable table(Recipe recipe, PhotoInfo photo) {

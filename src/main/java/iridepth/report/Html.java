@@ -66,6 +66,13 @@ final class Html {
         return open(tag, attributes).text(text).close(tag);
     }
 
+    /** The program's own HTML, as it stands. */
+    static Html raw(String html) {
+        Html raw = new Html();
+        raw.html.append(html);
+        return raw;
+    }
+
     /** Adds another piece. */
     Html add(Html other) {
         html.append(other.html);

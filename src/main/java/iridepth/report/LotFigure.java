@@ -158,8 +158,8 @@ public record LotFigure(Lot lot) {
         if (beyond) {
             legend.entry("beyond the control limits", (x, y) -> dot(picture, x + 20, y, true));
         }
-        if (!lot.unusable().isEmpty()) {
-            legend.entry("could not be used", (x, y) -> cross(picture, x + 20, y));
+        if (lot.rows().stream().anyMatch(row -> Double.isNaN(row.mean()))) {
+            legend.entry("no thickness", (x, y) -> cross(picture, x + 20, y));
         }
         return legend.bottom();
     }

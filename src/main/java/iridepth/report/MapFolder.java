@@ -6,9 +6,12 @@ import iridepth.quality.Tolerance;
 import iridepth.quality.Tolerance.Judgement;
 import iridepth.quality.UncertaintyCurve;
 import iridepth.quality.Uniformity;
+import iridepth.reading.OtherCandidates;
+import iridepth.reading.ReadingSink;
 import iridepth.reading.State;
 import java.nio.file.Path;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
@@ -20,15 +23,20 @@ import java.util.Optional;
  * {@code state.tif}, and at the end {@code thickness.png}, {@code histogram.csv}, {@code histogram.png} and
  * {@code uncertainty.csv}.
  */
-public final class MapFolder implements AutoCloseable {
+public final class MapFolder implements ReadingSink, AutoCloseable {
+    /** Other candidates of a pixel that the report page tells. */
+    private static final int OTHERS = 2;
     static final String THICKNESS = "thickness.tif";
     static final String UNCERTAINTY = "uncertainty.tif";
     static final String STATE = "state.tif";
     /** The two parts of the uncertainty against thickness. */
     static final String UNCERTAINTY_PARTS = "uncertainty.csv";
-    /** What every map's folder holds beside its summary. */
-    static final List<String> FILES = List.of(THICKNESS, UNCERTAINTY, STATE, "thickness.png", "histogram.csv",
-            "histogram.png", UNCERTAINTY_PARTS);
+    /** The page that shows it all. */
+    static final String REPORT = "report.html";
+    /** The maps and tables from which a result can be measured again. */
+    static final List<String> DATA = List.of(THICKNESS, UNCERTAINTY, STATE, UNCERTAINTY_PARTS);
+    /** What is there to be looked at. */
+    static final List<String> VIEWS = List.of("thickness.png", "histogram.csv", "histogram.png", REPORT);
 
     private final ResultFolder folder;
     private final int width;
@@ -38,13 +46,19 @@ public final class MapFolder implements AutoCloseable {
     private final TiffWriter state;
     private final MapCells cells;
     private final PageMap page;
-    private final Distribution distribution;
-    private final UncertaintyCurve.Gathering parts;
+    private final OtherCandidates others;
+    private final double fromNm;
+    private final double toNm;
+    private Distribution distribution;
+    private UncertaintyCurve.Gathering parts;
     private final long[] counts = new long[State.values().length];
     private double randomSquares;
     private double systematicSquares;
 
-    private MapFolder(ResultFolder folder, int width, int height, double pixelUm, double fromNm, double toNm) {
+    private MapFolder(ResultFolder folder, int width, int height, double pixelUm, double fromNm, double toNm, OtherCandidates others) {
+        this.others = others;
+        this.fromNm = fromNm;
+        this.toNm = toNm;
         this.folder = folder;
         this.width = width;
         this.pixelUm = pixelUm;
@@ -52,7 +66,7 @@ public final class MapFolder implements AutoCloseable {
         this.uncertainty = MapTiff.nanometres(folder.file(UNCERTAINTY), width, height, pixelUm);
         this.state = MapTiff.states(folder.file(STATE), width, height, pixelUm);
         this.cells = MapCells.of(width, height, MapFigure.MOST_CELLS);
-        this.page = PageMap.of(width, height, pixelUm, 0);
+        this.page = PageMap.of(width, height, pixelUm, OTHERS);
         this.distribution = Distribution.over(fromNm, toNm);
         this.parts = new UncertaintyCurve.Gathering(fromNm, toNm);
     }
@@ -66,27 +80,20 @@ public final class MapFolder implements AutoCloseable {
      * @param pixelUm edge of a pixel in um, NaN if unknown
      * @param fromNm  thinnest film considered
      * @param toNm    thickest film considered
+     * @param others  tells the candidates that were not chosen
      * @throws OutputException if they cannot be written
      */
-    public static MapFolder create(ResultFolder folder, int width, int height, double pixelUm, double fromNm, double toNm) {
-        return new MapFolder(folder, width, height, pixelUm, fromNm, toNm);
+    public static MapFolder create(ResultFolder folder, int width, int height, double pixelUm, double fromNm, double toNm,
+                                   OtherCandidates others) {
+        return new MapFolder(folder, width, height, pixelUm, fromNm, toNm, others);
     }
 
-    /**
-     * Adds whole rows.
-     *
-     * @param firstRow   row of the first value
-     * @param nm         thickness, NaN where not read
-     * @param random     random standard uncertainty, nm, NaN where not read
-     * @param systematic systematic standard uncertainty, nm, NaN where not read
-     * @param codes      states
-     */
-    public synchronized void add(int firstRow, float[] nm, float[] random, float[] systematic, byte[] codes) {
+    @Override
+    public void readings(int firstRow, float[] nm, float[] random, float[] systematic, float[] margin) {
         float[] combined = new float[nm.length];
         for (int i = 0; i < nm.length; i++) {
             combined[i] = (float) Math.sqrt(random[i] * random[i] + systematic[i] * systematic[i]);
-            counts[codes[i]]++;
-            if (State.of(codes[i]).hasThickness()) {
+            if (!Float.isNaN(nm[i])) {
                 distribution.add(nm[i]);
                 parts.add(nm[i], random[i], systematic[i]);
                 randomSquares += random[i] * random[i];
@@ -95,9 +102,37 @@ public final class MapFolder implements AutoCloseable {
         }
         thickness.writeRows(firstRow, nm);
         uncertainty.writeRows(firstRow, combined);
+    }
+
+    @Override
+    public void restart() {
+        distribution = Distribution.over(fromNm, toNm);
+        parts = new UncertaintyCurve.Gathering(fromNm, toNm);
+        randomSquares = 0;
+        systematicSquares = 0;
+    }
+
+    @Override
+    public void states(int firstRow, byte[] codes) {
+        float[] nm = new float[codes.length];
+        float[] combined = new float[codes.length];
+        thickness.readRows(firstRow, nm);
+        uncertainty.readRows(firstRow, combined);
+        for (byte code : codes) {
+            counts[code]++;
+        }
         state.writeRows(firstRow, codes);
         cells.add(firstRow, nm, codes);
-        page.add(firstRow, nm, combined, codes);
+        float[][] alternatives = new float[OTHERS][codes.length];
+        for (float[] plane : alternatives) {
+            Arrays.fill(plane, Float.NaN);
+        }
+        for (int row = 0; row < codes.length / width; row++) {
+            if (page.shows(firstRow + row)) {
+                others.row(firstRow + row, nm, row * width, alternatives);
+            }
+        }
+        page.add(firstRow, nm, combined, codes, alternatives);
     }
 
     /** How many pixels are in each state. */

@@ -27,7 +27,7 @@ final class PendingOutput {
     private final Path part;
     /** Parents made for this output, innermost first; they go again if it is abandoned. */
     private final Deque<Path> madeParents;
-    private final Thread onShutdown = new Thread(this::remove, "remove unfinished output");
+    private final Thread onShutdown = new Thread(this::vanish, "remove unfinished output");
     private boolean ended;
 
     private PendingOutput(Path target, Path part, Deque<Path> madeParents) {
@@ -48,7 +48,12 @@ final class PendingOutput {
         try {
             makeParents(target.getParent(), made);
             PendingOutput output = new PendingOutput(target, makePart(target, folder), made);
-            Runtime.getRuntime().addShutdownHook(output.onShutdown);
+            try {
+                Runtime.getRuntime().addShutdownHook(output.onShutdown);
+            } catch (IllegalStateException e) {
+                output.remove(output.part);
+                throw new OutputException("cannot write " + target + ": the program is being interrupted; start it again");
+            }
             return output;
         } catch (IOException e) {
             removeEmpty(made);
@@ -153,7 +158,7 @@ final class PendingOutput {
     /** Removes what has been written, unless it has been published. */
     synchronized void abandon() {
         if (!ended) {
-            remove();
+            remove(part);
             end();
         }
     }
@@ -167,13 +172,27 @@ final class PendingOutput {
         }
     }
 
-    private synchronized void remove() {
+    /**
+     * Removes what has been written when the program is interrupted. Other threads may still be adding files: under its first name
+     * they no longer find the folder.
+     */
+    private synchronized void vanish() {
         if (!ended) {
-            for (int i = 0; i < REMOVALS_TRIED && occupied(part); i++) {
-                removeTree(part);
+            Path gone = part.resolveSibling(part.getFileName() + ".gone");
+            try {
+                move(part, gone);
+                remove(gone);
+            } catch (IOException e) {
+                remove(part);
             }
-            removeEmpty(madeParents);
         }
+    }
+
+    private void remove(Path unfinished) {
+        for (int i = 0; i < REMOVALS_TRIED && occupied(unfinished); i++) {
+            removeTree(unfinished);
+        }
+        removeEmpty(madeParents);
     }
 
     /** Removes as much as can be removed; what stays has a hidden name. */

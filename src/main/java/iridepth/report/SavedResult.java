@@ -35,7 +35,7 @@ public record SavedResult(Path folder, JsonNode summary) {
             throw new PhotoException(folder, "is no result folder; give one that map has written, with its "
                     + ResultFolder.SUMMARY);
         }
-        for (String name : MapFolder.FILES) {
+        for (String name : MapFolder.DATA) {
             if (!Files.isRegularFile(folder.resolve(name))) {
                 throw new PhotoException(folder, "is no whole result folder: " + name + " is missing; map the photo again");
             }
@@ -54,14 +54,16 @@ public record SavedResult(Path folder, JsonNode summary) {
     }
 
     /**
-     * Opens a folder if it holds a whole result of a program and inputs.
+     * Opens a folder if it holds a whole result, with all its views, of a program and inputs.
      *
      * @param program  name and version of the program
      * @param hashes   SHA-256 of every input by name
      * @return the result; empty if there is none, or it was made from something else
      */
     public static Optional<SavedResult> of(Path folder, String program, Map<String, String> hashes) {
-        if (!Files.isRegularFile(folder.resolve(ResultFolder.SUMMARY))) {
+        boolean whole = Files.isRegularFile(folder.resolve(ResultFolder.SUMMARY))
+                && MapFolder.VIEWS.stream().allMatch(name -> Files.isRegularFile(folder.resolve(name)));
+        if (!whole) {
             return Optional.empty();
         }
         try {

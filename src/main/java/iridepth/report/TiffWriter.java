@@ -54,7 +54,7 @@ public final class TiffWriter implements AutoCloseable {
     static TiffWriter create(Path file, TiffLayout layout) {
         FileChannel channel = null;
         try {
-            channel = FileChannel.open(file, StandardOpenOption.CREATE, StandardOpenOption.WRITE,
+            channel = FileChannel.open(file, StandardOpenOption.CREATE, StandardOpenOption.READ, StandardOpenOption.WRITE,
                     StandardOpenOption.TRUNCATE_EXISTING);
             ByteBuffer head = layout.head();
             while (head.hasRemaining()) {
@@ -115,6 +115,34 @@ public final class TiffWriter implements AutoCloseable {
             done += count;
         }
         written.set(firstRow, firstRow + values.length / layout.width());
+    }
+
+    /**
+     * Reads rows of a float image back that have been written.
+     *
+     * @param firstRow row of the first value
+     * @param values   receives rows x width values
+     * @throws OutputException if the file cannot be read
+     */
+    public synchronized void readRows(int firstRow, float[] values) {
+        long at = place(Sample.FLOAT, firstRow, values.length);
+        for (int done = 0; done < values.length; ) {
+            int count = Math.min(CHUNK / Float.BYTES, values.length - done);
+            buffer.clear().limit(count * Float.BYTES);
+            try {
+                while (buffer.hasRemaining()) {
+                    if (channel.read(buffer, at + buffer.position()) < 0) {
+                        throw new IllegalStateException("row " + firstRow + " of " + file.getFileName() + " has not been written");
+                    }
+                }
+            } catch (IOException e) {
+                throw OutputException.of(file, e);
+            }
+            buffer.flip();
+            buffer.asFloatBuffer().get(values, done, count);
+            at += (long) count * Float.BYTES;
+            done += count;
+        }
     }
 
     private long place(Sample sample, int firstRow, int count) {

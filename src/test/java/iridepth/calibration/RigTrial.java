@@ -25,6 +25,8 @@ import java.util.Optional;
  */
 final class RigTrial {
     private static final int STRIDE = 7;
+    private static final double NEAR_NM = 5;
+    private static final double SPACING_NM = 3;
     private final Scene scene;
     private final Shot shot;
     /** Signal of the flat per channel, glare included, on the scale of the simulation. */
@@ -35,14 +37,14 @@ final class RigTrial {
      * What came of reading every few pixels of the scene.
      *
      * @param readings of how many pixels
-     * @param worst    largest error, nm
-     * @param rms      root mean square error, nm
-     * @param bias     mean error, nm
+     * @param near     share of them within 5 nm of the truth: the rest are of another order
+     * @param rms      root mean square error, nm, of those within 5 nm
+     * @param bias     their mean error, nm
      * @param coverage share of errors within twice the stated uncertainty
-     * @param stated   root mean square of the stated uncertainty, nm
+     * @param stated   root mean square of their stated uncertainty, nm
      * @param limit    root mean square of the Cramer-Rao bound, nm: what noise alone leaves
      */
-    record Outcome(int readings, double worst, double rms, double bias, double coverage, double stated, double limit) {
+    record Outcome(int readings, double near, double rms, double bias, double coverage, double stated, double limit) {
     }
 
     RigTrial(Scene scene) {
@@ -61,7 +63,6 @@ final class RigTrial {
     FitInput input() {
         Stack stack = stack();
         double thickest = scene.rangeNm()[1];
-        double[] sine = scene.believedView().sine();
         String statement = scene.believedView().statement();
         View view = View.aperture(Double.parseDouble(statement.substring(statement.indexOf('=') + 1)), stack, thickest);
         Light light = new Light("stated lamp", Spectrum.of(scene.believedLamp().power()), false);
@@ -123,6 +124,20 @@ final class RigTrial {
         return signal;
     }
 
+    /** Signal of the true rig for a surface of any reflectance, relative to the flat. */
+    double[] seen(double[] reflectance) {
+        double[][] e = scene.rig().responses();
+        double[] signal = new double[flat.length];
+        for (int c = 0; c < flat.length; c++) {
+            double sum = glare[c];
+            for (int i = 0; i < reflectance.length; i++) {
+                sum += e[c][i] * reflectance[i];
+            }
+            signal[c] = sum / flat[c];
+        }
+        return signal;
+    }
+
     /** Noise of a pixel's signal relative to the flat. */
     double[] noise(double[] signal) {
         double[] sigma = new double[flat.length];
@@ -132,16 +147,19 @@ final class RigTrial {
         return sigma;
     }
 
-    /** Reads every few pixels of the photograph on a curve. */
+    /** Reads every few pixels of the photograph on a curve, each by itself. */
     Outcome read(ColourCurve curve) {
-        ScanReader reader = new ScanReader(curve);
+        return read(new ScanReader(curve));
+    }
+
+    private Outcome read(ScanReader reader) {
         Photograph photo = shot.photo(scene.field(), scene.seed());
         double[] signals = shot.signals(photo);
         double[] truth = scene.field().truth();
         double[] limit = iridepth.simulation.CramerRao.bounds(shot, scene.field());
+        int all = 0;
         int n = 0;
         int covered = 0;
-        double worst = 0;
         double square = 0;
         double sum = 0;
         double stated = 0;
@@ -156,16 +174,37 @@ final class RigTrial {
             }
             double[] reading = reader.read(signal, noise(signal));
             double error = reading[0] - truth[i];
+            all++;
+            if (Math.abs(error) > NEAR_NM) {
+                continue;
+            }
             n++;
-            worst = Math.max(worst, Math.abs(error));
             square += error * error;
             sum += error;
             stated += reading[1] * reading[1];
             bound += limit[i] * limit[i];
             covered += Math.abs(error) <= 2 * reading[1] ? 1 : 0;
         }
-        return new Outcome(n, worst, Math.sqrt(square / n), sum / n, covered / (double) n, Math.sqrt(stated / n),
+        return new Outcome(all, n / (double) all, Math.sqrt(square / n), sum / n, covered / (double) n, Math.sqrt(stated / n),
                 Math.sqrt(bound / n));
+    }
+
+    /**
+     * Error of the curve itself: the root mean square over thicknesses between the outermost steps, the worst tenth left out, of what
+     * the noiseless true signal reads on it.
+     */
+    double curveError(ColourCurve curve) {
+        double[] known = scene.steps().thickness();
+        double from = Arrays.stream(known).min().orElseThrow();
+        double to = Arrays.stream(known).max().orElseThrow();
+        List<Double> squares = new ArrayList<>();
+        for (double d = from; d <= to; d += SPACING_NM) {
+            double[] signal = truth(d);
+            double[] variance = Arrays.stream(noise(signal)).map(v -> v * v).toArray();
+            double error = CurveReading.near(curve, signal, variance, d).thicknessNm() - d;
+            squares.add(error * error);
+        }
+        return Math.sqrt(squares.stream().sorted().limit((long) (0.9 * squares.size())).mapToDouble(v -> v).average().orElseThrow());
     }
 
     Scene scene() {

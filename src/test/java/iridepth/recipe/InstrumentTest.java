@@ -50,7 +50,6 @@ class InstrumentTest {
         PhotoInfo first = info(photo("a.png", BufferedImage.TYPE_INT_RGB));
         PhotoInfo second = info(photo("b.png", BufferedImage.TYPE_INT_RGB));
         assertSame(instrument.setup(first), instrument.setup(second));
-        assertSame(instrument.reader(first), instrument.reader(second));
     }
 
     @Test
@@ -72,6 +71,16 @@ class InstrumentTest {
         Files.writeString(folder.resolve("lamp.csv"), "wavelength_nm,power\n380,1\n780,3\n");
         assertEquals(before.get("r.toml"), later.hashes(photo).get("r.toml"));
         assertNotEquals(before.get("lamp.csv"), later.hashes(photo).get("lamp.csv"));
+    }
+
+    @Test
+    void hashesNameTheCalibrationThatWasMadeBefore() throws IOException {
+        Path photo = photo("a.png", BufferedImage.TYPE_INT_RGB);
+        Path calibration = Files.createDirectory(folder.resolve("calibration"));
+        Files.writeString(calibration.resolve("calibration.json"), "{}");
+        Instrument instrument = Instrument.of(instrument().recipe(), calibration);
+        assertEquals(List.of("r.toml", "lamp.csv", "calibration/calibration.json", "a.png"),
+                List.copyOf(instrument.hashes(photo).keySet()));
     }
 
     @Test

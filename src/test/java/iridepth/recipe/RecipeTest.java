@@ -57,11 +57,8 @@ class RecipeTest {
                 [view]
                 incidence_deg = 45
                 polarisation = "s"
-                [[light]]
+                [light]
                 table = "lamp.csv"
-                [[light]]
-                wavelength_nm = 546
-                bandwidth_nm = 10
                 [camera]
                 encoding = "linear"
                 flat = "flat.tif"
@@ -75,13 +72,39 @@ class RecipeTest {
                 [tolerance]
                 limits_nm = [275, 295]
                 """);
-        assertEquals(2, recipe.lights().size());
+        assertEquals(2, recipe.lights().get(0).power().at(400) / recipe.lights().get(0).power().at(0), 1e-9);
         assertEquals(2, recipe.camera().steps().size());
-        assertEquals(folder.toAbsolutePath().resolve("s.tif"), recipe.camera().steps().get(0).image());
+        assertEquals(folder.toAbsolutePath().resolve("s.tif"), recipe.camera().steps().get(0).images().get(0));
         assertEquals(1, recipe.camera().steps().get(1).uncertaintyNm());
         assertEquals(1.6 + 0.01 / 0.25, recipe.stack().film().nAt(500), 1e-9);
         assertEquals(295, recipe.tolerance()[1]);
         assertEquals(40, recipe.excluded().get(0).width());
+    }
+
+    @Test
+    void knownPlacesPinTheOrder() throws IOException {
+        Recipe recipe = read(GOOD.replace("[light]", "zero_edge = \"left\"\n[[film.known]]\npixel = [10, 20]\nthickness_nm = 300\n[light]"));
+        assertEquals(300, recipe.pins().points().get(0).thicknessNm());
+        assertEquals("left", recipe.pins().edges().get(0));
+        assertTrue(refusal(GOOD.replace("[light]", "zero_edge = \"middle\"\n[light]")).contains("must be one of left, right"));
+        assertTrue(refusal(GOOD.replace("[light]", "[[film.known]]\npixel = [1.5, 2]\nthickness_nm = 3\n[light]"))
+                .contains("in whole pixels"));
+    }
+
+    @Test
+    void indexCanBeFittedFromACauchyFormOnly() throws IOException {
+        String own = GOOD.replace("SiO2", "resist").replace("[light]", "[film.material.resist]\ncauchy = [1.6, 0.01]\nfit_index = true\n[light]");
+        assertTrue(read(own).fitIndex());
+        assertTrue(refusal(own.replace("cauchy = [1.6, 0.01]", "n = 1.6")).contains("goes with a Cauchy form"));
+        assertTrue(!read(GOOD).fitIndex());
+    }
+
+    @Test
+    void uncertaintiesOfInputsAreReadInTheirUnits() throws IOException {
+        Recipe recipe = read(GOOD + "[uncertainty]\nfilm_index_percent = 0.5\nlamp_K = 100\n");
+        assertEquals(0.005, recipe.inputs().orElseThrow().relativeIndex(), 1e-12);
+        assertEquals(0, recipe.inputs().orElseThrow().numericalAperture());
+        assertTrue(read(GOOD).inputs().isEmpty());
     }
 
     @Test

@@ -27,7 +27,7 @@ import org.openqa.selenium.logging.LogType;
  * A real browser without a window: Chromium with its driver, both found on the search path. Tests that need it are skipped
  * where it is missing, unless the environment variable IRIDEPTH_BROWSER is "required": then they fail.
  */
-final class HeadlessBrowser implements AutoCloseable {
+public final class HeadlessBrowser implements AutoCloseable {
     private static final Logger DRIVER_LOG = Logger.getLogger("org.openqa.selenium");
 
     private final ChromeDriver driver;
@@ -39,7 +39,7 @@ final class HeadlessBrowser implements AutoCloseable {
     }
 
     /** Starts it, or skips the tests. */
-    static HeadlessBrowser start() throws IOException {
+    public static HeadlessBrowser start() throws IOException {
         Optional<Path> browser = find("chromium", "chromium-browser", "google-chrome");
         Optional<Path> chromedriver = find("chromedriver");
         if (browser.isEmpty() || chromedriver.isEmpty()) {
@@ -67,12 +67,12 @@ final class HeadlessBrowser implements AutoCloseable {
                 .filter(Files::isExecutable).findFirst();
     }
 
-    ChromeDriver driver() {
+    public ChromeDriver driver() {
         return driver;
     }
 
     /** Opens a page and waits until its script has put it together. */
-    void open(Path page) {
+    public void open(Path page) {
         driver.manage().logs().get(LogType.BROWSER);
         driver.manage().logs().get(LogType.PERFORMANCE);
         driver.get(page.toUri().toString());
@@ -98,11 +98,11 @@ final class HeadlessBrowser implements AutoCloseable {
         return text(selector);
     }
 
-    WebElement element(String selector) {
+    public WebElement element(String selector) {
         return driver.findElement(By.cssSelector(selector));
     }
 
-    String text(String selector) {
+    public String text(String selector) {
         return element(selector).getDomProperty("textContent");
     }
 
@@ -111,12 +111,12 @@ final class HeadlessBrowser implements AutoCloseable {
     }
 
     /** What the console has been told since the page was opened. */
-    List<String> console() {
+    public List<String> console() {
         return driver.manage().logs().get(LogType.BROWSER).getAll().stream().map(entry -> entry.getMessage()).toList();
     }
 
     /** Addresses that the page has asked for since it was opened, itself included. */
-    List<String> requests() {
+    public List<String> requests() {
         List<String> urls = new ArrayList<>();
         try {
             for (var entry : driver.manage().logs().get(LogType.PERFORMANCE)) {

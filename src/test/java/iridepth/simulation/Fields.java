@@ -25,13 +25,13 @@ public final class Fields {
 
     private static Scene inColour(String name, Field field, long seed) {
         Rig rig = Rig.of(Sensor.mixture(), Lamp.planck(3200), View.aperture(0.1), Detector.linear(80_000));
-        Steps steps = new Steps(400, 120, new double[] {20, 90, 170, 270, 400, 580, 800}, 4);
+        Steps steps = new Steps(WIDTH, HEIGHT, new double[] {20, 90, 170, 270, 400, 580, 800}, 4);
         return scene(name, rig, steps, field, seed);
     }
 
     private static Scene inOneBand(String name, double width, Field field, long seed) {
         Rig rig = Rig.of(Sensor.monochrome(), Lamp.band(546, width), View.aperture(0.05), Detector.linear(80_000));
-        Steps steps = new Steps(400, 120, new double[] {0, 25, 50, 85, 110, 140}, 4);
+        Steps steps = new Steps(WIDTH, HEIGHT, new double[] {0, 25, 50, 85, 110, 140}, 4);
         return scene(name, rig, steps, field, seed);
     }
 
@@ -110,9 +110,9 @@ public final class Fields {
     public static List<Scene> drainingSoap(int frames) {
         Rig rig = Rig.of(Sensor.skewed(), Lamp.illuminant("LED-B4"), View.aperture(0.05), Detector.linear(120_000))
                 .exposure(0.35);
-        Steps steps = new Steps(400, 120, new double[] {20, 60, 110, 160, 230, 310, 420}, 4);
+        Steps steps = new Steps(210, 120, new double[] {20, 60, 110, 160, 230, 310, 420}, 4);
         return IntStream.range(0, frames).mapToObj(i -> new Scene(String.format("soap-%03d", i), rig,
                 FilmStack.parse("air / soap / air", SOAP), FilmStack.parse("air / BK7"), new double[] {0, 800}, steps,
-                Field.soap(80, 120, 600, 8.0 * i / (frames - 1)), rig.lamp(), rig.view(), 300 + 4L * i)).toList();
+                Field.soap(210, 120, 600, 8.0 * i / (frames - 1)), rig.lamp(), rig.view(), 300 + 4L * i)).toList();
     }
 }

@@ -7,8 +7,8 @@ import java.util.List;
  * aperture are stated wrongly by up to 300 K and 0.05. All names, samples and cameras are invented.
  */
 public final class Rigs {
-    private static final int WIDTH = 200;
-    private static final int HEIGHT = 150;
+    private static final int WIDTH = 300;
+    private static final int HEIGHT = 200;
     private static final FilmStack BARE = FilmStack.parse("air / SiO2 1.5 nm / Si");
     private static final Medium RESIST = Medium.constant("resist", 1.60);
 
@@ -28,7 +28,7 @@ public final class Rigs {
     }
 
     private static Steps steps(double... thickness) {
-        return new Steps(400, 120, thickness, 4);
+        return new Steps(WIDTH, HEIGHT, thickness, 4);
     }
 
     /** Oxide wafer under a halogen lamp stated 300 K too cool, through an aperture stated 0.05 too small. */

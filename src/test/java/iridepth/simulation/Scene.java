@@ -33,6 +33,11 @@ public record Scene(String name, Rig rig, FilmStack stack, FilmStack flatStack, 
         return Shot.of(rig, stack, reference, Math.floor(from), Math.ceil(to) + 1);
     }
 
+    /** Whether a dark is taken: where a flat is, and the camera adds a black level. */
+    boolean hasDark() {
+        return flatStack != null && rig.detector().black() > 0;
+    }
+
     /** Takes all photographs. */
     public Pictures shoot() {
         return shoot(shot());
@@ -45,7 +50,7 @@ public record Scene(String name, Rig rig, FilmStack stack, FilmStack flatStack, 
         boolean hasFlat = flatStack != null;
         return new Pictures(shot.photo(field, seed),
                 hasFlat ? shot.flat(width, height, seed + 1) : null,
-                hasFlat ? shot.dark(width, height, seed + 2) : null,
+                hasDark() ? shot.dark(width, height, seed + 2) : null,
                 steps == null ? null : shot.steps(steps, seed + 3));
     }
 

@@ -119,8 +119,11 @@ public record SceneFolder(Path photo, Path recipe, double[] truth, double[] limi
         if (knownSensor) {
             text.append("sensitivities = \"camera.csv\"\n");
         }
+        if (scene.hasDark()) {
+            text.append("dark = \"dark").append(extension).append("\"\n");
+        }
         if (scene.flatStack() != null) {
-            text.append("dark = \"dark").append(extension).append("\"\nflat = \"flat").append(extension)
+            text.append("flat = \"flat").append(extension)
                     .append("\"\nflat_stack = \"").append(scene.flatStack().text()).append("\"\n");
         }
         if (scene.steps() != null) {

@@ -64,7 +64,7 @@ class SceneFolderTest {
         ImagePlus truth = IJ.openImage(dir.resolve("truth.tif").toString());
         assertEquals(32, truth.getBitDepth());
         assertTrue(Float.isNaN(truth.getProcessor().getf(0, 0)));
-        assertEquals((float) folder.truth()[75 * 200 + 100], truth.getProcessor().getf(100, 75));
+        assertEquals((float) folder.truth()[75 * 300 + 100], truth.getProcessor().getf(100, 75));
         assertArrayEquals(CramerRao.bounds(scene.shot(), scene.field()), folder.limit());
     }
 
@@ -79,7 +79,7 @@ class SceneFolderTest {
         assertEquals("air / Si", recipe.at("/camera/flat_stack").asText());
         assertEquals(7, recipe.at("/camera/steps").size());
         assertEquals(70, recipe.at("/camera/steps/1/thickness_nm").asDouble());
-        assertEquals(65, recipe.at("/camera/steps/1/region/0").asInt());
+        assertEquals(50, recipe.at("/camera/steps/1/region/0").asInt());
     }
 
     @Test

@@ -5,6 +5,7 @@ import static iridepth.simulation.Spectrum.gaussian;
 import static iridepth.simulation.Spectrum.lobe;
 
 import java.util.Arrays;
+import java.util.Random;
 
 /**
  * The spectral sensitivities of a camera, one curve per channel. The cameras are invented, of the shapes that makers
@@ -89,6 +90,30 @@ public record Sensor(String name, double[][] curves) {
     public static Sensor fourChannels() {
         return of("four channels", gaussian(1, 615, 24), lobe(1, 540, 30, 24), lobe(1, 460, 22, 28),
                 edge(668, 4).times(edge(735, -6)));
+    }
+
+    /**
+     * A colour camera drawn at random: red, green and blue lobes with sides of different steepness, a shoulder on each, some light
+     * let through far from it, and common cut-offs towards the ultraviolet and the infrared.
+     */
+    public static Sensor drawn(long seed) {
+        Random random = new Random(seed * 0x9E3779B97F4A7C15L);
+        Spectrum window = edge(between(random, 395, 420), between(random, 2, 6)).times(edge(between(random, 655, 705),
+                -between(random, 3, 12)));
+        double[] centre = {between(random, 590, 615), between(random, 522, 545), between(random, 448, 468)};
+        Spectrum[] channels = new Spectrum[centre.length];
+        for (int c = 0; c < channels.length; c++) {
+            Spectrum main = lobe(1, centre[c], between(random, 18, 42), between(random, 18, 42));
+            double side = random.nextBoolean() ? 1 : -1;
+            Spectrum shoulder = gaussian(between(random, 0.1, 0.45), centre[c] + side * between(random, 35, 55), between(random, 18, 30));
+            Spectrum far = gaussian(between(random, 0, 0.1), between(random, 420, 680), between(random, 15, 40));
+            channels[c] = window.times(main.plus(shoulder).plus(far));
+        }
+        return of("drawn " + seed, channels);
+    }
+
+    private static double between(Random random, double low, double high) {
+        return low + (high - low) * random.nextDouble();
     }
 
     /** One channel: bare silicon with its quantum efficiency rising to 560 nm and falling slowly. */

@@ -119,7 +119,7 @@ public final class Shot {
     }
 
     /** Change of that fraction per unit of signal. */
-    double fractionSlope(int c, int x, int y, int width, int height) {
+    public double fractionSlope(int c, int x, int y, int width, int height) {
         return gain * rig.shading().at(x, y, width, height, c);
     }
 

@@ -6,7 +6,7 @@ import iridepth.calibration.LeaveOneOut;
 import iridepth.curve.ColourCurve;
 import iridepth.curve.ThicknessRange;
 import iridepth.optics.Stack;
-import iridepth.photo.PhotoFile;
+import iridepth.photo.OpenPhotos;
 import iridepth.photo.SignalSource;
 import iridepth.recipe.CalibrationFile;
 import iridepth.recipe.Provenance;
@@ -56,11 +56,11 @@ final class CalibrateCommand implements Callable<Integer> {
             throw new RecipeException(recipe.file() + ": camera.steps is missing; name photos and regions of films of known thickness");
         }
         try (ResultFolder folder = ResultFolder.create(out, replace);
-                PhotoFile photo = PhotoFile.open(recipe.camera().steps().get(0).image())) {
+                OpenPhotos photos = OpenPhotos.of(recipe.camera().steps().get(0).images())) {
             Rig rig = Rig.of(recipe);
-            Setup setup = Setup.of(rig, photo.info());
+            Setup setup = Setup.of(rig, photos.files().get(0).info());
             Calibration calibration = setup.calibration().orElseThrow();
-            double[] noise = noise(setup.curve(), rig.signal(photo));
+            double[] noise = noise(setup.curve(), rig.signal(photos.files()));
             List<ThicknessRange> weak = calibration.weakRanges(setup.curve(), noise);
             Stack flat = recipe.camera().flatStack();
             SummaryJson.write(calibration.data(flat == null ? "" : flat.toString()), folder.file(CalibrationFile.NAME));

@@ -18,7 +18,7 @@ import picocli.CommandLine.ScopeType;
         footer = {"", "Exit codes: 0 done; 1 done, and out of tolerance; 2 command line or recipe wrong; 3 an input cannot be "
             + "used; 4 output cannot be written.", "", Iridepth.CAUTION},
         subcommands = {ChartCommand.class, CalibrateCommand.class, MapCommand.class, ProfileCommand.class, MeasureCommand.class,
-            ContoursCommand.class, MaterialsCommand.class})
+            ContoursCommand.class, LotCommand.class, SequenceCommand.class, PlanCommand.class, CompareCommand.class, RepeatCommand.class, MaterialsCommand.class})
 public final class Iridepth {
     /** What stands below every result. */
     static final String CAUTION = "An estimate from colour is no certified measurement: check against a reference instrument "
@@ -78,7 +78,8 @@ public final class Iridepth {
         return e instanceof OutputException ? UNWRITABLE_OUTPUT : UNUSABLE_INPUT;
     }
 
-    private static String message(Throwable e) {
+    /** What an error says, in one line. */
+    static String message(Throwable e) {
         boolean ours = e instanceof RecipeException || e instanceof PhotoException || e instanceof OutputException
                 || e instanceof IllegalArgumentException;
         if (e instanceof OutOfMemoryError) {

@@ -1,10 +1,10 @@
 package iridepth.app.cli;
 
-import iridepth.recipe.Instrument;
-import iridepth.recipe.Recipe;
 import java.nio.file.Path;
+import java.util.List;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Parameters;
@@ -15,32 +15,32 @@ import picocli.CommandLine.Spec;
         description = {"Reads the film thickness of every pixel of a photograph.", "",
             "The result folder holds thickness.tif and uncertainty.tif (nm; NaN where not read), state.tif, thickness.png, "
                 + "histogram.csv, histogram.png and summary.json. It appears whole or not at all.", "",
-            "Example:", "  map --recipe oxide.toml --out result photo.png", ""},
+            "Examples:", "  map --recipe oxide.toml --out result photo.png",
+            "  map --recipe two-lights.toml --out result blue.tif red.tif", ""},
         footer = {"", Iridepth.CAUTION})
 final class MapCommand implements Callable<Integer> {
     @Spec
     private CommandSpec spec;
 
-    @Option(names = "--recipe", required = true, paramLabel = "FILE", description = "What is known of film, view, light and camera.")
-    private Path recipe;
+    @Mixin
+    private InstrumentOptions given;
 
     @Option(names = "--out", required = true, paramLabel = "DIR", description = "The result folder.")
     private Path out;
 
-    @Option(names = "--calibration", paramLabel = "DIR", description = "What calibrate wrote, to be taken instead of fitting the "
-            + "recipe's steps anew.")
-    private Path calibration;
-
     @Option(names = "--replace", description = "Replace a result folder that exists.")
     private boolean replace;
 
-    @Parameters(paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB.")
-    private Path photo;
+    @Option(names = "--alone", description = "Read each pixel on its own, whatever its neighbours say of the order: what plan tells of "
+            + "wrong orders is for this.")
+    private boolean alone;
+
+    @Parameters(arity = "1..*", paramLabel = "PHOTO", description = "TIFF, PNG or JPEG, 8 or 16 bit, grey or RGB; where the recipe "
+            + "has several lights, one photo of the field under each, in their order, without moving camera or sample.")
+    private List<Path> photos;
 
     @Override
     public Integer call() {
-        Recipe read = Recipe.read(recipe);
-        Instrument instrument = calibration == null ? Instrument.of(read) : Instrument.of(read, calibration);
-        return new MapRun(instrument, photo, spec.commandLine().getOut()).write(out, replace);
+        return new MapRun(given.instrument(), photos, !alone, spec.commandLine().getOut()).write(out, replace);
     }
 }

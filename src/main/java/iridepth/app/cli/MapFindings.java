@@ -2,10 +2,12 @@ package iridepth.app.cli;
 
 import iridepth.calibration.Calibration;
 import iridepth.photo.PhotoInfo;
+import iridepth.photo.Region;
 import iridepth.photo.SignalSource;
 import iridepth.quality.NonUniformity;
 import iridepth.quality.Tolerance.Judgement;
 import iridepth.quality.Uniformity;
+import iridepth.reading.DoubtfulRegion;
 import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
 import iridepth.recipe.Setup;
@@ -18,6 +20,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
+import java.util.stream.Collectors;
 
 /**
  * What a map amounts to, for {@code summary.json} and the terminal.
@@ -27,11 +30,18 @@ import java.util.Optional;
  * @param info       the photo
  * @param signal     its signal
  * @param map        the map
+ * @param doubts     regions whose order is open
  * @param judgement  how it stands against the tolerance, if there is one
  * @param hashes     SHA-256 of all inputs
  */
-record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSource signal, MapFolder map, Optional<Judgement> judgement,
-                   Map<String, String> hashes) {
+record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSource signal, MapFolder map,
+                   List<DoubtfulRegion> doubts, Optional<Judgement> judgement, Map<String, String> hashes) {
+    /** Doubtful regions that the terminal lists at most; summary.json has all. */
+    private static final int SHOWN_DOUBTS = 5;
+    /** What settles the order of a region. */
+    static final String REMEDY = "a known point in it ([[film.known]] in the recipe), an edge where its film falls to nothing "
+            + "(film.zero_edge), or a photo under another light";
+
     Recipe recipe() {
         return instrument.recipe();
     }
@@ -59,6 +69,7 @@ record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSou
         uncertainty.put("random_nm", map.randomNm());
         uncertainty.put("systematic_nm", map.systematicNm());
         summary.put("standard_uncertainty_rms", uncertainty);
+        summary.put("doubtful_regions", doubts.stream().map(MapFindings::doubt).toList());
         summary.put("uncertainty_budget", budget().lines());
         setup().calibration().ifPresent(c -> summary.put("calibration", calibration(c)));
         judgement.ifPresent(j -> summary.put("tolerance", judged(j)));
@@ -73,6 +84,9 @@ record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSou
     private Map<String, Object> photo() {
         Map<String, Object> photograph = new LinkedHashMap<>();
         photograph.put("file", info.path().getFileName().toString());
+        if (signal.parts().size() > 1) {
+            photograph.put("read_jointly", signal.parts().stream().map(p -> p.info().path().getFileName().toString()).toList());
+        }
         photograph.put("width", info.width());
         photograph.put("height", info.height());
         photograph.put("pixel_um", instrument.pixelUm(info));
@@ -86,6 +100,17 @@ record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSou
         result.put("p_value", calibration.figures().pValue());
         result.put("numerical_aperture", calibration.figures().aperture());
         result.put("glare", calibration.glare());
+        return result;
+    }
+
+    private static Map<String, Object> doubt(DoubtfulRegion region) {
+        Map<String, Object> result = new LinkedHashMap<>();
+        Region box = region.box();
+        result.put("region", List.of(box.x(), box.y(), box.width(), box.height()));
+        result.put("pixels", region.pixels());
+        result.put("mean_nm", region.meanNm());
+        result.put("alternatives", region.alternatives());
+        result.put("remedy", REMEDY);
         return result;
     }
 
@@ -135,6 +160,13 @@ record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSou
                     u.mean(), u.median(), u.standardDeviation(), u.percentile(1), u.percentile(99));
             terminal.printf(Locale.ROOT, "uncertainty  random %.2f nm, systematic %.2f nm (standard, rms over pixels)%n",
                     map.randomNm(), map.systematicNm());
+        }
+        for (DoubtfulRegion region : doubts.subList(0, Math.min(SHOWN_DOUBTS, doubts.size()))) {
+            terminal.printf(Locale.ROOT, "in doubt     %s: %.0f nm, or as well %s%n", region.box(), region.meanNm(), region.alternatives()
+                    .stream().map(a -> String.format(Locale.ROOT, "%.0f nm", a.meanNm())).collect(Collectors.joining(", ")));
+        }
+        if (!doubts.isEmpty()) {
+            terminal.println("             what settles it: " + REMEDY);
         }
         judgement.ifPresent(j -> terminal.printf(Locale.ROOT, "tolerance    %s to %s nm: %s, %.2f %% of pixels within%n",
                 recipe().tolerance()[0], recipe().tolerance()[1], j.verdict().words(), 100 * j.inside()));

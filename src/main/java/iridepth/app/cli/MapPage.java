@@ -25,6 +25,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
+import java.util.stream.Collectors;
 
 /**
  * What the report page says of a map.
@@ -32,13 +33,19 @@ import java.util.Optional;
  * @param findings what the map amounts to
  */
 record MapPage(MapFindings findings) {
-    PageContent content(PagePhoto photo, List<Doubt> doubts) {
+    PageContent content(PagePhoto photo) {
         Recipe recipe = findings.recipe();
         Optional<Tolerance> tolerance = Optional.ofNullable(recipe.tolerance()).map(t -> Tolerance.between(t[0], t[1]));
         return new PageContent(recipe.title(), findings.info().path().getFileName().toString(),
                 findings.judgement().map(this::judged), facts(), findings.map().page(), Optional.of(photo),
-                Histogram.of(findings.map().distribution()), tolerance, doubts, sections(), origin(), findings.notes(),
+                Histogram.of(findings.map().distribution()), tolerance, doubts(), sections(), origin(), findings.notes(),
                 Iridepth.CAUTION);
+    }
+
+    private List<Doubt> doubts() {
+        return findings.doubts().stream().map(d -> new Doubt(d.box().x(), d.box().y(), d.box().width(), d.box().height(), d.pixels(),
+                nm(d.meanNm()), d.alternatives().stream().map(a -> nm(a.meanNm())).collect(Collectors.joining(", ")),
+                MapFindings.REMEDY)).toList();
     }
 
     private Judged judged(Judgement j) {

@@ -1,13 +1,14 @@
 package iridepth.app.cli;
 
-import iridepth.photo.PhotoFile;
+import iridepth.photo.OpenPhotos;
 import iridepth.photo.PhotoInfo;
 import iridepth.photo.SignalSource;
 import iridepth.quality.Tolerance;
 import iridepth.quality.Tolerance.Judgement;
 import iridepth.quality.Verdict;
+import iridepth.reading.DoubtfulRegion;
 import iridepth.reading.FilmReader;
-import iridepth.reading.ThicknessMap;
+import iridepth.reading.OtherCandidates;
 import iridepth.recipe.Instrument;
 import iridepth.recipe.Recipe;
 import iridepth.recipe.Setup;
@@ -23,25 +24,30 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.concurrent.CompletableFuture;
 
-/** One photo before an instrument: reads it and writes its result folder. */
-record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
+/**
+ * A photo before an instrument, or one under each of its lights: reads it and writes its result folder.
+ *
+ * @param orderChoice whether neighbours settle the order of a pixel
+ */
+record MapRun(Instrument instrument, List<Path> photos, boolean orderChoice, PrintWriter terminal) {
+
     /** Reads the photo, writes the folder and tells the essentials; returns the exit code. */
     int write(Path out, boolean replace) {
-        try (ResultFolder folder = ResultFolder.create(out, replace); PhotoFile file = PhotoFile.open(photo)) {
-            CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photo));
-            SignalSource signal = instrument.signal(file);
-            PhotoInfo info = file.info();
+        try (ResultFolder folder = ResultFolder.create(out, replace); OpenPhotos files = OpenPhotos.of(photos)) {
+            CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photos.toArray(Path[]::new)));
+            SignalSource signal = instrument.signal(files.files());
+            PhotoInfo info = signal.info();
             Setup setup = instrument.setup(signal);
-            FilmReader reader = FilmReader.of(setup.curve(), recipe().excluded());
+            OtherCandidates others = OtherCandidates.of(setup.curve(), recipe().excluded(), signal, 0);
             try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
-                    recipe().range().fromNm(), recipe().range().toNm())) {
-                read(reader, signal, map);
+                    recipe().range().fromNm(), recipe().range().toNm(), others)) {
+                List<DoubtfulRegion> doubts = read(reader(setup, info), signal, map);
                 Optional<Tolerance> tolerance = Optional.ofNullable(recipe().tolerance()).map(t -> Tolerance.between(t[0], t[1]));
                 map.finish(recipe().title(), tolerance);
-                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, tolerance.map(map::judge), hashes.join());
+                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, doubts, tolerance.map(map::judge), hashes.join());
                 SummaryJson.write(findings.summary(), folder.file("summary.json"));
-                PagePhoto preview = PagePhoto.of(signal, 0, !recipe().camera().isColourManaged());
-                ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview, List.of()));
+                PagePhoto preview = PagePhoto.of(signal.parts().get(0), 0, !recipe().camera().isColourManaged());
+                ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview));
                 folder.commit();
                 findings.tell(terminal);
                 terminal.println("wrote        " + out);
@@ -57,11 +63,15 @@ record MapRun(Instrument instrument, Path photo, PrintWriter terminal) {
         return instrument.recipe();
     }
 
-    private void read(FilmReader reader, SignalSource signal, MapFolder map) {
-        long pixels = (long) signal.info().width() * signal.info().height();
+    private FilmReader reader(Setup setup, PhotoInfo info) {
+        FilmReader reader = setup.reader(recipe(), info);
+        return orderChoice ? reader : reader.withoutOrderChoice();
+    }
+
+    private static List<DoubtfulRegion> read(FilmReader reader, SignalSource signal, MapFolder map) {
+        long pixels = 2L * signal.info().width() * signal.info().height();
         try (ProgressBar bar = new ProgressBar("reading", pixels)) {
-            ThicknessMap result = reader.read(signal, 0, bar);
-            map.add(0, result.thickness(), result.random(), result.systematic(), result.state());
+            return reader.read(signal, 0, map, bar);
         }
     }
 }

@@ -5,7 +5,6 @@ import iridepth.optics.MaterialCheck;
 import iridepth.optics.Materials;
 import iridepth.photo.PhotoException;
 import iridepth.report.MaterialSheet;
-import iridepth.report.OutputFile;
 import iridepth.spectrum.SpectralTable;
 import java.io.IOException;
 import java.io.PrintWriter;
@@ -14,6 +13,7 @@ import java.nio.file.Path;
 import java.util.Locale;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Parameters;
@@ -36,12 +36,8 @@ final class MaterialsCommand implements Callable<Integer> {
     @Option(names = "--check", paramLabel = "FILE.csv", description = "Check and show a table of your own.")
     private Path check;
 
-    @Option(names = "--out", paramLabel = "FILE.png", description = "Picture of n and k against wavelength; its table goes beside "
-            + "it as FILE.csv.")
-    private Path out;
-
-    @Option(names = "--replace", description = "Replace files that exist.")
-    private boolean replace;
+    @Mixin
+    private OptionalPicture output;
 
     @Override
     public Integer call() {
@@ -50,7 +46,7 @@ final class MaterialsCommand implements Callable<Integer> {
             throw new IllegalArgumentException("give a NAME or --check FILE.csv, not both");
         }
         if (name == null && check == null) {
-            if (out != null) {
+            if (output.wanted()) {
                 throw new IllegalArgumentException("--out goes with a NAME or with --check: which material shall be drawn?");
             }
             list(terminal);
@@ -58,10 +54,7 @@ final class MaterialsCommand implements Callable<Integer> {
         }
         MaterialSheet sheet = new MaterialSheet(check == null ? Materials.bundled().get(name) : checked(terminal));
         terminal.print(sheet.text());
-        if (out != null) {
-            write(sheet);
-            terminal.println("wrote " + out + " and " + OutputNames.table(out));
-        }
+        output.write(sheet::write, sheet.csv()).ifPresent(terminal::println);
         terminal.flush();
         return Iridepth.DONE;
     }
@@ -78,6 +71,7 @@ final class MaterialsCommand implements Callable<Integer> {
     }
 
     private Material checked(PrintWriter terminal) {
+        output.spare(check);
         SpectralTable table = read();
         MaterialCheck result = MaterialCheck.of(table);
         if (!result.faults().isEmpty()) {
@@ -98,16 +92,6 @@ final class MaterialsCommand implements Callable<Integer> {
             throw new PhotoException(e.getMessage());
         } catch (IOException e) {
             throw new PhotoException(check + ": cannot be read (" + e.getMessage() + ")");
-        }
-    }
-
-    private void write(MaterialSheet sheet) {
-        Path csv = OutputNames.table(out);
-        try (OutputFile picture = OutputFile.create(out, replace); OutputFile table = OutputFile.create(csv, replace)) {
-            sheet.write(picture.path());
-            sheet.csv().write(table.path());
-            picture.commit();
-            table.commit();
         }
     }
 }

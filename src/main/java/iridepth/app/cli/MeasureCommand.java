@@ -74,8 +74,8 @@ final class MeasureCommand implements Callable<Integer> {
         terminal.printf(Locale.ROOT, "%-12s %9s %9s %10s %10s  %s%n", "place", "readings", "mean nm", "\u00b1 (k=2)", "sd nm", "verdict");
         for (int i = 0; i < figure.places().size(); i++) {
             Average a = figure.measured().get(i).average();
-            terminal.printf(Locale.ROOT, "%-12s %9d %9.2f %10.2f %10.2f  %s%n", figure.places().get(i).name(), a.count(), a.thickness(),
-                    2 * a.standardUncertainty(), a.spread(), figure.verdict(i).map(Verdict::words).orElse(""));
+            terminal.printf(Locale.ROOT, "%-12s %9d %9s %10s %10s  %s%n", figure.places().get(i).name(), a.count(), nm(a.thickness()),
+                    nm(2 * a.standardUncertainty()), nm(a.spread()), figure.verdict(i).map(Verdict::words).orElse(""));
         }
         List<Disk> disks = figure.places().stream().map(Place::area).filter(Disk.class::isInstance).map(Disk.class::cast).toList();
         if (disks.size() > 1) {
@@ -88,5 +88,9 @@ final class MeasureCommand implements Callable<Integer> {
         }
         terminal.println(written);
         terminal.flush();
+    }
+
+    private static String nm(double value) {
+        return Double.isNaN(value) ? "-" : String.format(Locale.ROOT, "%.2f", value);
     }
 }

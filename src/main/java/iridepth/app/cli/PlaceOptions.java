@@ -88,8 +88,18 @@ final class PlaceOptions {
         places.add(Place.disk(name.isEmpty() ? String.valueOf(places.size() + 1) : name, p, disk));
     }
 
-    /** All places, the sites first. Those without a name are numbered. */
+    /** All places, at least one, the sites first. Those without a name are numbered. */
     List<Place> all(int width, int height) {
+        List<Place> places = any(width, height);
+        if (places.isEmpty()) {
+            throw new IllegalArgumentException("say where to measure: --sites N, --points FILE.csv, --point X,Y, --region X,Y,W,H or "
+                    + "--roi FILE");
+        }
+        return places;
+    }
+
+    /** All places, perhaps none, as {@link #all}. */
+    List<Place> any(int width, int height) {
         List<Place> places = new ArrayList<>(sites(width, height));
         for (String text : regions) {
             places.add(Place.rectangle(String.valueOf(places.size() + 1), Coordinates.region("--region", text)));
@@ -98,10 +108,6 @@ final class PlaceOptions {
             for (RoiFile roi : RoiFile.read(file)) {
                 addSelection(places, file, roi);
             }
-        }
-        if (places.isEmpty()) {
-            throw new IllegalArgumentException("say where to measure: --sites N, --points FILE.csv, --point X,Y, --region X,Y,W,H or "
-                    + "--roi FILE");
         }
         return places;
     }

@@ -26,7 +26,8 @@ record Answer(int code, String out, String err) {
         assertFalse(answer.err.contains("\tat "), answer.err);
     }
 
-    private static Answer any(Object... args) {
+    /** Runs a command line, whatever becomes of it. */
+    static Answer any(Object... args) {
         StringWriter out = new StringWriter();
         StringWriter err = new StringWriter();
         int code = Iridepth.run(new PrintWriter(out), new PrintWriter(err),
