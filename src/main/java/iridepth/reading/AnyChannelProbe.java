@@ -42,4 +42,21 @@ final class AnyChannelProbe extends TangentProbe {
         }
         return sum + beside * beside * samples[at];
     }
+
+    @Override
+    float settle(int first, int last, int start) {
+        int k = start;
+        float t = distance(k);
+        for (int i = 0; i < HOPS; i++) {
+            int next = step(k, t, first, last);
+            if (next == k) {
+                break;
+            }
+            k = next;
+            t = distance(k);
+        }
+        sample = k;
+        offset = t;
+        return chiSquare(k, t);
+    }
 }

@@ -69,12 +69,10 @@ final class CandidateRow {
         size--;
     }
 
-    /** Ends the pixel in work; how many candidates it has. */
-    int close() {
-        int count = size - first;
+    /** Ends the pixel in work. */
+    void close() {
         first = size;
         explained = false;
-        return count;
     }
 
     /**
@@ -118,6 +116,11 @@ final class CandidateRow {
         return size;
     }
 
+    /** Number of candidates of the pixel in work. */
+    int pending() {
+        return size - first;
+    }
+
     /** Whether a candidate of the pixel in work passes the off-curve test. */
     boolean explained() {
         return explained;
@@ -131,6 +134,11 @@ final class CandidateRow {
     /** Cost of a candidate by its place in the row. */
     float cost(int place) {
         return cost[place];
+    }
+
+    /** A copy of all costs. */
+    float[] costs() {
+        return Arrays.copyOf(cost, size);
     }
 
     /** A copy of all thicknesses. */

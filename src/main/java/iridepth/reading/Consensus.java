@@ -38,32 +38,26 @@ final class Consensus {
     /**
      * Looks at a row again.
      *
-     * @param pixels its candidates
      * @param window the readings of the rows from RADIUS above to RADIUS below, null outside the picture
-     * @return its readings, the same object where nothing changes
+     * @return the readings of the row in the middle, the same object where nothing changes
      */
-    ReadRow look(PixelRow pixels, ReadRow[] window) {
+    ReadRow look(ReadRow[] window) {
         ReadRow here = window[RADIUS];
+        PixelRow pixels = here.pixels();
         ReadRow result = here;
         float[] d = here.thickness();
         float[] above = window[RADIUS - 1] == null ? d : window[RADIUS - 1].thickness();
         float[] below = window[RADIUS + 1] == null ? d : window[RADIUS + 1].thickness();
-        int candidate = 0;
-        int open = 0;
         int last = d.length - 1;
-        for (int x = 0; x <= last; x++) {
-            int count = pixels.kind(x);
-            if (count > 1) {
-                if (jumps(d[x], d[Math.max(0, x - 1)]) || jumps(d[x], d[Math.min(last, x + 1)]) || jumps(d[x], above[x])
-                        || jumps(d[x], below[x])) {
-                    if (result == here) {
-                        result = here.copy();
-                    }
-                    choose(x, pixels, candidate, open, count, window, result);
+        for (int noted = 0; noted < pixels.noted(); noted++) {
+            int x = pixels.column()[noted];
+            if (pixels.count(noted) > 1 && (jumps(d[x], d[Math.max(0, x - 1)]) || jumps(d[x], d[Math.min(last, x + 1)])
+                    || jumps(d[x], above[x]) || jumps(d[x], below[x]))) {
+                if (result == here) {
+                    result = here.copy();
                 }
-                open += count;
+                choose(noted, pixels, window, result);
             }
-            candidate += Math.max(0, count);
         }
         return result;
     }
@@ -72,12 +66,12 @@ final class Consensus {
         return Math.abs(d - other) > jump;
     }
 
-    private void choose(int x, PixelRow pixels, int candidate, int open, int count, ReadRow[] window, ReadRow result) {
-        int best = 0;
+    private void choose(int noted, PixelRow pixels, ReadRow[] window, ReadRow result) {
+        int best = -1;
         float least = Float.POSITIVE_INFINITY;
         float second = Float.POSITIVE_INFINITY;
-        for (int k = 0; k < count; k++) {
-            float energy = pixels.cost()[open + k] + around(x, pixels.thickness()[candidate + k], window);
+        for (int k = pixels.start()[noted]; k < pixels.start()[noted + 1]; k++) {
+            float energy = pixels.cost()[k] + around(pixels.column()[noted], pixels.thickness()[k], window);
             if (energy < least) {
                 second = least;
                 least = energy;
@@ -86,7 +80,7 @@ final class Consensus {
                 second = Math.min(second, energy);
             }
         }
-        result.take(x, pixels, candidate + best, open + best, second - least, index);
+        result.take(noted, best, second - least, index);
     }
 
     private float around(int x, float d, ReadRow[] window) {

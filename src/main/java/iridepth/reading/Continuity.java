@@ -3,99 +3,151 @@ package iridepth.reading;
 import java.util.Arrays;
 
 /**
- * What it costs a film to go on to a thickness from what has been decided before, on each of a number of lines of pixels. A
- * pixel without reading leaves a gap, across which it costs less and less.
+ * What it costs a film to go on to a thickness from what has been decided in the row below and beside. Pixels without reading
+ * leave a gap, across which it costs less and less.
  */
 abstract class Continuity {
-    private final byte[] gap;
-
-    Continuity(int lines) {
-        this.gap = new byte[lines];
-        forget();
-    }
-
     /** The cost that suits a curve. */
-    static Continuity of(CurveIndex index, JumpPenalty penalty, int lines) {
-        return index.turnsBack() ? new OfSlope(index, lines) : new OfThickness(penalty, lines);
+    static Continuity of(CurveIndex index, JumpPenalty penalty, int width) {
+        return index.turnsBack() ? new OfSlope(index, width) : new OfThickness(penalty);
     }
 
-    /** Forgets what has been decided. */
-    final void forget() {
-        Arrays.fill(gap, (byte) Sweep.WIDEST_GAP);
+    /** Begins the next row upwards, from one side or the other. */
+    abstract void begin(ReadRow row, boolean forward);
+
+    /** Comes to a noted pixel. */
+    abstract void at(int x);
+
+    /** What it costs to go on to a thickness there. */
+    abstract float cost(float d);
+
+    /** What has been decided there; NaN where there is no reading. */
+    abstract void decided(float d);
+
+    /** What a jump counts for across so many pixels without reading. */
+    private static float weight(int gap) {
+        return 1 - (float) gap / Sweep.WIDEST_GAP;
     }
-
-    /** What it costs to go on to a thickness on a line. */
-    final float cost(int line, float d) {
-        int g = gap[line];
-        return g >= Sweep.WIDEST_GAP ? 0 : jump(line, d, g + 1) * (1 - (float) g / Sweep.WIDEST_GAP);
-    }
-
-    /** Goes on to the next pixel of a line; NaN where it has no reading. */
-    final void go(int line, float d) {
-        if (d == d) {
-            follow(line, d, gap[line] >= Sweep.WIDEST_GAP ? 0 : gap[line] + 1);
-            gap[line] = 0;
-        } else if (gap[line] < Sweep.WIDEST_GAP) {
-            gap[line]++;
-        }
-    }
-
-    abstract float jump(int line, float d, int steps);
-
-    /** @param steps pixels since the last reading, 0 where there is none */
-    abstract void follow(int line, float d, int steps);
 
     /** By the {@link JumpPenalty}. */
     private static final class OfThickness extends Continuity {
         private final JumpPenalty penalty;
-        private final float[] last;
+        /** Readings of the row in work and of those below it. */
+        private final float[][] rows = new float[Sweep.WIDEST_GAP + 1][];
+        private int step;
+        private float below;
+        private int gapBelow;
+        private float beside;
+        private int gapBeside;
 
-        OfThickness(JumpPenalty penalty, int lines) {
-            super(lines);
+        OfThickness(JumpPenalty penalty) {
             this.penalty = penalty;
-            this.last = new float[lines];
         }
 
         @Override
-        float jump(int line, float d, int steps) {
-            float difference = d - last[line];
-            return Math.min(JumpPenalty.TRUNCATION, difference * difference * penalty.stiffness(d) / steps);
+        void begin(ReadRow row, boolean forward) {
+            System.arraycopy(rows, 0, rows, 1, rows.length - 1);
+            rows[0] = row.thickness();
+            step = forward ? 1 : -1;
         }
 
         @Override
-        void follow(int line, float d, int steps) {
-            last[line] = d;
+        void at(int x) {
+            gapBelow = 0;
+            while (gapBelow < Sweep.WIDEST_GAP && (rows[gapBelow + 1] == null || Float.isNaN(rows[gapBelow + 1][x]))) {
+                gapBelow++;
+            }
+            below = gapBelow < Sweep.WIDEST_GAP ? rows[gapBelow + 1][x] : 0;
+            gapBeside = 0;
+            int from = x - step;
+            while (gapBeside < Sweep.WIDEST_GAP && (from < 0 || from >= rows[0].length || Float.isNaN(rows[0][from]))) {
+                gapBeside++;
+                from -= step;
+            }
+            beside = gapBeside < Sweep.WIDEST_GAP ? rows[0][from] : 0;
+        }
+
+        @Override
+        float cost(float d) {
+            float stiffness = penalty.stiffness(d);
+            return jump(d - below, stiffness, gapBelow) + jump(d - beside, stiffness, gapBeside);
+        }
+
+        private static float jump(float difference, float stiffness, int gap) {
+            return Math.min(JumpPenalty.TRUNCATION, difference * difference * stiffness / (1 + gap)) * weight(gap);
+        }
+
+        @Override
+        void decided(float d) {
+            // the row itself remembers
         }
     }
 
-    /** By a {@link SlopeFilter}, as in the {@link SlopeSweep}. */
+    /** By {@link SlopeFilter}s up the columns and along the row, as in the {@link SlopeSweep}. */
     private static final class OfSlope extends Continuity {
         private final TangentTable table;
         private final SlopeFilter filter;
+        /** States of the filters, those of the columns and at the end that of the row; and the pixels since a reading. */
         private final float[] state;
+        private final byte[] gap;
+        private int column;
 
-        OfSlope(CurveIndex index, int lines) {
-            super(lines);
+        OfSlope(CurveIndex index, int width) {
             this.table = index.middle();
             this.filter = new SlopeFilter(index);
-            this.state = new float[lines * SlopeFilter.SIZE];
+            this.state = new float[(width + 1) * SlopeFilter.SIZE];
+            this.gap = new byte[width + 1];
+            Arrays.fill(gap, (byte) Sweep.WIDEST_GAP);
+        }
+
+        private int along() {
+            return gap.length - 1;
         }
 
         @Override
-        float jump(int line, float d, int steps) {
-            float surprise = filter.surprise(state, line * SlopeFilter.SIZE, steps, d, table.spread(table.nearest(d)));
-            return Math.min(SlopeSweep.TRUNCATION, surprise);
+        void begin(ReadRow row, boolean forward) {
+            gap[along()] = Sweep.WIDEST_GAP;
         }
 
         @Override
-        void follow(int line, float d, int steps) {
-            int at = line * SlopeFilter.SIZE;
+        void at(int x) {
+            column = x;
+        }
+
+        @Override
+        float cost(float d) {
             float variance = table.spread(table.nearest(d));
-            if (steps == 0 || filter.surprise(state, at, steps, d, variance) > SlopeSweep.TRUNCATION) {
+            return jump(column, d, variance) + jump(along(), d, variance);
+        }
+
+        private float jump(int line, float d, float variance) {
+            if (gap[line] >= Sweep.WIDEST_GAP) {
+                return 0;
+            }
+            float surprise = filter.surprise(state, line * SlopeFilter.SIZE, gap[line] + 1, d, variance);
+            return Math.min(SlopeSweep.TRUNCATION, surprise) * weight(gap[line]);
+        }
+
+        @Override
+        void decided(float d) {
+            go(column, d);
+            go(along(), d);
+        }
+
+        private void go(int line, float d) {
+            if (Float.isNaN(d)) {
+                gap[line] = (byte) Math.min(Sweep.WIDEST_GAP, gap[line] + 1);
+                return;
+            }
+            int at = line * SlopeFilter.SIZE;
+            int steps = gap[line] + 1;
+            float variance = table.spread(table.nearest(d));
+            if (steps > Sweep.WIDEST_GAP || filter.surprise(state, at, steps, d, variance) > SlopeSweep.TRUNCATION) {
                 filter.begin(state, at, d, variance);
             } else {
                 filter.follow(state, at, steps, d, variance, state, at);
             }
+            gap[line] = 0;
         }
     }
 }

@@ -11,7 +11,9 @@ import iridepth.curve.ColourCurve;
  * the curve leaves its chord. Every cell that such a box touches lists the piece. A pixel outside the grid has no candidates.
  */
 final class CurveCells {
-    private static final int[] MOST_CELLS = {8192, 512, 96};
+    /** Edge of a cell in half-widths of the boxes. */
+    private static final double EDGE = 0.7;
+    private static final int[] MOST_CELLS = {8192, 512, 128};
 
     private final CellFrame frame;
     /** [cell]: where its runs begin, one more entry at the end. */
@@ -38,7 +40,7 @@ final class CurveCells {
         double[] edge = new double[axes.count()];
         for (int i = 0; i < edge.length; i++) {
             double finest = (boxes.most(i) - boxes.least(i)) / MOST_CELLS[edge.length - 1];
-            edge[i] = Math.max(boxes.halfWidth(i), finest);
+            edge[i] = Math.max(EDGE * boxes.halfWidth(i), finest);
         }
         CellFrame frame = new CellFrame(axes, boxes.least(), boxes.most(), edge);
         CellRuns lists = new CellRuns(frame.size());

@@ -20,15 +20,16 @@ final class CurveSampling {
     private static final int PER_SPACING = 3;
 
     private final double[] thickness;
+    private final double[] spacing;
     private final float fromNm;
     private final float perNm;
     /** The sample nearest to each of many thicknesses, even and finer than the samples. */
     private final int[] nearest;
 
-    private CurveSampling(ColourCurve curve, double[] spacing) {
+    private CurveSampling(ColourCurve curve, double[] wanted) {
         double[] place = new double[curve.size()];
         for (int i = 1; i < place.length; i++) {
-            place[i] = place[i - 1] + curve.stepNm() * (1 / spacing[i - 1] + 1 / spacing[i]) / 2;
+            place[i] = place[i - 1] + curve.stepNm() * (1 / wanted[i - 1] + 1 / wanted[i]) / 2;
         }
         int last = (int) Math.ceil(place[place.length - 1]);
         double stretch = last / place[place.length - 1];
@@ -44,7 +45,13 @@ final class CurveSampling {
             }
             thickness[n] = curve.fromNm() + (i + (n - place[i]) / (place[i + 1] - place[i])) * curve.stepNm();
         }
-        double pitch = Arrays.stream(spacing).min().orElseThrow() / PER_SPACING;
+        this.spacing = new double[last + 1];
+        for (int n = 0; n <= last; n++) {
+            int low = Math.max(0, n - 1);
+            int high = Math.min(last, n + 1);
+            spacing[n] = (thickness[high] - thickness[low]) / (high - low);
+        }
+        double pitch = Arrays.stream(wanted).min().orElseThrow() / PER_SPACING;
         this.fromNm = (float) curve.fromNm();
         this.perNm = (float) (1 / pitch);
         this.nearest = new int[(int) ((curve.toNm() - curve.fromNm()) / pitch) + 1];
@@ -89,9 +96,7 @@ final class CurveSampling {
 
     /** Spacing at a sample, nm. */
     double spacing(int k) {
-        int low = Math.max(0, k - 1);
-        int high = Math.min(thickness.length - 1, k + 1);
-        return (thickness[high] - thickness[low]) / (high - low);
+        return spacing[k];
     }
 
     /** The sample nearest to a thickness; between two samples either. */

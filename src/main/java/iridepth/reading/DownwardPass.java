@@ -111,7 +111,7 @@ final class DownwardPass {
             crew.add(() -> {
                 band.carried()[number] = sweeps[number].state();
                 for (PixelRow row : band.rows()) {
-                    sweeps[number].advance(row, row.message(number));
+                    sweeps[number].advance(row, row.message()[number]);
                 }
             });
         }

@@ -88,8 +88,8 @@ public final class FilmReader {
         int height = photo.info().height();
         CurveIndex index = CurveIndex.of(curve, photo);
         JumpPenalty penalty = JumpPenalty.of(index);
-        IntFunction<Sweep> newSweep = i -> index.turnsBack() ? new SlopeSweep(index, width, i % 2 == 0)
-                : new PathSweep(penalty, width, i % 2 == 0);
+        IntFunction<Sweep> newSweep = i -> index.turnsBack() ? new SlopeSweep(index, i % 2 == 0)
+                : new PathSweep(penalty, i % 2 == 0);
         int rows = bandHeight > 0 ? bandHeight : Math.max(LEAST_BAND, Math.min(MOST_BAND, BAND_PIXELS / width));
         DownwardPass down = new DownwardPass(photo, frame, rows, () -> new RowReader(photo, excluded, pins, index, orderChoice), newSweep);
         List<Band> bands = down.run(kept, progress);

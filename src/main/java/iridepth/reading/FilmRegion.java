@@ -2,6 +2,10 @@ package iridepth.reading;
 
 /** A region of continuous thickness while it is gathered; regions that turn out to be one are merged. */
 final class FilmRegion {
+    /** Pixels with one candidate only that settle a region's order, and their least share of its pixels. */
+    private static final int SETTLING = 20;
+    private static final double SETTLING_SHARE = 1e-3;
+
     private FilmRegion parent;
     private long pixels;
     private double sum;
@@ -15,19 +19,24 @@ final class FilmRegion {
     private OrderEvidence evidence;
     private boolean doubtful;
 
-    /** The region that this one has become part of, or itself. */
+    /**
+     * The region that this one has become part of, or itself. Shortens the way there by halves, always to a region further on, so
+     * that other threads may ask at the same time, also while regions join.
+     */
     FilmRegion root() {
-        FilmRegion root = this;
-        while (root.parent != null) {
-            root = root.parent;
-        }
         FilmRegion region = this;
-        while (region.parent != null) {
+        while (true) {
             FilmRegion next = region.parent;
-            region.parent = root;
-            region = next;
+            if (next == null) {
+                return region;
+            }
+            FilmRegion further = next.parent;
+            if (further == null) {
+                return next;
+            }
+            region.parent = further;
+            region = further;
         }
-        return root;
     }
 
     /** Makes this and another region one, which is returned. */
@@ -78,6 +87,11 @@ final class FilmRegion {
         contacts += count;
     }
 
+    /** Whether its order is beyond doubt: it is known, or enough of its pixels leave no choice. */
+    boolean isSettled() {
+        return pinned || settled >= SETTLING && settled >= SETTLING_SHARE * pixels;
+    }
+
     /** Its order is known. */
     void pin() {
         pinned = true;
@@ -95,16 +109,8 @@ final class FilmRegion {
         return pixels;
     }
 
-    long settled() {
-        return settled;
-    }
-
     long contacts() {
         return contacts;
-    }
-
-    boolean pinned() {
-        return pinned;
     }
 
     double mean() {

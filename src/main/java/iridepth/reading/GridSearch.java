@@ -9,9 +9,11 @@ final class GridSearch implements CandidateSearch {
     /** Chi-square by the tangent of a sample may exceed that of the minimum by this factor. */
     private static final float FAR = 1.5f;
     /** Curvature times residual below which the tangent of one sample does. */
-    private static final float BENT = 0.05f;
+    private static final float BENT = 0.15f;
     /** Share of a distance that is skipped: the metric changes somewhat along the curve. */
     private static final float SKIPPED = 0.8f;
+    /** Over the threshold, chi-square beyond which no longer leaps are made. */
+    private static final float FARTHEST = 9;
     private final TangentTable[] tables;
     private final CurveCells cells;
     private final float threshold;
@@ -23,6 +25,8 @@ final class GridSearch implements CandidateSearch {
     private final int size;
 
     private CandidateRow result;
+    /** Where the last pixel was found, from which to start in the next. */
+    private int recent;
 
     GridSearch(CurveIndex index) {
         this.tables = index.tables();
@@ -34,6 +38,11 @@ final class GridSearch implements CandidateSearch {
         this.size = tables[0].size();
         this.probe = channels == 3 ? new ThreeChannelProbe() : new AnyChannelProbe(channels);
         this.exhaustive = new ExhaustiveSearch(index);
+    }
+
+    /** Begins a row: where the last pixel was found is of no use any more. */
+    void begin() {
+        recent = -1;
     }
 
     @Override
@@ -76,16 +85,18 @@ final class GridSearch implements CandidateSearch {
      * the residual; then the tangent of the next sample beyond it tells where it lies between the two.
      */
     private void straight(int first, int last) {
-        int k = probe.nearest(first, last);
-        float t = probe.distance(k);
-        float chiSquare = probe.chiSquare(k, t);
+        float chiSquare = probe.settle(first, last, recent >= first && recent <= last ? recent : (first + last) >>> 1);
         if (chiSquare > FAR * threshold) {
             return;
         }
+        int k = probe.sample();
+        float t = probe.offset();
+        recent = k;
         boolean isSure = t <= HALF && t >= -HALF && k > first && k < last
                 && probe.table().curvature(k) * probe.table().curvature(k) * chiSquare < BENT * BENT;
         if (isSure || k == 0 && t < 0 || k == size - 1 && t > 0) {
-            accept(k, t);
+            float held = k == 0 ? Math.max(0, t) : k == size - 1 ? Math.min(0, t) : t;
+            keep(k, held, chiSquare + (t - held) * (t - held) * probe.table().information(k));
             return;
         }
         int next = t > 0 ? k + 1 : k - 1;
@@ -117,9 +128,10 @@ final class GridSearch implements CandidateSearch {
 
     /**
      * Looks along a run, at every sample where a candidate can be and in leaps where it is far: the root of chi-square falls no
-     * faster than the length of the curve that is passed.
+     * faster than the length of the curve that is passed. The root is taken by its chord, which lies below it.
      */
     private void look(int first, int last, float slowness) {
+        float leap = SKIPPED * slowness / ((1 + (float) Math.sqrt(FARTHEST)) * reach);
         int k = first;
         int lowest = first;
         float least = Float.POSITIVE_INFINITY;
@@ -135,7 +147,7 @@ final class GridSearch implements CandidateSearch {
             if (k == last) {
                 break;
             }
-            int step = here <= threshold ? 1 : Math.max(1, (int) (((float) Math.sqrt(here) - reach) * SKIPPED * slowness));
+            int step = here <= threshold ? 1 : Math.max(1, (int) ((Math.min(here, FARTHEST * threshold) - threshold) * leap));
             k = Math.min(last, k + step);
         }
         if (falling && last == size - 1) {

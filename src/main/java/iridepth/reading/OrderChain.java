@@ -22,13 +22,12 @@ record OrderChain(double evidence, double meanNm, double binNm, TreeMap<Integer,
     }
 
     /**
-     * Finds the candidate of a pixel that the chain leads to.
+     * Finds the candidate of a noted pixel that the chain leads to.
      *
-     * @param chosenNm  the thickness chosen so far
-     * @param candidate where the pixel's candidates begin among the row's
-     * @return which of them, or -1 where there is none
+     * @param chosenNm the thickness chosen so far
+     * @return its place among the row's candidates, or -1 where there is none
      */
-    int follow(float chosenNm, PixelRow row, int candidate, int count) {
+    int follow(float chosenNm, PixelRow row, int noted) {
         int bin = (int) (chosenNm / binNm);
         Map.Entry<Integer, Integer> below = bins.floorEntry(bin);
         Map.Entry<Integer, Integer> above = bins.ceilingEntry(bin);
@@ -38,8 +37,8 @@ record OrderChain(double evidence, double meanNm, double binNm, TreeMap<Integer,
         double wanted = (nearest.getValue() + 0.5) * binNm;
         int best = -1;
         double least = (NEAR + away) * binNm;
-        for (int k = 0; k < count; k++) {
-            double difference = Math.abs(row.thickness()[candidate + k] - wanted);
+        for (int k = row.start()[noted]; k < row.start()[noted + 1]; k++) {
+            double difference = Math.abs(row.thickness()[k] - wanted);
             if (difference < least) {
                 least = difference;
                 best = k;

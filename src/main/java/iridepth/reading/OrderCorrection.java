@@ -10,25 +10,20 @@ import java.util.Map;
  */
 record OrderCorrection(Regions regions, Map<FilmRegion, OrderChain> chains) {
     /** Corrects a row: the same object where nothing changes. */
-    ReadRow correct(int y, PixelRow pixels, ReadRow row, CurveIndex index) {
-        FilmRegion[] of = regions.of(y);
+    ReadRow correct(int y, ReadRow row, CurveIndex index) {
+        PixelRow pixels = row.pixels();
         ReadRow result = row;
-        int candidate = 0;
-        int open = 0;
-        for (int x = 0; x < of.length; x++) {
-            int count = Math.max(0, pixels.kind(x));
-            if (count > 1) {
-                OrderChain chain = of[x] == null ? null : chains.get(of[x]);
-                int k = chain == null ? -1 : chain.follow(row.thickness()[x], pixels, candidate, count);
-                if (k >= 0) {
-                    if (result == row) {
-                        result = row.copy();
-                    }
-                    result.take(x, pixels, candidate + k, open + k, row.margin()[x], index);
+        FilmRegion[] of = regions.of(y);
+        for (int noted = 0; noted < pixels.noted(); noted++) {
+            int x = pixels.column()[noted];
+            OrderChain chain = of[x] == null || pixels.count(noted) < 2 ? null : chains.get(of[x]);
+            int k = chain == null ? -1 : chain.follow(row.thickness()[x], pixels, noted);
+            if (k >= 0) {
+                if (result == row) {
+                    result = row.copy();
                 }
-                open += count;
+                result.take(noted, k, row.margin()[noted], index);
             }
-            candidate += count;
         }
         return result;
     }

@@ -12,51 +12,36 @@ package iridepth.reading;
  */
 final class OrderDecision {
     private final CurveIndex index;
-    private final Continuity below;
-    private final Continuity beside;
+    private final Continuity continuity;
 
     OrderDecision(CurveIndex index, JumpPenalty penalty, int width) {
         this.index = index;
-        this.below = Continuity.of(index, penalty, width);
-        this.beside = Continuity.of(index, penalty, 1);
+        this.continuity = Continuity.of(index, penalty, width);
     }
 
     /** Decides the next row upwards. */
     ReadRow decide(int y, PixelRow row) {
-        ReadRow read = ReadRow.of(row.width());
+        ReadRow read = ReadRow.of(row);
         boolean forward = (y & 1) == 0;
-        int candidate = forward ? 0 : row.thickness().length;
-        int open = forward ? 0 : row.cost().length;
-        beside.forget();
-        for (int i = 0; i < row.width(); i++) {
-            int x = forward ? i : row.width() - 1 - i;
-            int kind = row.kind(x);
-            int count = Math.max(kind, 0);
-            int priced = kind > 1 ? kind : 0;
-            candidate -= forward ? 0 : count;
-            open -= forward ? 0 : priced;
-            if (kind < 0) {
-                read.leave(x, row.state(x));
-            } else if (kind == 1) {
-                read.set(x, row.thickness()[candidate], Float.POSITIVE_INFINITY, index.tables()[row.level(x)]);
-            } else {
-                choose(x, row, candidate, open, kind, read);
+        continuity.begin(read, forward);
+        for (int i = 0; i < row.noted(); i++) {
+            int noted = forward ? i : row.noted() - 1 - i;
+            int x = row.column()[noted];
+            continuity.at(x);
+            if (row.count(noted) > 0) {
+                choose(noted, row, read);
             }
-            below.go(x, read.thickness()[x]);
-            beside.go(0, read.thickness()[x]);
-            candidate += forward ? count : 0;
-            open += forward ? priced : 0;
+            continuity.decided(read.thickness()[x]);
         }
         return read;
     }
 
-    private void choose(int x, PixelRow row, int candidate, int open, int count, ReadRow read) {
-        int best = 0;
+    private void choose(int noted, PixelRow row, ReadRow read) {
+        int best = -1;
         float least = Float.POSITIVE_INFINITY;
         float second = Float.POSITIVE_INFINITY;
-        for (int k = 0; k < count; k++) {
-            float d = row.thickness()[candidate + k];
-            float energy = row.total(open + k) + below.cost(x, d) + beside.cost(0, d);
+        for (int k = row.start()[noted]; k < row.start()[noted + 1]; k++) {
+            float energy = row.total(k) + continuity.cost(row.thickness()[k]);
             if (energy < least) {
                 second = least;
                 least = energy;
@@ -65,6 +50,6 @@ final class OrderDecision {
                 second = Math.min(second, energy);
             }
         }
-        read.take(x, row, candidate + best, open + best, second - least, index);
+        read.take(noted, best, second - least, index);
     }
 }

@@ -53,23 +53,18 @@ final class OrderEvidence {
         return (int) (thicknessNm / binNm);
     }
 
-    /** Hears a pixel that has several candidates. */
-    void add(float chosenNm, PixelRow pixels, int candidate, int open, int count) {
-        float cost = Float.NaN;
-        for (int k = 0; k < count; k++) {
-            if (pixels.thickness()[candidate + k] == chosenNm) {
-                cost = pixels.cost()[open + k];
-            }
-        }
-        int bin = bin(chosenNm);
+    /** Hears a noted pixel that has several candidates. */
+    void add(ReadRow row, int noted) {
+        PixelRow pixels = row.pixels();
+        int taken = row.taken(noted);
+        int bin = bin(pixels.thickness()[taken]);
         witnesses.merge(bin, 1, Integer::sum);
-        Map<Integer, double[]> row = sums.computeIfAbsent(bin, b -> new TreeMap<>());
-        for (int k = 0; k < count; k++) {
-            float d = pixels.thickness()[candidate + k];
-            if (d != chosenNm) {
-                double[] sum = row.computeIfAbsent(bin(d), b -> new double[2]);
+        Map<Integer, double[]> others = sums.computeIfAbsent(bin, b -> new TreeMap<>());
+        for (int k = pixels.start()[noted]; k < pixels.start()[noted + 1]; k++) {
+            if (k != taken) {
+                double[] sum = others.computeIfAbsent(bin(pixels.thickness()[k]), b -> new double[2]);
                 sum[0]++;
-                sum[1] += pixels.cost()[open + k] - cost;
+                sum[1] += pixels.cost()[k] - pixels.cost()[taken];
             }
         }
     }

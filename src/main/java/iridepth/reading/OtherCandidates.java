@@ -42,25 +42,21 @@ public final class OtherCandidates {
      */
     public void row(int y, float[] chosen, int from, float[][] others) {
         PixelRow row = reader.read(photo.counts(frame, y, 1), 0, y);
-        int place = 0;
-        int open = 0;
-        for (int x = 0; x < row.width(); x++) {
-            int count = Math.max(0, row.kind(x));
-            if (count > 1) {
-                rank(row, place, open, count, chosen[from + x], from + x, others);
-                open += count;
+        for (int noted = 0; noted < row.noted(); noted++) {
+            int x = row.column()[noted];
+            if (row.count(noted) > 1) {
+                rank(row, noted, chosen[from + x], from + x, others);
             }
-            place += count;
         }
     }
 
-    private static void rank(PixelRow row, int place, int open, int count, float chosen, int at, float[][] others) {
-        Integer[] order = new Integer[count];
-        Arrays.setAll(order, k -> k);
-        Arrays.sort(order, (a, b) -> Float.compare(row.cost()[open + a], row.cost()[open + b]));
+    private static void rank(PixelRow row, int noted, float chosen, int at, float[][] others) {
+        Integer[] order = new Integer[row.count(noted)];
+        Arrays.setAll(order, k -> row.start()[noted] + k);
+        Arrays.sort(order, (a, b) -> Float.compare(row.cost()[a], row.cost()[b]));
         int next = 0;
         for (int k : order) {
-            float nm = row.thickness()[place + k];
+            float nm = row.thickness()[k];
             if (next < others.length && Math.abs(nm - chosen) > SAME_NM) {
                 others[next++][at] = nm;
             }

@@ -9,49 +9,47 @@ final class PathSweep extends Sweep {
 
     private final JumpPenalty penalty;
 
-    PathSweep(JumpPenalty penalty, int width, boolean forward) {
-        super(width, 1, forward);
+    PathSweep(JumpPenalty penalty, boolean forward) {
+        super(1, forward);
         this.penalty = penalty;
     }
 
     @Override
-    void weigh(PixelRow row, int candidate, int count, int open, int i, float[] message) {
+    void weigh(PixelRow row, int noted, float[] message) {
         SweepRow here = here();
-        int at = at();
-        if (count == 1) {
-            here.value[at] = row.thickness()[candidate];
-            here.loss[at] = 0;
-            return;
-        }
-        float fromBeside = weightBeside();
-        float fromBefore = weightBefore();
+        int at = here.next();
+        int from = row.start()[noted];
+        int count = row.count(noted);
         float mean = mean();
         float authority = authority();
         for (int k = 0; k < count; k++) {
-            float d = row.thickness()[candidate + k];
+            float d = row.thickness()[from + k];
             float stiffness = penalty.stiffness(d);
-            float said = 0;
-            if (fromBeside > 0) {
-                said += fromBeside * message(d, stiffness / (1 + here.gap(i - 1)), here, besideAt(), here.count(i - 1));
-            }
-            if (fromBefore > 0) {
-                said += fromBefore * message(d, stiffness / (1 + before().gap(i)), before(), beforeAt(), before().count(i));
-            }
-            said *= mean;
-            message[open + k] = said * authority;
+            float said = mean * (beside().weight() * message(d, stiffness, beside())
+                    + previous().weight() * message(d, stiffness, previous()));
+            message[from + k] = said * authority;
             here.value[at + k] = d;
-            here.loss[at + k] = row.cost()[open + k] + said;
+            here.loss[at + k] = row.cost()[from + k] + said;
         }
         normalise(here.loss, at, count);
     }
 
-    private static float message(float d, float stiffness, SweepRow row, int at, int count) {
-        float[] thickness = row.value;
-        float[] loss = row.loss;
+    private static float message(float d, float stiffness, Neighbour neighbour) {
+        if (neighbour.weight() == 0) {
+            return 0;
+        }
+        if (neighbour.isSingle()) {
+            float jump = d - neighbour.thickness();
+            return Math.min(T, jump * jump * stiffness);
+        }
+        float[] thickness = neighbour.row().value;
+        float[] loss = neighbour.row().loss;
+        float perSquare = stiffness / neighbour.steps();
+        int end = neighbour.start() + neighbour.count();
         float least = T;
-        for (int j = at; j < at + count; j++) {
+        for (int j = neighbour.start(); j < end; j++) {
             float jump = d - thickness[j];
-            least = Math.min(least, loss[j] + jump * jump * stiffness);
+            least = Math.min(least, loss[j] + jump * jump * perSquare);
         }
         return least;
     }

@@ -1,76 +1,59 @@
 package iridepth.reading;
 
 /**
- * What is kept of a row of pixels until the order is chosen. Candidates of a pixel stand together, pixel after pixel; those of
- * pixels with several, whose order is open, also have a cost. An order that is not open costs nothing.
+ * What is kept of a row of pixels until the order is chosen.
+ *
+ * <p>Most pixels have one candidate: for these its thickness is all. The others are noted, from left to right: pixels with
+ * several candidates, whose order is open, and those with none. Where the curve turns back on itself all pixels are noted.
+ *
+ * @param kind      number of candidates of each pixel, or the complement of its state's code where it has none
+ * @param level     level of light of each pixel; empty where there is only one
+ * @param single    thickness of each pixel with one candidate, nm, NaN for others
+ * @param column    column of each noted pixel
+ * @param start     where the candidates of each noted pixel begin, one more entry at the end
+ * @param thickness thickness of the candidates of noted pixels, nm, rising for each pixel
+ * @param cost      their costs
+ * @param pinned    columns of the pixels whose order is known beforehand
+ * @param message   what the two downward sweeps say against the candidates of noted pixels
  */
-final class PixelRow {
-    /** Number of candidates of each pixel, or the complement of its state's code where it has none. */
-    private final byte[] kind;
-    /** Level of light of each pixel; empty where there is only one. */
-    private final byte[] level;
-    private final float[] thickness;
-    private final float[] cost;
-    private final int[] pinned;
-    private final float[][] messages = new float[2][];
-
-    PixelRow(byte[] kind, byte[] level, float[] thickness, float[] cost, int[] pinned) {
-        this.kind = kind;
-        this.level = level;
-        this.thickness = thickness;
-        this.cost = cost;
-        this.pinned = pinned;
+record PixelRow(byte[] kind, byte[] level, float[] single, int[] column, int[] start, float[] thickness, float[] cost,
+                int[] pinned, float[][] message) {
+    PixelRow(byte[] kind, byte[] level, float[] single, int[] column, int[] start, float[] thickness, float[] cost, int[] pinned) {
+        this(kind, level, single, column, start, thickness, cost, pinned,
+                new float[][] {new float[cost.length], new float[cost.length]});
     }
 
     int width() {
         return kind.length;
     }
 
-    /** Number of candidates of a pixel, or less than 0 where it has none. */
-    int kind(int x) {
-        return kind[x];
+    /** Number of noted pixels. */
+    int noted() {
+        return column.length;
     }
 
-    /** State of a pixel without candidates. */
-    State state(int x) {
-        return State.of(~kind[x]);
+    /** Number of candidates of a noted pixel. */
+    int count(int noted) {
+        return start[noted + 1] - start[noted];
+    }
+
+    /** State of a pixel that has no reading. */
+    State stateWithoutReading(int x) {
+        return kind[x] < 0 ? State.of(~kind[x]) : State.OFF_CURVE;
     }
 
     /** Level of light of a pixel. */
-    int level(int x) {
+    int levelAt(int x) {
         return level.length == 0 ? 0 : level[x];
     }
 
-    /** Thickness of all candidates, nm: not to be changed. */
-    float[] thickness() {
-        return thickness;
-    }
-
-    /** Cost of the candidates of pixels with several: not to be changed. */
-    float[] cost() {
-        return cost;
-    }
-
-    /** Columns of the pixels whose order is known beforehand, rising. */
-    int[] pinned() {
-        return pinned;
-    }
-
-    /** Receives what a sweep's neighbours say against each of the candidates that {@link #cost} lists. */
-    float[] message(int sweep) {
-        if (messages[sweep] == null) {
-            messages[sweep] = new float[cost.length];
-        }
-        return messages[sweep];
-    }
-
-    /** Cost of an open candidate and what the sweeps say against it. */
-    float total(int open) {
-        return cost[open] + messages[0][open] + messages[1][open];
+    /** Cost of a candidate and what the sweeps say against it. */
+    float total(int candidate) {
+        return cost[candidate] + message[0][candidate] + message[1][candidate];
     }
 
     /** Bytes that it takes, about. */
     long bytes() {
-        return kind.length + level.length + 4L * (thickness.length + 3L * cost.length);
+        return kind.length + level.length + 4L * (single.length + 2L * column.length + 4L * cost.length);
     }
 }

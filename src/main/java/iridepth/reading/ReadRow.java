@@ -3,61 +3,46 @@ package iridepth.reading;
 /**
  * A row of pixels with their order chosen.
  *
- * @param thickness  nm, NaN where not read
- * @param random     random part of the standard uncertainty, nm, NaN where not read
- * @param systematic systematic part of the standard uncertainty, nm, NaN where not read
- * @param margin     by how much -2 ln likelihood of the next best order exceeds that of the chosen one; infinite where there is
- *                   none, NaN where not read
- * @param state      code of the {@link State}
+ * @param pixels    what it was chosen from
+ * @param thickness nm, NaN where not read
+ * @param margin    of each noted pixel: by how much -2 ln likelihood of the next best order exceeds that of the chosen one
  */
-record ReadRow(float[] thickness, float[] random, float[] systematic, float[] margin, byte[] state) {
-    static ReadRow of(int width) {
-        return new ReadRow(new float[width], new float[width], new float[width], new float[width], new byte[width]);
-    }
-
-    /**
-     * Takes a candidate of a pixel that has several, unless it does not explain the pixel.
-     *
-     * @param candidate its place among the row's candidates
-     * @param open      its place among their costs
-     */
-    void take(int x, PixelRow row, int candidate, int open, float itsMargin, CurveIndex index) {
-        float d = row.thickness()[candidate];
-        if (index.explains(d, row.cost()[open], row.level(x))) {
-            set(x, d, itsMargin, index.tables()[row.level(x)]);
-        } else {
-            leave(x, State.OFF_CURVE);
-        }
+record ReadRow(PixelRow pixels, float[] thickness, float[] margin) {
+    /** A row with the readings of its pixels with one candidate. */
+    static ReadRow of(PixelRow pixels) {
+        return new ReadRow(pixels, pixels.single().clone(), new float[pixels.noted()]);
     }
 
     ReadRow copy() {
-        return new ReadRow(thickness.clone(), random.clone(), systematic.clone(), margin.clone(), state.clone());
+        return new ReadRow(pixels, thickness.clone(), margin.clone());
     }
 
-    /** Gives a pixel a reading. */
-    void set(int x, float d, float itsMargin, TangentTable table) {
-        int k = table.nearest(d);
-        thickness[x] = d;
-        random[x] = table.random(k);
-        systematic[x] = table.systematic(k);
-        margin[x] = itsMargin;
-        state[x] = State.READ.code();
+    /**
+     * Takes a candidate of a noted pixel, unless it does not explain the pixel.
+     *
+     * @param candidate its place among the row's candidates
+     */
+    void take(int noted, int candidate, float itsMargin, CurveIndex index) {
+        int x = pixels.column()[noted];
+        float d = pixels.thickness()[candidate];
+        boolean explains = index.explains(d, pixels.cost()[candidate], pixels.levelAt(x));
+        thickness[x] = explains ? d : Float.NaN;
+        margin[noted] = pixels.count(noted) == 1 ? Float.POSITIVE_INFINITY : itsMargin;
     }
 
-    /** Leaves a pixel without reading. */
-    void leave(int x, State why) {
-        thickness[x] = Float.NaN;
-        random[x] = Float.NaN;
-        systematic[x] = Float.NaN;
-        margin[x] = Float.NaN;
-        state[x] = why.code();
+    /** Which candidate of a noted pixel has been taken, by its place among the row's, or -1. */
+    int taken(int noted) {
+        float d = thickness[pixels.column()[noted]];
+        for (int k = pixels.start()[noted]; k < pixels.start()[noted + 1]; k++) {
+            if (pixels.thickness()[k] == d) {
+                return k;
+            }
+        }
+        return -1;
     }
 
-    /** Copies the row, less its states, to a place in a longer one. */
-    void copyTo(ReadRow band, int at) {
-        System.arraycopy(thickness, 0, band.thickness, at, thickness.length);
-        System.arraycopy(random, 0, band.random, at, thickness.length);
-        System.arraycopy(systematic, 0, band.systematic, at, thickness.length);
-        System.arraycopy(margin, 0, band.margin, at, thickness.length);
+    /** State of a pixel, as far as it can be told from the row. */
+    State state(int x) {
+        return Float.isNaN(thickness[x]) ? pixels.stateWithoutReading(x) : State.READ;
     }
 }

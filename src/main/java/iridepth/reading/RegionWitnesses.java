@@ -1,5 +1,7 @@
 package iridepth.reading;
 
+import java.util.Arrays;
+
 /**
  * Lets the pixels of regions that nothing has settled yet tell of their other candidates: all pixels of small regions and every
  * sixteenth of large ones, and at borders those that would join the region there with another candidate.
@@ -9,70 +11,79 @@ final class RegionWitnesses {
 
     private final CurveIndex index;
     private final JumpPenalty penalty;
-    private final FilmRegion[] belowRegion;
-    private final int[] candidate;
-    private final int[] belowCandidate;
-    private PixelRow belowPixels;
-    private ReadRow below;
 
-    RegionWitnesses(CurveIndex index, JumpPenalty penalty, int width) {
+    RegionWitnesses(CurveIndex index, JumpPenalty penalty) {
         this.index = index;
         this.penalty = penalty;
-        this.belowRegion = new FilmRegion[width];
-        this.candidate = new int[width];
-        this.belowCandidate = new int[width];
     }
 
     /** Hears the next row upwards. */
-    void add(int y, PixelRow pixels, ReadRow row, FilmRegion[] here) {
-        int at = 0;
-        int open = 0;
-        for (int x = 0; x < here.length; x++) {
-            int count = Math.max(0, pixels.kind(x));
-            candidate[x] = at;
-            if (here[x] != null) {
-                if (count > 1) {
-                    FilmRegion its = here[x].root();
-                    if (!Regions.isSettled(its) && (its.pixels() < ALL || (x & 3) == 0 && (y & 3) == 0)) {
-                        its.evidence(index).add(row.thickness()[x], pixels, at, open, count);
-                    }
-                }
-                if (x > 0 && here[x - 1] != here[x]) {
-                    meet(pixels, row, here, x, pixels, row, here, x - 1, candidate);
-                }
-                if (below != null && belowRegion[x] != here[x]) {
-                    meet(pixels, row, here, x, belowPixels, below, belowRegion, x, belowCandidate);
+    void add(int y, RegionRow runs, ReadRow row, RegionRow runsBelow, ReadRow rowBelow) {
+        for (int i = 0; i < runs.runs(); i++) {
+            FilmRegion its = runs.root(i);
+            if (its != null && !its.isSettled()) {
+                hear(y, its, row, runs.from(i), runs.end()[i]);
+            }
+            if (i > 0) {
+                int x = runs.from(i);
+                meet(its, row, x, runs.root(i - 1), row, x - 1);
+            }
+        }
+        if (runsBelow != null) {
+            meetBelow(runs, row, runsBelow, rowBelow);
+        }
+    }
+
+    private void hear(int y, FilmRegion its, ReadRow row, int from, int to) {
+        PixelRow pixels = row.pixels();
+        for (int noted = firstNoted(pixels, from); noted < pixels.noted() && pixels.column()[noted] < to; noted++) {
+            int x = pixels.column()[noted];
+            if (pixels.count(noted) > 1 && (its.pixels() < ALL || (x & 3) == 0 && (y & 3) == 0)) {
+                its.evidence(index).add(row, noted);
+            }
+        }
+    }
+
+    private static int firstNoted(PixelRow pixels, int column) {
+        int found = Arrays.binarySearch(pixels.column(), column);
+        return found >= 0 ? found : -found - 1;
+    }
+
+    private void meetBelow(RegionRow runs, ReadRow row, RegionRow runsBelow, ReadRow rowBelow) {
+        int i = 0;
+        int j = 0;
+        while (i < runs.runs() && j < runsBelow.runs()) {
+            FilmRegion its = runs.root(i);
+            FilmRegion below = runsBelow.root(j);
+            int to = Math.min(runs.end()[i], runsBelow.end()[j]);
+            if (its != null && below != null && its != below && !(its.isSettled() && below.isSettled())) {
+                for (int x = Math.max(runs.from(i), runsBelow.from(j)); x < to; x++) {
+                    meet(its, row, x, below, rowBelow, x);
                 }
             }
-            open += count > 1 ? count : 0;
-            at += count;
+            i += runs.end()[i] == to ? 1 : 0;
+            j += runsBelow.end()[j] == to ? 1 : 0;
         }
-        System.arraycopy(here, 0, belowRegion, 0, here.length);
-        System.arraycopy(candidate, 0, belowCandidate, 0, here.length);
-        belowPixels = pixels;
-        below = row;
     }
 
     /** Two pixels side by side, perhaps of two regions. */
-    private void meet(PixelRow pixels, ReadRow row, FilmRegion[] here, int x, PixelRow otherPixels, ReadRow otherRow,
-                      FilmRegion[] there, int other, int[] otherCandidate) {
-        if (there[other] == null || there[other].root() == here[x].root()) {
-            return;
+    private void meet(FilmRegion its, ReadRow row, int x, FilmRegion other, ReadRow otherRow, int otherX) {
+        if (its != null && other != null && its != other) {
+            join(its, row, x, other, otherRow.thickness()[otherX]);
+            join(other, otherRow, otherX, its, row.thickness()[x]);
         }
-        join(here[x].root(), row.thickness()[x], pixels, candidate[x], pixels.kind(x), there[other].root(),
-                otherRow.thickness()[other]);
-        join(there[other].root(), otherRow.thickness()[other], otherPixels, otherCandidate[other], otherPixels.kind(other),
-                here[x].root(), row.thickness()[x]);
     }
 
     /** Notes if a pixel of an open region would join another region with another of its candidates. */
-    private void join(FilmRegion its, float chosen, PixelRow pixels, int from, int count, FilmRegion other, float thickness) {
-        if (count < 2 || Regions.isSettled(its)) {
+    private void join(FilmRegion its, ReadRow row, int x, FilmRegion other, float thickness) {
+        PixelRow pixels = row.pixels();
+        int noted = Arrays.binarySearch(pixels.column(), x);
+        if (noted < 0 || pixels.count(noted) < 2 || its.isSettled()) {
             return;
         }
-        for (int k = from; k < from + count; k++) {
+        for (int k = pixels.start()[noted]; k < pixels.start()[noted + 1]; k++) {
             if (penalty.links(thickness, pixels.thickness()[k], 1)) {
-                its.evidence(index).join(other, chosen, pixels.thickness()[k]);
+                its.evidence(index).join(other, row.thickness()[x], pixels.thickness()[k]);
             }
         }
     }

@@ -20,23 +20,18 @@ final class Regions {
     private static final int SPECK = 5;
     /** Rows after which no pixel can join a speck any more. */
     static final int SPECK_ROWS = SPECK * (Sweep.WIDEST_GAP + 1);
-    /** Pixels with one candidate only that settle a region's order, and their least share of its pixels. */
-    private static final int SETTLING = 20;
-    private static final double SETTLING_SHARE = 1e-3;
     /** Pixels of a border that must agree on another order. */
     private static final int AGREEING = 3;
 
     private final CurveIndex index;
     private final JumpPenalty penalty;
     private final int width;
-    private final FilmRegion[] below;
-    private final float[] belowThickness;
-    private final byte[] belowGap;
-    private final FilmRegion[] here;
-    private final RegionRuns runs;
+    private final RegionRow[] rows;
+    private final RegionLinks links;
     private final RegionWitnesses witnesses;
     private final List<FilmRegion> all = new ArrayList<>();
     private final boolean specks;
+    private ReadRow below;
 
     /** @param specks whether the readings of regions that are too small to have an order of their own are taken out */
     Regions(CurveIndex index, JumpPenalty penalty, int width, int height, boolean specks) {
@@ -44,66 +39,52 @@ final class Regions {
         this.index = index;
         this.penalty = penalty;
         this.width = width;
-        this.below = new FilmRegion[width];
-        this.belowThickness = new float[width];
-        this.belowGap = new byte[width];
-        this.here = new FilmRegion[width];
-        this.runs = new RegionRuns(width, height);
-        this.witnesses = new RegionWitnesses(index, penalty, width);
+        this.rows = new RegionRow[height];
+        this.links = new RegionLinks(penalty, width);
+        this.witnesses = new RegionWitnesses(index, penalty);
     }
 
     /** Takes the next row upwards. */
-    void add(int y, PixelRow pixels, ReadRow row) {
-        link(row);
-        for (int x : pixels.pinned()) {
-            if (here[x] != null) {
-                here[x].root().pin();
-            }
-        }
-        runs.add(y, here, row);
-        witnesses.add(y, pixels, row, here);
-    }
-
-    /** Finds the region of each pixel and leaves it in {@link #here}. */
-    private void link(ReadRow row) {
-        float[] thickness = row.thickness();
-        FilmRegion beside = null;
-        float besideThickness = 0;
-        int besideAt = -1;
-        for (int x = 0; x < width; x++) {
-            float d = thickness[x];
-            if (d != d) {
-                here[x] = null;
-                if (below[x] != null && ++belowGap[x] > Sweep.WIDEST_GAP) {
-                    below[x] = null;
+    void add(int y, ReadRow row) {
+        RegionRow runs = RegionRow.of(row, penalty);
+        RegionRow runsBelow = y + 1 < rows.length ? rows[y + 1] : null;
+        rows[y] = runs;
+        links.link(runs, row, runsBelow, below);
+        for (int i = 0; i < runs.runs(); i++) {
+            FilmRegion its = runs.root(i);
+            if (its != null) {
+                if (its.pixels() == 0) {
+                    all.add(its);
                 }
-                continue;
+                count(y, its, row, runs.from(i), runs.end()[i]);
             }
-            FilmRegion its = null;
-            if (beside != null && x - besideAt <= Sweep.WIDEST_GAP + 1 && penalty.links(besideThickness, d, x - besideAt)) {
-                its = beside;
-            }
-            FilmRegion lower = below[x];
-            if (lower != null && its != lower && penalty.links(belowThickness[x], d, belowGap[x] + 1)) {
-                its = its == null ? lower.root() : its.join(lower);
-            }
-            if (its == null) {
-                its = new FilmRegion();
-                all.add(its);
-            }
-            here[x] = its;
-            below[x] = its;
-            belowThickness[x] = d;
-            belowGap[x] = 0;
-            beside = its;
-            besideThickness = d;
-            besideAt = x;
         }
+        for (int x : row.pixels().pinned()) {
+            FilmRegion its = runs.root(runs.run(x));
+            if (its != null) {
+                its.pin();
+            }
+        }
+        witnesses.add(y, runs, row, runsBelow, below);
+        below = row;
     }
 
-    /** Whether a region's order is beyond doubt: it is known, or enough of its pixels leave no choice. */
-    static boolean isSettled(FilmRegion region) {
-        return region.pinned() || region.settled() >= SETTLING && region.settled() >= SETTLING_SHARE * region.pixels();
+    private void count(int y, FilmRegion its, ReadRow row, int from, int to) {
+        double sum = 0;
+        for (int x = from; x < to; x++) {
+            sum += row.thickness()[x];
+        }
+        its.add(y, from, to, sum);
+        its.meet((from > 0 ? 1 : 0) + (to < width ? 1 : 0));
+        if (!its.isSettled()) {
+            PixelRow pixels = row.pixels();
+            int settled = to - from;
+            int noted = Arrays.binarySearch(pixels.column(), from);
+            for (int i = noted < 0 ? -noted - 1 : noted; i < pixels.noted() && pixels.column()[i] < to; i++) {
+                settled -= pixels.count(i) > 1 ? 1 : 0;
+            }
+            its.settle(settled);
+        }
     }
 
     private boolean isSpeck(FilmRegion region) {
@@ -113,18 +94,14 @@ final class Regions {
     /** Takes the readings of specks out of a row that lies {@link #SPECK_ROWS} below the last one added, or of any at the end. */
     ReadRow clean(int y, ReadRow row) {
         ReadRow result = row;
-        int from = 0;
-        for (int i = 0; i < runs.count(y); i++) {
-            FilmRegion its = runs.region(y, i);
+        for (int i = 0; i < rows[y].runs(); i++) {
+            FilmRegion its = rows[y].root(i);
             if (its != null && isSpeck(its)) {
                 if (result == row) {
                     result = row.copy();
                 }
-                for (int x = from; x < runs.end(y, i); x++) {
-                    result.leave(x, State.OFF_CURVE);
-                }
+                Arrays.fill(result.thickness(), rows[y].from(i), rows[y].end()[i], Float.NaN);
             }
-            from = runs.end(y, i);
         }
         return result;
     }
@@ -132,10 +109,8 @@ final class Regions {
     /** The region of each pixel of a row, null where there is none. */
     FilmRegion[] of(int y) {
         FilmRegion[] of = new FilmRegion[width];
-        int from = 0;
-        for (int i = 0; i < runs.count(y); i++) {
-            Arrays.fill(of, from, runs.end(y, i), runs.region(y, i));
-            from = runs.end(y, i);
+        for (int i = 0; i < rows[y].runs(); i++) {
+            Arrays.fill(of, rows[y].from(i), rows[y].end()[i], rows[y].root(i));
         }
         return of;
     }
@@ -144,7 +119,7 @@ final class Regions {
     private Map<FilmRegion, List<OrderChain>> open() {
         Map<FilmRegion, List<OrderChain>> open = new LinkedHashMap<>();
         for (FilmRegion its : all) {
-            if (its.root() == its && !isSpeck(its) && !isSettled(its) && its.hasEvidence()) {
+            if (its.root() == its && !isSpeck(its) && !its.isSettled() && its.hasEvidence()) {
                 List<OrderChain> alternatives = its.evidence(index).alternatives(its.pixels());
                 if (!alternatives.isEmpty()) {
                     open.put(its, alternatives);
@@ -166,12 +141,12 @@ final class Regions {
         List<Move> moves = new ArrayList<>();
         open().forEach((region, alternatives) -> alternatives.forEach(chain -> region.evidence(index).joined(chain)
                 .forEach((other, count) -> {
-                    boolean firm = isSettled(other) || other.pixels() > region.pixels();
+                    boolean firm = other.isSettled() || other.pixels() > region.pixels();
                     if (other != region && firm && count >= AGREEING) {
                         moves.add(new Move(region, chain, other, count));
                     }
                 })));
-        moves.sort(Comparator.comparing((Move move) -> isSettled(move.to())).thenComparingInt(Move::joined).reversed());
+        moves.sort(Comparator.comparing((Move move) -> move.to().isSettled()).thenComparingInt(Move::joined).reversed());
         Map<FilmRegion, OrderChain> chains = new HashMap<>();
         Set<FilmRegion> stay = new HashSet<>();
         for (Move move : moves) {
@@ -198,13 +173,12 @@ final class Regions {
 
     /** The states of a row, after {@link #judge}. */
     void states(int y, byte[] into, int at) {
-        int from = 0;
-        for (int i = 0; i < runs.count(y); i++) {
-            FilmRegion its = runs.region(y, i);
-            State code = its == null ? runs.state(y, i) : isSpeck(its) ? State.OFF_CURVE
-                    : its.doubtful() ? State.ORDER_DOUBTFUL : State.READ;
-            Arrays.fill(into, at + from, at + runs.end(y, i), code.code());
-            from = runs.end(y, i);
+        RegionRow runs = rows[y];
+        for (int i = 0; i < runs.runs(); i++) {
+            FilmRegion its = runs.root(i);
+            byte code = its == null ? runs.state()[i] : isSpeck(its) ? State.OFF_CURVE.code()
+                    : its.doubtful() ? State.ORDER_DOUBTFUL.code() : State.READ.code();
+            Arrays.fill(into, at + runs.from(i), at + runs.end()[i], code);
         }
     }
 }

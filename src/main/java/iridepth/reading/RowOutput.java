@@ -1,43 +1,64 @@
 package iridepth.reading;
 
-import java.util.ArrayList;
-import java.util.List;
-
 /** Gathers rows into bands for a sink. */
 final class RowOutput {
     private static final int STATES_AT_ONCE = 1 << 20;
 
     private final ReadingSink sink;
+    private final CurveIndex index;
     private final int width;
-    private final List<ReadRow> rows = new ArrayList<>();
+    private float[][] planes = new float[4][0];
     private int top;
-    private ReadRow band = ReadRow.of(0);
+    private int count;
 
-    RowOutput(ReadingSink sink, int width) {
+    RowOutput(ReadingSink sink, CurveIndex index, int width) {
         this.sink = sink;
+        this.index = index;
         this.width = width;
     }
 
-    /** Adds the row above those that have been added. */
-    void add(int y, ReadRow row) {
-        rows.add(row);
-        top = y;
+    /** Begins a band of rows. */
+    void begin(int itsTop, int rows) {
+        top = itsTop;
+        count = rows;
+        if (planes[0].length != rows * width) {
+            planes = new float[4][rows * width];
+        }
     }
 
-    /** Hands the rows on. */
+    /** Puts a row of the band in its place; rows may come from several threads. */
+    void put(int y, ReadRow row) {
+        int at = (y - top) * width;
+        float[] thickness = row.thickness();
+        System.arraycopy(thickness, 0, planes[0], at, width);
+        for (int x = 0; x < width; x++) {
+            float d = thickness[x];
+            if (Float.isNaN(d)) {
+                planes[1][at + x] = Float.NaN;
+                planes[2][at + x] = Float.NaN;
+                planes[3][at + x] = Float.NaN;
+            } else {
+                TangentTable table = index.tables()[row.pixels().levelAt(x)];
+                int k = table.nearest(d);
+                planes[1][at + x] = table.random(k);
+                planes[2][at + x] = table.systematic(k);
+                planes[3][at + x] = Float.POSITIVE_INFINITY;
+            }
+        }
+        for (int noted = 0; noted < row.pixels().noted(); noted++) {
+            int x = row.pixels().column()[noted];
+            if (!Float.isNaN(thickness[x])) {
+                planes[3][at + x] = row.margin()[noted];
+            }
+        }
+    }
+
+    /** Hands the band on. */
     void flush() {
-        if (rows.isEmpty()) {
-            return;
+        if (count > 0) {
+            sink.readings(top, planes[0], planes[1], planes[2], planes[3]);
         }
-        int count = rows.size();
-        if (band.thickness().length != count * width) {
-            band = ReadRow.of(count * width);
-        }
-        for (int i = 0; i < count; i++) {
-            rows.get(count - 1 - i).copyTo(band, i * width);
-        }
-        rows.clear();
-        sink.readings(top, band.thickness(), band.random(), band.systematic(), band.margin());
+        count = 0;
     }
 
     /** Hands on the states of all rows. */

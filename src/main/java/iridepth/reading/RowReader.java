@@ -19,35 +19,42 @@ final class RowReader {
     private final double tolerance;
     private final CurveIndex index;
     private final boolean several;
+    private final boolean notesAll;
     private final GridSearch search;
     private final Signal line;
     private final CandidateRow found;
     private final byte[] kind;
     private final byte[] level;
+    private final float[] single;
+    private final int[] column;
+    private final int[] start;
+    private final int[] pinned;
     private final boolean[] out;
-    private float[] cost;
-    private int open;
-    private final int[] columns;
-    private int pinned;
+    private int notedCount;
+    private int pinnedCount;
 
     /**
      * @param several whether to keep all candidates of a pixel, for the choice of order, or the likeliest alone
      */
     RowReader(SignalSource photo, List<Region> excluded, Pins pins, CurveIndex index, boolean several) {
+        this.several = several;
         this.photo = photo;
         this.excluded = excluded;
         this.pins = pins;
         this.tolerance = JumpPenalty.fringe(index) / 4;
         this.index = index;
-        this.several = several;
+        this.notesAll = index.turnsBack();
         this.search = new GridSearch(index);
         this.line = Signal.row(photo.info());
-        this.found = new CandidateRow(line.width());
-        this.kind = new byte[line.width()];
-        this.level = new byte[line.width()];
-        this.out = new boolean[line.width()];
-        this.columns = new int[line.width()];
-        this.cost = new float[line.width() + CandidateRow.MOST];
+        int width = line.width();
+        this.found = new CandidateRow(width);
+        this.kind = new byte[width];
+        this.level = new byte[width];
+        this.single = new float[width];
+        this.column = new int[width];
+        this.start = new int[width + 1];
+        this.pinned = new int[width];
+        this.out = new boolean[width];
     }
 
     /**
@@ -60,54 +67,76 @@ final class RowReader {
     PixelRow read(Frame counts, int row, int y) {
         photo.convert(counts, row, y, line);
         found.clear();
-        open = 0;
+        search.begin();
+        notedCount = 0;
+        pinnedCount = 0;
         boolean[] excludedHere = excludedColumns(y);
-        boolean plain = isPlain(line.limit());
         boolean pinnedHere = pins.touches(y);
-        pinned = 0;
-        for (int x = 0; x < kind.length; x++) {
-            int itsLevel = index.levels().level(line.light()[x]);
-            level[x] = (byte) itsLevel;
-            if (excludedHere != null && excludedHere[x]) {
-                kind[x] = (byte) ~State.EXCLUDED.code();
-            } else if (plain) {
-                search.find(line.value(), x, itsLevel, found);
-                close(x, pinnedHere ? pins.at(x, y) : Double.NaN);
-            } else if (isClipped(x)) {
-                kind[x] = (byte) ~State.CLIPPED.code();
-            } else {
-                search.find(line.value(), line.limit(), x, itsLevel, found);
-                close(x, pinnedHere ? pins.at(x, y) : Double.NaN);
+        if (index.levels().count() > 1) {
+            for (int x = 0; x < level.length; x++) {
+                level[x] = (byte) index.levels().level(line.light()[x]);
             }
         }
+        if (excludedHere == null && !pinnedHere && isPlain(line.limit())) {
+            for (int x = 0; x < kind.length; x++) {
+                search.find(line.value(), x, level[x], found);
+                close(x);
+            }
+        } else {
+            for (int x = 0; x < kind.length; x++) {
+                read(x, excludedHere != null && excludedHere[x], pinnedHere ? pins.at(x, y) : Double.NaN);
+            }
+        }
+        start[notedCount] = found.size();
         byte[] levels = index.levels().count() == 1 ? new byte[0] : level.clone();
-        return new PixelRow(kind.clone(), levels, found.thicknesses(), Arrays.copyOf(cost, open),
-                Arrays.copyOf(columns, pinned));
+        return new PixelRow(kind.clone(), levels, single.clone(), Arrays.copyOf(column, notedCount),
+                Arrays.copyOf(start, notedCount + 1), found.thicknesses(), found.costs(), Arrays.copyOf(pinned, pinnedCount));
     }
 
-    /** Ends a pixel: keeps the costs of its candidates if there are several, and judges it if there is none. */
-    private void close(int x, double known) {
-        if (known >= 0 && found.keepNearest(known, tolerance)) {
-            columns[pinned++] = x;
+    private void read(int x, boolean isExcluded, double known) {
+        if (isExcluded) {
+            leave(x, State.EXCLUDED);
+        } else if (isClipped(x)) {
+            leave(x, State.CLIPPED);
+        } else {
+            search.find(line.value(), line.limit(), x, level[x], found);
+            if (known >= 0 && found.keepNearest(known, tolerance)) {
+                pinned[pinnedCount++] = x;
+            }
+            close(x);
         }
-        if (!found.explained()) {
-            found.withdraw();
-            kind[x] = (byte) ~(isDark(x) ? State.DARK : State.OFF_CURVE).code();
-            return;
-        }
-        if (!several) {
+    }
+
+    /** Ends a pixel that has been searched: keeps its candidate or notes them, or judges it if there is none. */
+    private void close(int x) {
+        if (!several && found.explained()) {
             found.keepLikeliest();
         }
-        int count = found.close();
-        kind[x] = (byte) count;
-        if (count > 1) {
-            if (open + count > cost.length) {
-                cost = Arrays.copyOf(cost, 2 * cost.length);
-            }
-            for (int k = found.size() - count; k < found.size(); k++) {
-                cost[open++] = found.cost(k);
-            }
+        int count = found.pending();
+        if (!found.explained()) {
+            found.withdraw();
+            leave(x, isDark(x) ? State.DARK : State.OFF_CURVE);
+            return;
         }
+        kind[x] = (byte) count;
+        single[x] = count == 1 ? found.thickness(found.size() - 1) : Float.NaN;
+        if (count > 1 || notesAll) {
+            note(x, found.size() - count);
+            found.close();
+        } else {
+            found.withdraw();
+        }
+    }
+
+    private void leave(int x, State why) {
+        kind[x] = (byte) ~why.code();
+        single[x] = Float.NaN;
+        note(x, found.size());
+    }
+
+    private void note(int x, int candidates) {
+        column[notedCount] = x;
+        start[notedCount++] = candidates;
     }
 
     private boolean[] excludedColumns(int y) {

@@ -18,39 +18,27 @@ final class SlopeSweep extends Sweep {
     private final TangentTable table;
     private final SlopeFilter filter;
 
-    SlopeSweep(CurveIndex index, int width, boolean forward) {
-        super(width, FIELDS, forward);
+    SlopeSweep(CurveIndex index, boolean forward) {
+        super(FIELDS, forward);
         this.table = index.middle();
         this.filter = new SlopeFilter(index);
     }
 
     @Override
-    void weigh(PixelRow row, int candidate, int count, int open, int i, float[] message) {
+    void weigh(PixelRow row, int noted, float[] message) {
         SweepRow here = here();
-        int at = at();
-        float fromBeside = weightBeside();
-        float fromBefore = weightBefore();
+        int at = here.next();
+        int from = row.start()[noted];
+        int count = row.count(noted);
         float mean = mean();
         float authority = authority();
         for (int k = 0; k < count; k++) {
-            float d = row.thickness()[candidate + k];
+            float d = row.thickness()[from + k];
             float variance = table.spread(table.nearest(d));
-            float said = 0;
-            if (fromBeside > 0) {
-                said += fromBeside * hear(d, variance, here, besideAt(), here.count(i - 1), here.gap(i - 1) + 1, ALONG, at + k);
-            } else {
-                filter.begin(here.value, (at + k) * FIELDS + ALONG, d, variance);
-            }
-            if (fromBefore > 0) {
-                said += fromBefore * hear(d, variance, before(), beforeAt(), before().count(i), before().gap(i) + 1, DOWN, at + k);
-            } else {
-                filter.begin(here.value, (at + k) * FIELDS + DOWN, d, variance);
-            }
-            said *= mean;
-            if (count > 1) {
-                message[open + k] = said * authority;
-            }
-            here.loss[at + k] = (count > 1 ? row.cost()[open + k] : 0) + said;
+            float said = mean * (beside().weight() * hear(d, variance, beside(), ALONG, at + k)
+                    + previous().weight() * hear(d, variance, previous(), DOWN, at + k));
+            message[from + k] = said * authority;
+            here.loss[at + k] = row.cost()[from + k] + said;
         }
         normalise(here.loss, at, count);
     }
@@ -61,22 +49,26 @@ final class SlopeSweep extends Sweep {
      *
      * @return what the neighbour says against this thickness
      */
-    private float hear(float d, float variance, SweepRow row, int at, int count, float steps, int which, int to) {
+    private float hear(float d, float variance, Neighbour neighbour, int which, int to) {
+        float[] state = here().value;
         float least = TRUNCATION;
         int survivor = -1;
-        for (int j = at; j < at + count; j++) {
-            float loss = row.loss[j] + filter.surprise(row.value, j * FIELDS + which, steps, d, variance);
-            if (loss < least) {
-                least = loss;
-                survivor = j;
+        if (neighbour.weight() > 0) {
+            SweepRow row = neighbour.row();
+            int end = neighbour.start() + neighbour.count();
+            for (int j = neighbour.start(); j < end; j++) {
+                float loss = row.loss[j] + filter.surprise(row.value, j * FIELDS + which, neighbour.steps(), d, variance);
+                if (loss < least) {
+                    least = loss;
+                    survivor = j;
+                }
+            }
+            if (survivor >= 0) {
+                filter.follow(row.value, survivor * FIELDS + which, neighbour.steps(), d, variance, state, to * FIELDS + which);
+                return least;
             }
         }
-        float[] state = here().value;
-        if (survivor < 0) {
-            filter.begin(state, to * FIELDS + which, d, variance);
-        } else {
-            filter.follow(row.value, survivor * FIELDS + which, steps, d, variance, state, to * FIELDS + which);
-        }
+        filter.begin(state, to * FIELDS + which, d, variance);
         return least;
     }
 }

@@ -27,24 +27,88 @@ abstract class Sweep {
     private final boolean forward;
     private SweepRow before;
     private SweepRow here;
-    /** Where the entries of the neighbours begin that the pixel in work hears. */
-    private int besideAt;
-    private int beforeAt;
-    /** Where those of the pixel in work begin. */
-    private int at;
-    private float beside;
-    private float previous;
-    private float nearness;
+    private final Neighbour beside = new Neighbour();
+    private final Neighbour previous = new Neighbour();
+
+    /** A pixel behind the one in work: its entries, or its one thickness where it is not noted. */
+    static final class Neighbour {
+        private SweepRow row;
+        private int noted;
+        private int count;
+        private int gap;
+        private float single;
+        private float weight;
+
+        /** There is none. */
+        private void none() {
+            count = 0;
+            weight = 0;
+        }
+
+        /** One that is not noted. */
+        private void single(float thickness) {
+            row = null;
+            count = 1;
+            gap = 0;
+            single = thickness;
+            weight = 1;
+        }
+
+        private void noted(SweepRow itsRow, int itsIndex) {
+            row = itsRow;
+            noted = itsIndex;
+            count = itsRow.count(itsIndex);
+            gap = itsRow.gap(itsIndex);
+            weight = count == 0 ? 0 : nearness() * Math.max(LEAST_AUTHORITY, itsRow.authority(itsIndex));
+        }
+
+        private float nearness() {
+            return count == 0 ? 0 : 1 - (float) gap / (WIDEST_GAP + 1);
+        }
+
+        /** What it weighs, 0 where there is none. */
+        float weight() {
+            return weight;
+        }
+
+        /** Whether it is a pixel with one thickness only. */
+        boolean isSingle() {
+            return row == null;
+        }
+
+        float thickness() {
+            return single;
+        }
+
+        /** The row of its entries. */
+        SweepRow row() {
+            return row;
+        }
+
+        /** Where its entries begin. */
+        int start() {
+            return row.start(noted);
+        }
+
+        /** How many they are. */
+        int count() {
+            return count;
+        }
+
+        /** Pixels from where its entries come to the one in work. */
+        int steps() {
+            return gap + 1;
+        }
+    }
 
     /**
-     * @param width   pixels a row
      * @param fields  values that an entry carries
      * @param forward whether it goes from left to right in each row
      */
-    Sweep(int width, int fields, boolean forward) {
+    Sweep(int fields, boolean forward) {
         this.forward = forward;
-        this.before = new SweepRow(width, fields);
-        this.here = new SweepRow(width, fields);
+        this.before = new SweepRow(fields);
+        this.here = new SweepRow(fields);
     }
 
     /** What it carries from the last row. */
@@ -61,35 +125,43 @@ abstract class Sweep {
      * Takes the next row.
      *
      * @param row     its pixels
-     * @param message receives, in the places of {@link PixelRow#cost}, what the neighbours behind say against each candidate
+     * @param message receives, in the places of its candidates, what the neighbours behind say against each
      */
     final void advance(PixelRow row, float[] message) {
-        here.clear();
-        int width = row.width();
-        int candidate = forward ? 0 : row.thickness().length;
-        int open = forward ? 0 : row.cost().length;
-        at = 0;
-        besideAt = 0;
-        beforeAt = 0;
-        for (int i = 0; i < width; i++) {
-            int kind = row.kind(forward ? i : width - 1 - i);
-            int entries = Math.max(kind, 0);
-            int priced = kind > 1 ? kind : 0;
-            candidate -= forward ? 0 : entries;
-            open -= forward ? 0 : priced;
-            if (kind > 0) {
-                here.reserve(kind);
-                hear(i);
-                weigh(row, candidate, kind, open, i, message);
-                here.close(i, kind, 0, kind == 1 ? 1 : FADING * Math.max(beside, previous));
-            } else {
-                pass(i);
+        here.begin(row);
+        int noted = row.noted();
+        int[] columns = row.column();
+        int[] above = before.pixels() == null ? new int[0] : before.pixels().column();
+        int step = forward ? 1 : -1;
+        int a = forward ? 0 : above.length - 1;
+        int past = -1;
+        for (int e = forward ? 0 : noted - 1; e >= 0 && e < noted; e += step) {
+            int x = columns[e];
+            while (a >= 0 && a < above.length && (forward ? above[a] < x : above[a] > x)) {
+                a += step;
             }
-            candidate += forward ? entries : 0;
-            open += forward ? priced : 0;
-            besideAt = at;
-            at += here.count(i);
-            beforeAt += before.count(i);
+            if (past >= 0 && columns[past] == x - step) {
+                beside.noted(here, past);
+            } else if (x - step >= 0 && x - step < row.width()) {
+                beside.single(row.single()[x - step]);
+            } else {
+                beside.none();
+            }
+            if (a >= 0 && a < above.length && above[a] == x) {
+                previous.noted(before, a);
+            } else if (before.pixels() != null) {
+                previous.single(before.pixels().single()[x]);
+            } else {
+                previous.none();
+            }
+            if (row.count(e) > 0) {
+                here.reserve(row.count(e));
+                weigh(row, e, message);
+                here.close(e, row.count(e), row.count(e) == 1 ? 1 : FADING * Math.max(beside.weight, previous.weight));
+            } else {
+                pass(e);
+            }
+            past = e;
         }
         SweepRow spare = before;
         before = here;
@@ -97,29 +169,24 @@ abstract class Sweep {
     }
 
     /**
-     * A pixel with candidates: hears its neighbours, tells {@code message} if its order is open, and puts its entries in place.
+     * A noted pixel with candidates: hears its neighbours, tells {@code message}, and puts its entries in place.
      *
-     * @param candidate where its candidates begin among the row's
-     * @param count     how many it has
-     * @param open      where their costs begin, if there are several
+     * @param noted   which of the row's noted pixels
+     * @param message receives what the neighbours say
      */
-    abstract void weigh(PixelRow row, int candidate, int count, int open, int i, float[] message);
+    abstract void weigh(PixelRow row, int noted, float[] message);
 
     /** A pixel that says nothing carries on what reaches it over the smaller gap. */
-    private void pass(int i) {
-        boolean hasBeside = i > 0 && here.count(i - 1) > 0;
-        boolean hasBefore = before.count(i) > 0;
-        if (!hasBeside && !hasBefore) {
-            here.close(i, 0, 0, 0);
-            return;
+    private void pass(int noted) {
+        boolean takeBeside = beside.count > 0 && (previous.count == 0 || beside.gap <= previous.gap);
+        Neighbour from = takeBeside ? beside : previous;
+        if (from.count == 0 || from.gap >= WIDEST_GAP) {
+            here.leave(noted);
+        } else if (from.isSingle()) {
+            here.carry(from.single, noted);
+        } else {
+            here.carry(from.row, from.noted, noted, from.gap + 1);
         }
-        boolean takeBeside = hasBeside && (!hasBefore || here.gap(i - 1) <= before.gap(i));
-        SweepRow from = takeBeside ? here : before;
-        int index = takeBeside ? i - 1 : i;
-        int gap = from.gap(index) + 1;
-        int entries = gap > WIDEST_GAP ? 0 : from.count(index);
-        here.reserve(entries);
-        here.carry(from, takeBeside ? besideAt : beforeAt, i, entries, gap, from.authority(index));
     }
 
     /** The row in work. */
@@ -127,57 +194,26 @@ abstract class Sweep {
         return here;
     }
 
-    /** The row before. */
-    final SweepRow before() {
-        return before;
-    }
-
-    /** Where the entries of the pixel in work begin. */
-    final int at() {
-        return at;
-    }
-
-    /** Where the entries of the pixel beside begin. */
-    final int besideAt() {
-        return besideAt;
-    }
-
-    /** Where the entries of the pixel in the row before begin. */
-    final int beforeAt() {
-        return beforeAt;
-    }
-
-    /** Works out what the two neighbours behind weigh. */
-    private void hear(int i) {
-        float besideGap = i > 0 && here.count(i - 1) > 0 ? weight(here.gap(i - 1)) : 0;
-        float beforeGap = before.count(i) > 0 ? weight(before.gap(i)) : 0;
-        beside = besideGap == 0 ? 0 : besideGap * Math.max(LEAST_AUTHORITY, here.authority(i - 1));
-        previous = beforeGap == 0 ? 0 : beforeGap * Math.max(LEAST_AUTHORITY, before.authority(i));
-        nearness = Math.max(besideGap, beforeGap);
-    }
-
-    private static float weight(int gap) {
-        return 1 - (float) gap / (WIDEST_GAP + 1);
-    }
-
-    /** What the pixel beside weighs, 0 where there is none. */
-    final float weightBeside() {
+    /** The pixel beside. */
+    final Neighbour beside() {
         return beside;
     }
 
-    /** What the pixel in the row before weighs, 0 where there is none. */
-    final float weightBefore() {
+    /** The pixel in the row before. */
+    final Neighbour previous() {
         return previous;
     }
 
     /** What makes the weighted sum of two messages their mean, less where both came over a gap. */
     final float mean() {
-        return beside + previous > 0 ? nearness / (beside + previous) : 0;
+        float sum = beside.weight + previous.weight;
+        return sum > 0 ? Math.max(beside.nearness(), previous.nearness()) / sum : 0;
     }
 
     /** What makes that mean what is to be said to the pixel itself: less where it rests on little. */
     final float authority() {
-        return nearness > 0 ? Math.max(beside, previous) / nearness : 0;
+        float nearness = Math.max(beside.nearness(), previous.nearness());
+        return nearness > 0 ? Math.max(beside.weight, previous.weight) / nearness : 0;
     }
 
     /** Takes the least of the losses of a pixel from all of them. */

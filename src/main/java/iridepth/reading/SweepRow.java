@@ -3,36 +3,37 @@ package iridepth.reading;
 import java.util.Arrays;
 
 /**
- * What a sweep carries along from the pixels of a row, in the order of the sweep: for each pixel a number of entries, each with
- * what it has lost on the way, the least loss 0, and a few values more. A pixel that says nothing itself carries what reached
- * it, with the distance to where that came from.
+ * What a sweep carries along from the noted pixels of a row: for each a number of entries, each with what it has lost on the
+ * way, the least loss 0, and a few values more. A pixel without candidates carries what reached it, with the distance to where
+ * that came from. Pixels that are not noted have but one entry, their thickness, and have lost nothing.
  */
 final class SweepRow {
     private final int fields;
-    private final byte[] count;
-    private final byte[] gap;
-    private final float[] authority;
+    private PixelRow pixels;
+    /** Where the entries of each noted pixel begin, and how many it has. */
+    private int[] start = new int[0];
+    private int[] count = new int[0];
+    private byte[] gap = new byte[0];
+    private float[] authority = new float[0];
     /** Losses of all entries. */
-    float[] loss;
-    /** The values of all entries, {@link #fields} each. */
-    float[] value;
+    float[] loss = new float[0];
+    /** The values of all entries, some to each. */
+    float[] value = new float[0];
     private int size;
 
     /** @param fields values of an entry besides its loss */
-    SweepRow(int width, int fields) {
+    SweepRow(int fields) {
         this.fields = fields;
-        this.count = new byte[width];
-        this.gap = new byte[width];
-        this.authority = new float[width];
-        this.loss = new float[2 * width];
-        this.value = new float[2 * width * fields];
     }
 
     private SweepRow(SweepRow other) {
+        int noted = other.pixels == null ? 0 : other.pixels.noted();
         this.fields = other.fields;
-        this.count = other.count.clone();
-        this.gap = other.gap.clone();
-        this.authority = other.authority.clone();
+        this.pixels = other.pixels;
+        this.start = Arrays.copyOf(other.start, noted);
+        this.count = Arrays.copyOf(other.count, noted);
+        this.gap = Arrays.copyOf(other.gap, noted);
+        this.authority = Arrays.copyOf(other.authority, noted);
         this.loss = Arrays.copyOf(other.loss, other.size);
         this.value = Arrays.copyOf(other.value, other.size * fields);
         this.size = other.size;
@@ -43,11 +44,26 @@ final class SweepRow {
         return new SweepRow(this);
     }
 
-    void clear() {
+    /** Begins with the pixels of a row. */
+    void begin(PixelRow row) {
+        pixels = row;
         size = 0;
+        int noted = row.noted();
+        if (count.length < noted) {
+            start = new int[2 * noted];
+            count = new int[2 * noted];
+            gap = new byte[2 * noted];
+            authority = new float[2 * noted];
+        }
+        reserve(row.cost().length);
     }
 
-    /** Makes room for the entries of the next pixel. */
+    /** The row's pixels, null before the first row. */
+    PixelRow pixels() {
+        return pixels;
+    }
+
+    /** Makes room for more entries. */
     void reserve(int entries) {
         if (size + entries > loss.length) {
             int length = Math.max(size + entries, 2 * loss.length);
@@ -56,33 +72,63 @@ final class SweepRow {
         }
     }
 
-    /** Ends a pixel whose entries have been put in place. */
-    void close(int i, int entries, int distance, float itsAuthority) {
-        count[i] = (byte) entries;
-        gap[i] = (byte) distance;
-        authority[i] = itsAuthority;
+    /** Where the entries of the next pixel will begin. */
+    int next() {
+        return size;
+    }
+
+    /** Ends a noted pixel whose entries have been put in place. */
+    void close(int noted, int entries, float itsAuthority) {
+        start[noted] = size;
+        count[noted] = entries;
+        gap[noted] = 0;
+        authority[noted] = itsAuthority;
         size += entries;
     }
 
-    /** Copies the entries of a pixel, which begin at a place in another row or this, to the next pixel. */
-    void carry(SweepRow from, int at, int i, int entries, int distance, float itsAuthority) {
-        System.arraycopy(from.loss, at, loss, size, entries);
-        System.arraycopy(from.value, at * fields, value, size * fields, entries * fields);
-        close(i, entries, distance, itsAuthority);
+    /** A noted pixel to which nothing comes. */
+    void leave(int noted) {
+        start[noted] = size;
+        count[noted] = 0;
+        gap[noted] = 0;
     }
 
-    /** Number of entries of a pixel. */
-    int count(int i) {
-        return count[i];
+    /** Lets what reached a noted pixel in a row, this or another, pass on to the next. */
+    void carry(SweepRow from, int index, int noted, int distance) {
+        int entries = from.count[index];
+        reserve(entries);
+        System.arraycopy(from.loss, from.start[index], loss, size, entries);
+        System.arraycopy(from.value, from.start[index] * fields, value, size * fields, entries * fields);
+        close(noted, entries, from.authority[index]);
+        gap[noted] = (byte) distance;
     }
 
-    /** How many pixels ago the entries of a pixel come from; 0 for its own. */
-    int gap(int i) {
-        return gap[i];
+    /** Lets the one thickness of a pixel that is not noted pass on to the next. */
+    void carry(float thickness, int noted) {
+        reserve(1);
+        loss[size] = 0;
+        value[size * fields] = thickness;
+        close(noted, 1, 1);
+        gap[noted] = 1;
     }
 
-    /** How far what a pixel says rests on pixels that leave no choice, up to 1. */
-    float authority(int i) {
-        return authority[i];
+    /** Where the entries of a noted pixel begin. */
+    int start(int noted) {
+        return start[noted];
+    }
+
+    /** Number of entries of a noted pixel. */
+    int count(int noted) {
+        return count[noted];
+    }
+
+    /** How many pixels ago the entries of a noted pixel come from; 0 for its own. */
+    int gap(int noted) {
+        return gap[noted];
+    }
+
+    /** How far what a noted pixel says rests on pixels that leave no choice, up to 1. */
+    float authority(int noted) {
+        return authority[noted];
     }
 }

@@ -2,11 +2,15 @@ package iridepth.reading;
 
 /** Chi-square of one pixel along the curve, by the tangents of its samples. Serves one thread. */
 abstract class TangentProbe {
-    private static final int HOPS = 8;
+    /** Most steps along a run. */
+    protected static final int HOPS = 8;
 
     private TangentTable table;
     /** The samples of the table. */
     protected float[] samples;
+    /** Where {@link #settle} ended. */
+    protected int sample;
+    protected float offset;
 
     /** Takes a pixel whose values begin at a place. */
     final void load(TangentTable itsTable, float[] values, int at) {
@@ -27,21 +31,26 @@ abstract class TangentProbe {
     /** Chi-square t samples beyond a sample along its tangent. */
     abstract float chiSquare(int k, float t);
 
-    /** The sample of a straight run that is nearest, by steps from its middle. */
-    final int nearest(int first, int last) {
-        int k = (first + last) >>> 1;
-        for (int i = 0; i < HOPS; i++) {
-            int next = step(k, distance(k), first, last);
-            if (next == k) {
-                break;
-            }
-            k = next;
-        }
-        return k;
+    /**
+     * Goes along a straight run to the sample that is nearest, by steps.
+     *
+     * @param start sample of the run from which to start
+     * @return chi-square at the nearest thickness along its tangent
+     */
+    abstract float settle(int first, int last, int start);
+
+    /** The sample found last by {@link #settle}. */
+    final int sample() {
+        return sample;
+    }
+
+    /** How many samples beyond it its tangent comes nearest. */
+    final float offset() {
+        return offset;
     }
 
     /** The sample nearest to t samples beyond k, inside a run. */
-    private static int step(int k, float t, int first, int last) {
+    protected static int step(int k, float t, int first, int last) {
         float place = k + t + 0.5f;
         return place < first ? first : place > last ? last : (int) place;
     }

@@ -33,4 +33,25 @@ final class ThreeChannelProbe extends TangentProbe {
         return r0 * (r0 * s[at + 6] + r1 * s[at + 7] + r2 * s[at + 8]) + r1 * (r1 * s[at + 9] + r2 * s[at + 10])
                 + r2 * r2 * s[at + 11] + beside * beside * s[at + 12];
     }
+
+    @Override
+    float settle(int first, int last, int start) {
+        float[] s = samples;
+        int k = start;
+        for (int i = 0; ; i++) {
+            int at = k * STRIDE;
+            float r0 = v0 - s[at];
+            float r1 = v1 - s[at + 1];
+            float r2 = v2 - s[at + 2];
+            float t = r0 * s[at + 3] + r1 * s[at + 4] + r2 * s[at + 5];
+            int next = step(k, t, first, last);
+            if (next == k || i == HOPS) {
+                sample = k;
+                offset = t;
+                return r0 * (r0 * s[at + 6] + r1 * s[at + 7] + r2 * s[at + 8]) + r1 * (r1 * s[at + 9] + r2 * s[at + 10])
+                        + r2 * r2 * s[at + 11];
+            }
+            k = next;
+        }
+    }
 }

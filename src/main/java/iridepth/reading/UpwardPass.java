@@ -20,7 +20,7 @@ final class UpwardPass {
     private final OrderDecision decision;
     private final Consensus consensus;
     private final Regions regions;
-    private final RowOutput output;
+    private final RowOutput[] outputs;
     private final List<Stage> stages = new ArrayList<>();
     private final PixelRow[] pixels;
     /** The topmost row that has been brought back, gathered and handed on. */
@@ -61,7 +61,7 @@ final class UpwardPass {
         this.decision = new OrderDecision(index, penalty, width);
         this.consensus = new Consensus(index, penalty);
         this.regions = new Regions(index, penalty, width, height, specks);
-        this.output = new RowOutput(sink, width);
+        this.outputs = new RowOutput[] {new RowOutput(sink, index, width), new RowOutput(sink, index, width)};
         this.pixels = new PixelRow[height];
         this.present = height;
         this.gathered = height;
@@ -69,14 +69,14 @@ final class UpwardPass {
         stages.add(new Stage(height, 0, (y, none) -> decision.decide(y, pixels[y])));
         addLooks(LOOKS);
         for (OrderCorrection correction : corrections) {
-            stages.add(new Stage(height, 0, (y, before) -> correction.correct(y, pixels[y], before[y], this.index)));
+            stages.add(new Stage(height, 0, (y, before) -> correction.correct(y, before[y], this.index)));
             addLooks(LOOKS_AFTER_CORRECTION);
         }
     }
 
     private void addLooks(int count) {
         for (int i = 0; i < count; i++) {
-            stages.add(new Stage(height, Consensus.RADIUS, (y, before) -> consensus.look(pixels[y], window(before, y))));
+            stages.add(new Stage(height, Consensus.RADIUS, (y, before) -> consensus.look(window(before, y))));
         }
     }
 
@@ -117,6 +117,7 @@ final class UpwardPass {
             }
             progress.accept((long) (height - present) * width);
         }
+        outputs[0].flush();
     }
 
     /** The regions that have been gathered. */
@@ -127,7 +128,7 @@ final class UpwardPass {
     /** Judges the regions and hands on the states of all pixels. */
     List<DoubtfulRegion> judge() {
         List<DoubtfulRegion> doubtful = regions.judge();
-        output.states(regions, height);
+        outputs[0].states(regions, height);
         return doubtful;
     }
 
@@ -167,27 +168,31 @@ final class UpwardPass {
         int bottom = gathered;
         crew.add(() -> {
             for (int y = bottom - 1; y >= top; y--) {
-                regions.add(y, pixels[y], last().rows[y]);
+                regions.add(y, last().rows[y]);
             }
         });
         return top;
     }
 
+    /** Hands on the rows that were put in place the last time, and puts the next in place. */
     private int handOn(Crew crew) {
         int top = Math.min(done, ahead(gathered, Regions.SPECK_ROWS));
         int bottom = done;
-        crew.add(() -> {
-            for (int y = bottom - 1; y >= top; y--) {
-                output.add(y, regions.clean(y, last().rows[y]));
-            }
-            output.flush();
-            for (int y = top; y < bottom; y++) {
+        RowOutput full = outputs[0];
+        RowOutput next = outputs[1];
+        outputs[0] = next;
+        outputs[1] = full;
+        crew.add(full::flush);
+        if (top < bottom) {
+            next.begin(top, bottom - top);
+            crew.add(top, bottom, ROWS_A_JOB, y -> {
+                next.put(y, regions.clean(y, last().rows[y]));
                 pixels[y] = null;
                 for (Stage stage : stages) {
                     stage.rows[y] = null;
                 }
-            }
-        });
+            });
+        }
         return top;
     }
 }
