@@ -74,7 +74,8 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
 
     /**
      * This set-up with its calibration refined on the films that a photo shows, or itself where there is no calibration or nothing
-     * to refine it on. Refined again as long as that lets more films be trusted.
+     * to refine it on. Refined again until all films can be trusted, a few times at most: even where no more of them can, the
+     * readings on which they rest become better.
      */
     public Setup refined(Rig rig, SignalSource photo) {
         if (calibration.isEmpty()) {
@@ -83,13 +84,11 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         FitInput input = input(rig, photo.parts().get(0).info());
         StripSignal strips = StripSignal.of(photo, REFINING_PIXELS);
         Setup refined = this;
-        int used = 0;
         for (int round = 0; round < MOST_ROUNDS; round++) {
             PhotoFilms shown = PhotoFilms.gather(refined.curve, rig.recipe().excluded(), strips);
-            if (shown.films().size() <= used) {
+            if (shown.films().isEmpty()) {
                 break;
             }
-            used = shown.films().size();
             refined = of(rig.recipe(), ResponseFit.refine(input, calibration.get(), shown.films()));
             if (shown.waiting() == 0) {
                 break;
