@@ -31,8 +31,13 @@ final class AnyChannelProbe extends TangentProbe {
     }
 
     @Override
-    float chiSquare(int k, float t) {
-        float beside = distance(k) - t;
+    float chiSquare(int k) {
+        float t = distance(k);
+        return acrossTangent(k) + t * t * table().information(k);
+    }
+
+    /** Chi-square where the tangent comes nearest, by the residual that {@link #distance} left. */
+    private float acrossTangent(int k) {
         int at = k * stride + 2 * channels;
         float sum = 0;
         for (int i = 0; i < channels; i++) {
@@ -40,7 +45,7 @@ final class AnyChannelProbe extends TangentProbe {
                 sum += samples[at++] * residual[i] * residual[j];
             }
         }
-        return sum + beside * beside * samples[at];
+        return sum;
     }
 
     @Override
@@ -57,6 +62,6 @@ final class AnyChannelProbe extends TangentProbe {
         }
         sample = k;
         offset = t;
-        return chiSquare(k, t);
+        return acrossTangent(k);
     }
 }

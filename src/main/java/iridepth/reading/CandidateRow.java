@@ -53,7 +53,7 @@ final class CandidateRow {
      *
      * @param spacingNm spacing of the samples there
      */
-    void addOnce(float thicknessNm, double spacingNm, float itsCost, boolean explains) {
+    void addOnce(float thicknessNm, float spacingNm, float itsCost, boolean explains) {
         if (size == first || thicknessNm - thickness[size - 1] > spacingNm / 2) {
             add(thicknessNm, itsCost, explains);
         }

@@ -41,6 +41,16 @@ final class CellFrame {
         return axis < cells.length ? cells[axis] : 1;
     }
 
+    /** Edge of a cell along an axis. */
+    double edge(int axis) {
+        return 1 / perUnit[axis];
+    }
+
+    /** Middle of the cells at a place along an axis. */
+    double middle(int axis, int place) {
+        return from[axis] + (place + 0.5) / perUnit[axis];
+    }
+
     /** Place of a value along an axis, held inside the grid. */
     int place(int axis, double value) {
         return Math.max(0, Math.min(cells[axis] - 1, (int) ((value - from[axis]) * perUnit[axis])));

@@ -35,8 +35,8 @@ final class CellRuns {
         newest[cell] = count++;
     }
 
-    /** Values a run takes when packed: first and last sample, and how slowly the curve goes. */
-    static final int PACKED = 3;
+    /** Values a run takes when packed: first and last sample, the first as its complement where the run is not straight. */
+    static final int PACKED = 2;
 
     /** How the curve goes along a run. */
     interface Course {
@@ -45,9 +45,6 @@ final class CellRuns {
 
         /** The last sample up to which a smooth run is straight from the first on. */
         int straightUpTo(int first, int last);
-
-        /** Samples per standard deviation of the noise where it goes fastest. */
-        float slowness(int first, int last);
     }
 
     /** The runs of all cells, those that are straight in parts cut into these. */
@@ -70,13 +67,13 @@ final class CellRuns {
 
     private static void pack(int from, int to, Course course, PackedRuns into) {
         if (!course.isSmooth(from, to)) {
-            into.add(from, to, course.slowness(from, to));
+            into.add(~from, to);
             return;
         }
         int first = from;
         while (first <= to) {
             int last = course.straightUpTo(first, to);
-            into.add(first, last, 0);
+            into.add(first, last);
             first = last + 1;
         }
     }
@@ -91,13 +88,12 @@ final class CellRuns {
             start = new int[cells + 1];
         }
 
-        private void add(int first, int last, float slowness) {
+        private void add(int first, int last) {
             if (size + PACKED > runs.length) {
                 runs = Arrays.copyOf(runs, 2 * runs.length);
             }
             runs[size] = first;
             runs[size + 1] = last;
-            runs[size + 2] = Float.floatToIntBits(slowness);
             size += PACKED;
         }
 

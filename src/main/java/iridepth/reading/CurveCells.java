@@ -12,7 +12,7 @@ import iridepth.curve.ColourCurve;
  */
 final class CurveCells {
     /** Edge of a cell in half-widths of the boxes. */
-    private static final double EDGE = 0.7;
+    private static final double EDGE = 0.5;
     private static final int[] MOST_CELLS = {8192, 512, 128};
 
     private final CellFrame frame;
@@ -44,25 +44,29 @@ final class CurveCells {
         }
         CellFrame frame = new CellFrame(axes, boxes.least(), boxes.most(), edge);
         CellRuns lists = new CellRuns(frame.size());
+        NearestPiece nearest = axes.plain() ? new NearestPiece(table, frame, threshold) : null;
         for (int k = 0; k + 1 < table.size(); k++) {
-            mark(frame, boxes, k, lists);
+            mark(frame, boxes, k, nearest, lists);
         }
         CellRuns.PackedRuns packed = new CellRuns.PackedRuns(frame.size());
         lists.pack(new CurveCourse(table, threshold), packed);
         return new CurveCells(frame, packed.start(), packed.runs());
     }
 
-    private static void mark(CellFrame frame, CurveBoxes boxes, int k, CellRuns lists) {
+    private static void mark(CellFrame frame, CurveBoxes boxes, int k, NearestPiece nearest, CellRuns lists) {
         int[] first = new int[CellAxes.MOST];
         int[] last = new int[CellAxes.MOST];
         for (int i = 0; i < boxes.axes(); i++) {
             first[i] = frame.place(i, boxes.low(k, i));
             last[i] = frame.place(i, boxes.high(k, i));
         }
-        for (int a = first[0]; a <= last[0]; a++) {
-            for (int b = first[1]; b <= last[1]; b++) {
-                for (int c = first[2]; c <= last[2]; c++) {
-                    lists.add((a * frame.size(1) + b) * frame.size(2) + c, k);
+        int[] at = new int[CellAxes.MOST];
+        for (at[0] = first[0]; at[0] <= last[0]; at[0]++) {
+            for (at[1] = first[1]; at[1] <= last[1]; at[1]++) {
+                for (at[2] = first[2]; at[2] <= last[2]; at[2]++) {
+                    if (nearest == null || nearest.mayLieIn(k, at)) {
+                        lists.add((at[0] * frame.size(1) + at[1]) * frame.size(2) + at[2], k);
+                    }
                 }
             }
         }
@@ -78,10 +82,7 @@ final class CurveCells {
         return start[cell];
     }
 
-    /**
-     * {@link CellRuns#PACKED} values a run: first sample, last sample, and the bits of a float that is 0 where the run is
-     * straight, else the samples that the curve takes at least to pass one standard deviation of the noise.
-     */
+    /** {@link CellRuns#PACKED} values a run: first and last sample, the first as its complement where it is not straight. */
     int[] runs() {
         return runs;
     }

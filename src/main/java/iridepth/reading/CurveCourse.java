@@ -11,8 +11,6 @@ package iridepth.reading;
  * of one channel does at each extremum.
  */
 final class CurveCourse implements CellRuns.Course {
-    /** Share of the highest speed below which the curve comes to a halt. */
-    private static final double SLOW = 0.3;
     private static final double TURNING = 1;
     /** Bound of the curvature condition, less than 1 since a run turns away from its chord. */
     private static final double CONVEX = 0.9;
@@ -27,16 +25,13 @@ final class CurveCourse implements CellRuns.Course {
 
     @Override
     public boolean isSmooth(int first, int last) {
-        double slowest = Double.POSITIVE_INFINITY;
-        double fastest = 0;
-        double bent = 0;
         for (int k = first; k <= last; k++) {
-            double speed = Math.sqrt(table.information(k));
-            slowest = Math.min(slowest, speed);
-            fastest = Math.max(fastest, speed);
-            bent = Math.max(bent, table.curvature(k) * reach);
+            double bent = table.curvature(k) * reach;
+            if (bent * (1 + bent / 2) >= CONVEX || k < last && !table.isRegular(k)) {
+                return false;
+            }
         }
-        return slowest > SLOW * fastest && bent * (1 + bent / 2) < CONVEX;
+        return true;
     }
 
     @Override
@@ -49,14 +44,5 @@ final class CurveCourse implements CellRuns.Course {
             }
         }
         return last;
-    }
-
-    @Override
-    public float slowness(int first, int last) {
-        double fastest = 0;
-        for (int k = first; k <= last; k++) {
-            fastest = Math.max(fastest, Math.sqrt(table.information(k)));
-        }
-        return (float) (1 / fastest);
     }
 }

@@ -5,44 +5,35 @@ package iridepth.reading;
  * until the nearest is found, in others by looking along it. Pixels with censored channels go to the exhaustive search.
  */
 final class GridSearch implements CandidateSearch {
+    static final int AT_ONCE = 256;
     private static final float HALF = 0.5f;
     /** Chi-square by the tangent of a sample may exceed that of the minimum by this factor. */
     private static final float FAR = 1.5f;
     /** Curvature times residual below which the tangent of one sample does. */
     private static final float BENT = 0.15f;
-    /** Share of a distance that is skipped: the metric changes somewhat along the curve. */
-    private static final float SKIPPED = 0.8f;
-    /** Over the threshold, chi-square beyond which no longer leaps are made. */
-    private static final float FARTHEST = 9;
     private final TangentTable[] tables;
     private final CurveCells cells;
     private final float threshold;
     private final float acceptance;
-    private final float reach;
     private final TangentProbe probe;
     private final ExhaustiveSearch exhaustive;
     private final int channels;
     private final int size;
 
+    private final int[] begin = new int[AT_ONCE];
+    private final int[] end = new int[AT_ONCE];
+    private final int[] lead = new int[AT_ONCE];
     private CandidateRow result;
-    /** Where the last pixel was found, from which to start in the next. */
-    private int recent;
 
     GridSearch(CurveIndex index) {
         this.tables = index.tables();
         this.cells = index.cells();
         this.threshold = (float) index.threshold();
         this.acceptance = (float) index.acceptance();
-        this.reach = (float) Math.sqrt(index.threshold());
         this.channels = index.curve().channels();
         this.size = tables[0].size();
         this.probe = channels == 3 ? new ThreeChannelProbe() : new AnyChannelProbe(channels);
         this.exhaustive = new ExhaustiveSearch(index);
-    }
-
-    /** Begins a row: where the last pixel was found is of no use any more. */
-    void begin() {
-        recent = -1;
     }
 
     @Override
@@ -58,63 +49,76 @@ final class GridSearch implements CandidateSearch {
 
     /** Finds the candidates of a pixel without censored channels. */
     void find(float[] values, int pixel, int level, CandidateRow into) {
-        int at = pixel * channels;
-        int cell = cells.cell(values, at);
-        if (cell < 0) {
-            return;
-        }
+        locate(values, pixel, 1);
+        find(values, pixel, level, pixel, into);
+    }
+
+    /** Finds the candidates of a row's pixels without censored channels, from one on, {@link #AT_ONCE} at most. */
+    void locate(float[] values, int first, int count) {
         int[] runs = cells.runs();
-        int i = cells.start(cell);
-        int end = cells.start(cell + 1);
-        if (i == end) {
+        for (int i = 0; i < count; i++) {
+            int cell = cells.cell(values, (first + i) * channels);
+            begin[i] = cell < 0 ? 0 : cells.start(cell);
+            end[i] = cell < 0 ? 0 : cells.start(cell + 1);
+        }
+        for (int i = 0; i < count; i++) {
+            lead[i] = begin[i] < end[i] ? runs[begin[i]] : 0;
+        }
+    }
+
+    void find(float[] values, int pixel, int level, int located, CandidateRow into) {
+        int i = begin[pixel - located];
+        int last = end[pixel - located];
+        if (i == last) {
             return;
         }
-        probe.load(tables[level], values, at);
+        probe.load(tables[level], values, pixel * channels);
         result = into;
-        for (; i < end; i += CellRuns.PACKED) {
-            if (runs[i + 2] == 0) {
-                straight(runs[i], runs[i + 1]);
+        int[] runs = cells.runs();
+        int first = lead[pixel - located];
+        while (true) {
+            if (first >= 0) {
+                straight(first, runs[i + 1]);
             } else {
-                look(runs[i], runs[i + 1], Float.intBitsToFloat(runs[i + 2]));
+                look(~first, runs[i + 1]);
             }
+            i += CellRuns.PACKED;
+            if (i == last) {
+                return;
+            }
+            first = runs[i];
         }
     }
 
     /**
      * The minimum along a straight run. Where the curve bends, the tangent of a sample misses it by a share that grows with
-     * the residual; then the tangent of the next sample beyond it tells where it lies between the two.
+     * the residual; then that of the next sample beyond it tells where it lies between the two.
      */
     private void straight(int first, int last) {
-        float chiSquare = probe.settle(first, last, recent >= first && recent <= last ? recent : (first + last) >>> 1);
+        float chiSquare = probe.settle(first, last, (first + last) >>> 1);
         if (chiSquare > FAR * threshold) {
             return;
         }
         int k = probe.sample();
         float t = probe.offset();
-        recent = k;
-        boolean isSure = t <= HALF && t >= -HALF && k > first && k < last
-                && probe.table().curvature(k) * probe.table().curvature(k) * chiSquare < BENT * BENT;
-        if (isSure || k == 0 && t < 0 || k == size - 1 && t > 0) {
-            float held = k == 0 ? Math.max(0, t) : k == size - 1 ? Math.min(0, t) : t;
-            keep(k, held, chiSquare + (t - held) * (t - held) * probe.table().information(k));
-            return;
+        float bend = probe.table().curvature(k);
+        if (t <= HALF && t >= -HALF && k > 0 && k < size - 1 && bend * bend * chiSquare < BENT * BENT) {
+            keep(k, t, chiSquare);
+        } else if (t > 0) {
+            float beyond = k < size - 1 ? probe.distance(k + 1) : 0;
+            if (beyond < 0) {
+                between(k, t, beyond);
+            } else if (k == size - 1) {
+                keep(k, 0, probe.chiSquare(k));
+            }
+        } else {
+            float before = k > 0 ? probe.distance(k - 1) : 0;
+            if (before > 0) {
+                between(k - 1, before, t);
+            } else if (k == 0) {
+                keep(k, 0, probe.chiSquare(k));
+            }
         }
-        int next = t > 0 ? k + 1 : k - 1;
-        if (next < 0 || next >= size) {
-            return;
-        }
-        float beyond = probe.distance(next);
-        if (t * beyond <= 0) {
-            float share = t == 0 ? 0 : t / (t - beyond);
-            float drop = t * share * (next - k) * probe.table().information(k);
-            keep(k, share * (next - k), chiSquare + t * t * probe.table().information(k) - drop);
-        }
-    }
-
-    /** Keeps the minimum t samples beyond k, or the end of the curve where it would lie beyond that. */
-    private void accept(int k, float t) {
-        float held = k == 0 ? Math.max(0, t) : k == size - 1 ? Math.min(0, t) : t;
-        keep(k, held, probe.chiSquare(k, held));
     }
 
     /** Keeps a minimum unless it does not explain the pixel. */
@@ -122,57 +126,65 @@ final class GridSearch implements CandidateSearch {
         if (chiSquare <= threshold) {
             TangentTable table = probe.table();
             float least = Math.max(0, chiSquare);
-            result.addOnce((float) table.thickness(k, t), table.spacing(k), least + table.logDeterminant(k), least <= acceptance);
+            result.addOnce(table.thickness(k, t), table.spacing(k), least + table.logDeterminant(k), least <= acceptance);
         }
     }
 
-    /**
-     * Looks along a run, at every sample where a candidate can be and in leaps where it is far: the root of chi-square falls no
-     * faster than the length of the curve that is passed. The root is taken by its chord, which lies below it.
-     */
-    private void look(int first, int last, float slowness) {
-        float leap = SKIPPED * slowness / ((1 + (float) Math.sqrt(FARTHEST)) * reach);
-        int k = first;
-        int lowest = first;
-        float least = Float.POSITIVE_INFINITY;
-        boolean falling = false;
-        while (true) {
-            float here = probe.chiSquare(k, 0);
-            if (falling && here >= least) {
-                settle(lowest);
+    /** Looks along a run, sample by sample, and on from its ends if chi-square falls there. */
+    private void look(int first, int last) {
+        float before = Float.POSITIVE_INFINITY;
+        float here = probe.chiSquare(first);
+        for (int k = first; k <= last; k++) {
+            float after = k < last ? probe.chiSquare(k + 1) : Float.POSITIVE_INFINITY;
+            if (here < before && here <= after) {
+                settle(k, here);
             }
-            falling = here < least;
-            least = here;
-            lowest = k;
-            if (k == last) {
-                break;
-            }
-            int step = here <= threshold ? 1 : Math.max(1, (int) ((Math.min(here, FARTHEST * threshold) - threshold) * leap));
-            k = Math.min(last, k + step);
-        }
-        if (falling && last == size - 1) {
-            settle(last);
+            before = here;
+            here = after;
         }
     }
 
     /** Walks down to the minimum near a sample and places it by the parabola through its neighbours. */
-    private void settle(int near) {
+    private void settle(int near, float there) {
         int k = near;
-        float here = probe.chiSquare(k, 0);
-        while (k > 0 && probe.chiSquare(k - 1, 0) < here) {
-            here = probe.chiSquare(--k, 0);
+        float here = there;
+        float before = k > 0 ? probe.chiSquare(k - 1) : Float.POSITIVE_INFINITY;
+        float after = k < size - 1 ? probe.chiSquare(k + 1) : Float.POSITIVE_INFINITY;
+        while (before < here) {
+            after = here;
+            here = before;
+            before = --k > 0 ? probe.chiSquare(k - 1) : Float.POSITIVE_INFINITY;
         }
-        while (k < size - 1 && probe.chiSquare(k + 1, 0) < here) {
-            here = probe.chiSquare(++k, 0);
+        while (after < here) {
+            before = here;
+            here = after;
+            after = ++k < size - 1 ? probe.chiSquare(k + 1) : Float.POSITIVE_INFINITY;
         }
         if (k == 0 || k == size - 1) {
-            accept(k, Math.max(-HALF, Math.min(HALF, probe.distance(k))));
-            return;
+            float t = Math.max(-HALF, Math.min(HALF, probe.distance(k)));
+            float held = k == 0 ? Math.max(0, t) : Math.min(0, t);
+            keep(k, held, here - (2 * probe.distance(k) - held) * held * probe.table().information(k));
+        } else {
+            float bend = after - 2 * here + before;
+            float t = bend > 0 ? (before - after) / (2 * bend) : 0;
+            keep(k, t, here - (before - after) * t / 4);
         }
-        float before = probe.chiSquare(k - 1, 0);
-        float after = probe.chiSquare(k + 1, 0);
-        float bend = after - 2 * here + before;
-        float t = bend > 0 ? (before - after) / (2 * bend) : 0;
-        keep(k, t, here - (before - after) * t / 4);
+    }
+
+    /**
+     * The minimum between sample k and the next, whose feet lie t samples beyond the one and -beyond before the other: that of
+     * the cubic with the values and slopes, -2 a t, of chi-square at both.
+     */
+    private void between(int k, float t, float beyond) {
+        float here = probe.chiSquare(k);
+        float rise = probe.chiSquare(k + 1) - here;
+        float slope = -2 * t * probe.table().information(k);
+        float slopeBeyond = -2 * beyond * probe.table().information(k + 1);
+        float square = 3 * rise - 2 * slope - slopeBeyond;
+        float cube = slope + slopeBeyond - 2 * rise;
+        float root = (float) Math.sqrt(Math.max(0, square * square - 3 * cube * slope));
+        float place = square > 0 ? -slope / (square + root) : (root - square) / (3 * cube);
+        float held = Math.max(0, Math.min(1, place));
+        keep(k, held, here + held * (slope + held * (square + held * cube)));
     }
 }

@@ -67,7 +67,6 @@ final class RowReader {
     PixelRow read(Frame counts, int row, int y) {
         photo.convert(counts, row, y, line);
         found.clear();
-        search.begin();
         notedCount = 0;
         pinnedCount = 0;
         boolean[] excludedHere = excludedColumns(y);
@@ -78,9 +77,13 @@ final class RowReader {
             }
         }
         if (excludedHere == null && !pinnedHere && isPlain(line.limit())) {
-            for (int x = 0; x < kind.length; x++) {
-                search.find(line.value(), x, level[x], found);
-                close(x);
+            for (int from = 0; from < kind.length; from += GridSearch.AT_ONCE) {
+                int to = Math.min(kind.length, from + GridSearch.AT_ONCE);
+                search.locate(line.value(), from, to - from);
+                for (int x = from; x < to; x++) {
+                    search.find(line.value(), x, level[x], from, found);
+                    close(x);
+                }
             }
         } else {
             for (int x = 0; x < kind.length; x++) {

@@ -28,8 +28,8 @@ abstract class TangentProbe {
     /** How many samples beyond a sample its tangent comes nearest. */
     abstract float distance(int k);
 
-    /** Chi-square t samples beyond a sample along its tangent. */
-    abstract float chiSquare(int k, float t);
+    /** Chi-square at a sample. */
+    abstract float chiSquare(int k);
 
     /**
      * Goes along a straight run to the sample that is nearest, by steps.

@@ -23,35 +23,39 @@ final class ThreeChannelProbe extends TangentProbe {
     }
 
     @Override
-    float chiSquare(int k, float t) {
+    float chiSquare(int k) {
         float[] s = samples;
         int at = k * STRIDE;
         float r0 = v0 - s[at];
         float r1 = v1 - s[at + 1];
         float r2 = v2 - s[at + 2];
-        float beside = r0 * s[at + 3] + r1 * s[at + 4] + r2 * s[at + 5] - t;
+        float t = r0 * s[at + 3] + r1 * s[at + 4] + r2 * s[at + 5];
         return r0 * (r0 * s[at + 6] + r1 * s[at + 7] + r2 * s[at + 8]) + r1 * (r1 * s[at + 9] + r2 * s[at + 10])
-                + r2 * r2 * s[at + 11] + beside * beside * s[at + 12];
+                + r2 * r2 * s[at + 11] + t * t * table().information(k);
     }
 
     @Override
     float settle(int first, int last, int start) {
-        float[] s = samples;
         int k = start;
-        for (int i = 0; ; i++) {
-            int at = k * STRIDE;
-            float r0 = v0 - s[at];
-            float r1 = v1 - s[at + 1];
-            float r2 = v2 - s[at + 2];
-            float t = r0 * s[at + 3] + r1 * s[at + 4] + r2 * s[at + 5];
-            int next = step(k, t, first, last);
-            if (next == k || i == HOPS) {
-                sample = k;
-                offset = t;
-                return r0 * (r0 * s[at + 6] + r1 * s[at + 7] + r2 * s[at + 8]) + r1 * (r1 * s[at + 9] + r2 * s[at + 10])
-                        + r2 * r2 * s[at + 11];
-            }
+        float t = distance(k);
+        int next = step(k, t, first, last);
+        // Of two steps the second is taken whether it leads on or not: foretelling which would fail too often.
+        t = distance(next);
+        k = next;
+        next = step(k, t, first, last);
+        for (int i = 1; next != k && i < HOPS; i++) {
             k = next;
+            t = distance(k);
+            next = step(k, t, first, last);
         }
+        sample = k;
+        offset = t;
+        float[] s = samples;
+        int at = k * STRIDE;
+        float r0 = v0 - s[at];
+        float r1 = v1 - s[at + 1];
+        float r2 = v2 - s[at + 2];
+        return r0 * (r0 * s[at + 6] + r1 * s[at + 7] + r2 * s[at + 8]) + r1 * (r1 * s[at + 9] + r2 * s[at + 10])
+                + r2 * r2 * s[at + 11];
     }
 }
