@@ -130,36 +130,34 @@ final class GridSearch implements CandidateSearch {
         }
     }
 
-    /** Looks along a run, sample by sample, and on from its ends if chi-square falls there. */
+    /** Looks along a run, sample by sample, and on from its ends where chi-square falls there. */
     private void look(int first, int last) {
-        float before = Float.POSITIVE_INFINITY;
+        float before = chiSquareAt(first - 1);
         float here = probe.chiSquare(first);
-        for (int k = first; k <= last; k++) {
-            float after = k < last ? probe.chiSquare(k + 1) : Float.POSITIVE_INFINITY;
+        int k = first;
+        while (before < here && k > 0) {
+            here = before;
+            before = chiSquareAt(--k - 1);
+        }
+        for (; ; k++) {
+            float after = chiSquareAt(k + 1);
             if (here < before && here <= after) {
-                settle(k, here);
+                place(k, before, here, after);
+            }
+            if (k >= last && after >= here) {
+                return;
             }
             before = here;
             here = after;
         }
     }
 
-    /** Walks down to the minimum near a sample and places it by the parabola through its neighbours. */
-    private void settle(int near, float there) {
-        int k = near;
-        float here = there;
-        float before = k > 0 ? probe.chiSquare(k - 1) : Float.POSITIVE_INFINITY;
-        float after = k < size - 1 ? probe.chiSquare(k + 1) : Float.POSITIVE_INFINITY;
-        while (before < here) {
-            after = here;
-            here = before;
-            before = --k > 0 ? probe.chiSquare(k - 1) : Float.POSITIVE_INFINITY;
-        }
-        while (after < here) {
-            before = here;
-            here = after;
-            after = ++k < size - 1 ? probe.chiSquare(k + 1) : Float.POSITIVE_INFINITY;
-        }
+    private float chiSquareAt(int k) {
+        return k < 0 || k >= size ? Float.POSITIVE_INFINITY : probe.chiSquare(k);
+    }
+
+    /** Places the minimum near a sample by the parabola through it and its neighbours. */
+    private void place(int k, float before, float here, float after) {
         if (k == 0 || k == size - 1) {
             float t = Math.max(-HALF, Math.min(HALF, probe.distance(k)));
             float held = k == 0 ? Math.max(0, t) : Math.min(0, t);
