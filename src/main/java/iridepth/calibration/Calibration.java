@@ -20,6 +20,7 @@ public final class Calibration {
     private final double[][] factors;
     private final List<Variation> variations;
     private final FitFigures figures;
+    private volatile Parts known;
 
     Calibration(ResponseModel model, double[][] factors, List<Variation> variations, FitFigures figures) {
         this.model = model;
@@ -136,8 +137,17 @@ public final class Calibration {
         return curve.withCovariance(covariance);
     }
 
-    /** Standard deviations of the signal by cause: [sample][direction * channels + channel]. */
+    /** Standard deviations of the signal by cause: [sample][direction * channels + channel]. Those worked out last are kept. */
     private Map<String, double[][]> parts(ColourCurve curve) {
+        Parts last = known;
+        if (last == null || last.fromNm != curve.fromNm() || last.toNm != curve.toNm() || last.stepNm != curve.stepNm()) {
+            last = new Parts(curve.fromNm(), curve.toNm(), curve.stepNm(), worked(curve));
+            known = last;
+        }
+        return last.byCause;
+    }
+
+    private Map<String, double[][]> worked(ColourCurve curve) {
         Map<String, double[][]> parts = new LinkedHashMap<>();
         parts.put(RESPONSES, model.along(factors, curve));
         for (Variation variation : variations) {
@@ -151,6 +161,10 @@ public final class Calibration {
             parts.put(variation.input(), part);
         }
         return parts;
+    }
+
+    /** The parts on a curve; they follow from the calibration and the curve's samples alone. */
+    private record Parts(double fromNm, double toNm, double stepNm, Map<String, double[][]> byCause) {
     }
 
     /** Name of the responses' own part in the {@link #budget}. */

@@ -78,7 +78,7 @@ public final class ShadingField {
 
     private static SplineFit.Judged[] fits(BlockMeans means) {
         SplineFit.Judged[] fits = new SplineFit.Judged[means.channels()];
-        Arrays.setAll(fits, c -> SplineFit.of(means, c));
+        Arrays.parallelSetAll(fits, c -> SplineFit.of(means, c));
         return fits;
     }
 

@@ -23,6 +23,7 @@ public final class Distribution {
     /** Widest range that is accepted, in nm: it bounds the memory at 160 MB. */
     private static final double WIDEST = 1e6;
 
+    private static final long LOW = 0xFFFFFFFFL;
     private static final MathContext PRECISION = MathContext.DECIMAL64;
 
     private final double lower;
@@ -35,6 +36,7 @@ public final class Distribution {
     private double min = Double.POSITIVE_INFINITY;
     private double max = Double.NEGATIVE_INFINITY;
     private long sum;
+    /** Sums of the lower and the upper halves of the squares, which have room for 2^31 of them each. */
     private long squaresLow;
     private long squaresHigh;
 
@@ -98,7 +100,9 @@ public final class Distribution {
         max = Math.max(max, value);
         long rounded = (long) ((value - lower) * quanta + 0.5);
         sum += rounded;
-        addSquares(rounded * rounded, 0);
+        long square = rounded * rounded;
+        squaresLow += square & LOW;
+        squaresHigh += square >>> Integer.SIZE;
     }
 
     /**
@@ -132,7 +136,8 @@ public final class Distribution {
         min = Math.min(min, other.min);
         max = Math.max(max, other.max);
         sum += other.sum;
-        addSquares(other.squaresLow, other.squaresHigh);
+        squaresLow += other.squaresLow;
+        squaresHigh += other.squaresHigh;
         return this;
     }
 
@@ -251,13 +256,7 @@ public final class Distribution {
         return Math.min(max, Math.max(min, (firstBin + i + within) / BINS_PER_NM));
     }
 
-    private void addSquares(long low, long high) {
-        squaresLow += low;
-        squaresHigh += high + (Long.compareUnsigned(squaresLow, low) < 0 ? 1 : 0);
-    }
-
     private BigInteger squares() {
-        BigInteger low = new BigInteger(Long.toUnsignedString(squaresLow));
-        return BigInteger.valueOf(squaresHigh).shiftLeft(Long.SIZE).add(low);
+        return BigInteger.valueOf(squaresHigh).shiftLeft(Integer.SIZE).add(BigInteger.valueOf(squaresLow));
     }
 }

@@ -14,7 +14,8 @@ import java.util.function.LongConsumer;
  *
  * <p>Two passes over the picture, down and up again, each in bands of rows; where regions of the picture turn out to be cut off
  * from what tells their order, another way up with other orders for them. The result depends neither on the height of the
- * bands nor on the number of threads, and memory does not grow with the picture but for a few bytes a region and row. Immutable.
+ * bands nor on the number of threads, and memory does not grow with the picture but for a few bytes a region and row. Immutable but for what it keeps of the photo
+ * read last; safe for several threads.
  */
 public final class FilmReader {
     private static final int BAND_PIXELS = 1 << 19;
@@ -29,6 +30,7 @@ public final class FilmReader {
     private final int bandHeight;
     private final long kept;
     private final boolean orderChoice;
+    private Indexed indexed;
 
     private FilmReader(ColourCurve curve, List<Region> excluded, Pins pins, int bandHeight, long kept, boolean orderChoice) {
         this.curve = curve;
@@ -86,7 +88,7 @@ public final class FilmReader {
         }
         int width = photo.info().width();
         int height = photo.info().height();
-        CurveIndex index = CurveIndex.of(curve, photo);
+        CurveIndex index = index(photo);
         JumpPenalty penalty = JumpPenalty.of(index);
         IntFunction<Sweep> newSweep = i -> index.turnsBack() ? new SlopeSweep(index, i % 2 == 0)
                 : new PathSweep(penalty, i % 2 == 0);
@@ -105,6 +107,27 @@ public final class FilmReader {
             corrections.add(correction);
             sink.restart();
         }
+    }
+
+    /**
+     * What else the colours of a photo's pixels might mean.
+     *
+     * @param photo the signals, with as many channels as the curve
+     * @param frame which frame, 0 for the first
+     */
+    public OtherCandidates others(SignalSource photo, int frame) {
+        return new OtherCandidates(photo, frame, () -> new RowReader(photo, excluded, Pins.none(), index(photo), true));
+    }
+
+    /** The index of a photo; the one made last is kept. */
+    private synchronized CurveIndex index(SignalSource photo) {
+        if (indexed == null || indexed.photo != photo) {
+            indexed = new Indexed(photo, CurveIndex.of(curve, photo));
+        }
+        return indexed.index;
+    }
+
+    private record Indexed(SignalSource photo, CurveIndex index) {
     }
 
     /**

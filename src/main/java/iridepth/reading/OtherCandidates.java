@@ -1,10 +1,7 @@
 package iridepth.reading;
 
-import iridepth.curve.ColourCurve;
-import iridepth.photo.Region;
 import iridepth.photo.SignalSource;
-import java.util.Arrays;
-import java.util.List;
+import java.util.function.Supplier;
 
 /** The candidates of a photo's pixels that were not chosen: what else a pixel's colour might mean. */
 public final class OtherCandidates {
@@ -13,35 +10,26 @@ public final class OtherCandidates {
 
     private final SignalSource photo;
     private final int frame;
-    private final RowReader reader;
+    private final ThreadLocal<RowReader> readers;
 
-    private OtherCandidates(SignalSource photo, int frame, RowReader reader) {
+    OtherCandidates(SignalSource photo, int frame, Supplier<RowReader> newReader) {
         this.photo = photo;
         this.frame = frame;
-        this.reader = reader;
+        this.readers = ThreadLocal.withInitial(newReader);
     }
 
     /**
-     * Candidates on a curve. The object serves one thread.
-     *
-     * @param excluded regions that are left out
-     * @param frame    frame of the photo
-     */
-    public static OtherCandidates of(ColourCurve curve, List<Region> excluded, SignalSource photo, int frame) {
-        CurveIndex index = CurveIndex.of(curve, photo);
-        return new OtherCandidates(photo, frame, new RowReader(photo, excluded, Pins.none(), index, true));
-    }
-
-    /**
-     * The likeliest other candidates of a row.
+     * The likeliest other candidates of some pixels of a row. Several threads may ask at the same time.
      *
      * @param y      the row
+     * @param firstX column of the first of the pixels
+     * @param step   columns from one to the next
      * @param chosen thicknesses chosen, nm, from {@code from} on, as many as the row has pixels; NaN where not read
      * @param from   where the row begins in {@code chosen} and the result
-     * @param others receives the thicknesses, nm, the likeliest first, NaN where there is none
+     * @param others receives the thicknesses, nm, the likeliest first; where there is none it is left as it is
      */
-    public void row(int y, float[] chosen, int from, float[][] others) {
-        PixelRow row = reader.read(photo.counts(frame, y, 1), 0, y);
+    public void row(int y, int firstX, int step, float[] chosen, int from, float[][] others) {
+        PixelRow row = readers.get().read(photo.counts(frame, y, 1), 0, y, firstX, step);
         for (int noted = 0; noted < row.noted(); noted++) {
             int x = row.column()[noted];
             if (row.count(noted) > 1) {
@@ -51,14 +39,23 @@ public final class OtherCandidates {
     }
 
     private static void rank(PixelRow row, int noted, float chosen, int at, float[][] others) {
-        Integer[] order = new Integer[row.count(noted)];
-        Arrays.setAll(order, k -> row.start()[noted] + k);
-        Arrays.sort(order, (a, b) -> Float.compare(row.cost()[a], row.cost()[b]));
-        int next = 0;
-        for (int k : order) {
-            float nm = row.thickness()[k];
-            if (next < others.length && Math.abs(nm - chosen) > SAME_NM) {
-                others[next++][at] = nm;
+        float[] cost = new float[others.length];
+        int found = 0;
+        for (int k = row.start()[noted]; k < row.start()[noted + 1]; k++) {
+            if (Math.abs(row.thickness()[k] - chosen) > SAME_NM) {
+                int place = found;
+                while (place > 0 && cost[place - 1] > row.cost()[k]) {
+                    place--;
+                }
+                if (place < others.length) {
+                    found = Math.min(others.length, found + 1);
+                    for (int n = found - 1; n > place; n--) {
+                        cost[n] = cost[n - 1];
+                        others[n][at] = others[n - 1][at];
+                    }
+                    cost[place] = row.cost()[k];
+                    others[place][at] = row.thickness()[k];
+                }
             }
         }
     }

@@ -65,17 +65,9 @@ final class RowReader {
      * @param y      its place in the photo
      */
     PixelRow read(Frame counts, int row, int y) {
-        photo.convert(counts, row, y, line);
-        found.clear();
-        notedCount = 0;
-        pinnedCount = 0;
+        begin(counts, row, y);
         boolean[] excludedHere = excludedColumns(y);
         boolean pinnedHere = pins.touches(y);
-        if (index.levels().count() > 1) {
-            for (int x = 0; x < level.length; x++) {
-                level[x] = (byte) index.levels().level(line.light()[x]);
-            }
-        }
         if (excludedHere == null && !pinnedHere && isPlain(line.limit())) {
             for (int from = 0; from < kind.length; from += GridSearch.AT_ONCE) {
                 int to = Math.min(kind.length, from + GridSearch.AT_ONCE);
@@ -90,10 +82,46 @@ final class RowReader {
                 read(x, excludedHere != null && excludedHere[x], pinnedHere ? pins.at(x, y) : Double.NaN);
             }
         }
+        return row();
+    }
+
+    private void begin(Frame counts, int row, int y) {
+        photo.convert(counts, row, y, line);
+        found.clear();
+        notedCount = 0;
+        pinnedCount = 0;
+        if (index.levels().count() > 1) {
+            for (int x = 0; x < level.length; x++) {
+                level[x] = (byte) index.levels().level(line.light()[x]);
+            }
+        }
+    }
+
+    private PixelRow row() {
         start[notedCount] = found.size();
         byte[] levels = index.levels().count() == 1 ? new byte[0] : level.clone();
         return new PixelRow(kind.clone(), levels, single.clone(), Arrays.copyOf(column, notedCount),
                 Arrays.copyOf(start, notedCount + 1), found.thicknesses(), found.costs(), Arrays.copyOf(pinned, pinnedCount));
+    }
+
+    /**
+     * Finds the candidates of some pixels of a row. The others are as if they were excluded, but not noted.
+     *
+     * @param counts rows of the photo
+     * @param row    which of them
+     * @param y      its place in the photo
+     * @param first  column of the first of the pixels
+     * @param step   columns from one to the next
+     */
+    PixelRow read(Frame counts, int row, int y, int first, int step) {
+        begin(counts, row, y);
+        Arrays.fill(kind, (byte) ~State.EXCLUDED.code());
+        Arrays.fill(single, Float.NaN);
+        boolean[] excludedHere = excludedColumns(y);
+        for (int x = first; x < kind.length; x += step) {
+            read(x, excludedHere != null && excludedHere[x], Double.NaN);
+        }
+        return row();
     }
 
     private void read(int x, boolean isExcluded, double known) {

@@ -27,6 +27,8 @@ public final class Instrument {
     private final Optional<Path> calibration;
     /** Hashes are made beside the set-up, not before or after it, hence a lock of their own. */
     private final Object hashing = new Object();
+    /** As is the rig, beside which the curve of a calibration made before can be worked out. */
+    private final Object correcting = new Object();
     private Map<String, String> hashes;
     private Rig rig;
     private Channels channels;
@@ -100,11 +102,13 @@ public final class Instrument {
                 .equals(file.toAbsolutePath().normalize()));
     }
 
-    private synchronized Rig rig() {
-        if (rig == null) {
-            rig = Rig.of(recipe);
+    private Rig rig() {
+        synchronized (correcting) {
+            if (rig == null) {
+                rig = Rig.of(recipe);
+            }
+            return rig;
         }
-        return rig;
     }
 
     /**
@@ -115,7 +119,7 @@ public final class Instrument {
      * @throws iridepth.photo.PhotoException if the photo or a table contradicts it
      */
     public synchronized Setup setup(PhotoInfo photo) {
-        Encoding encoding = rig().encoding(photo);
+        Encoding encoding = Rig.encoding(recipe.camera(), photo);
         Channels wanted = Channels.of(photo, encoding);
         if (!wanted.equals(channels)) {
             Setup made = calibration.isEmpty() ? Setup.of(rig(), photo)
@@ -124,6 +128,17 @@ public final class Instrument {
             channels = wanted;
         }
         return setup;
+    }
+
+    /**
+     * Works out now what a photo needs besides dark, flat and noise: the curve of a calibration made before.
+     *
+     * @throws RecipeException if the calibration cannot be used
+     */
+    public void prepare(PhotoInfo photo) {
+        if (calibration.isPresent()) {
+            setup(photo);
+        }
     }
 
     /**

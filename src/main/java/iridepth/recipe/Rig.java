@@ -64,7 +64,8 @@ public record Rig(Recipe recipe, List<Optional<ShadingField>> darks, List<Option
         return encoding(recipe.camera(), photo);
     }
 
-    private static Encoding encoding(CameraSpec camera, PhotoInfo photo) {
+    /** How the counts of a photo stand for light that a camera took. */
+    static Encoding encoding(CameraSpec camera, PhotoInfo photo) {
         if (camera.isColourManaged()) {
             return Encoding.managed(photo);
         }

@@ -17,6 +17,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
+import java.util.stream.IntStream;
 
 /**
  * The files of a thickness map, written as its rows come, in any order: {@code thickness.tif}, {@code uncertainty.tif},
@@ -127,11 +128,9 @@ public final class MapFolder implements ReadingSink, AutoCloseable {
         for (float[] plane : alternatives) {
             Arrays.fill(plane, Float.NaN);
         }
-        for (int row = 0; row < codes.length / width; row++) {
-            if (page.shows(firstRow + row)) {
-                others.row(firstRow + row, nm, row * width, alternatives);
-            }
-        }
+        PageGrid shown = page.grid();
+        IntStream.range(0, codes.length / width).filter(row -> shown.shows(firstRow + row)).parallel()
+                .forEach(row -> others.row(firstRow + row, shown.firstX(), shown.factor(), nm, row * width, alternatives));
         page.add(firstRow, nm, combined, codes, alternatives);
     }
 

@@ -55,11 +55,6 @@ public final class PageMap {
         return new PageMap(PageGrid.of(width, height), pixelUm, alternatives);
     }
 
-    /** Whether a row of the map has points that the page shows. */
-    boolean shows(int y) {
-        return y >= grid.firstY() && (y - grid.firstY()) % grid.factor() == 0;
-    }
-
     /**
      * Adds whole rows.
      *

@@ -12,6 +12,9 @@ import java.nio.file.StandardCopyOption;
 import java.nio.file.attribute.BasicFileAttributes;
 import java.util.ArrayDeque;
 import java.util.Deque;
+import java.util.HashSet;
+import java.util.List;
+import java.util.Set;
 
 /**
  * A file or folder under way: it grows under a hidden name beside its target, on the same file system, and takes the
@@ -22,12 +25,17 @@ final class PendingOutput {
     private static final int NAMES_TRIED = 10_000;
     /** When the program is interrupted, other threads may still add files while these are removed. */
     private static final int REMOVALS_TRIED = 20;
+    private static final Set<PendingOutput> UNFINISHED = new HashSet<>();
+    private static boolean interrupted;
+
+    static {
+        Runtime.getRuntime().addShutdownHook(new Thread(PendingOutput::removeUnfinished, "remove unfinished output"));
+    }
 
     private final Path target;
     private final Path part;
     /** Parents made for this output, innermost first; they go again if it is abandoned. */
     private final Deque<Path> madeParents;
-    private final Thread onShutdown = new Thread(this::vanish, "remove unfinished output");
     private boolean ended;
 
     private PendingOutput(Path target, Path part, Deque<Path> madeParents) {
@@ -47,17 +55,24 @@ final class PendingOutput {
         Deque<Path> made = new ArrayDeque<>();
         try {
             makeParents(target.getParent(), made);
-            PendingOutput output = new PendingOutput(target, makePart(target, folder), made);
-            try {
-                Runtime.getRuntime().addShutdownHook(output.onShutdown);
-            } catch (IllegalStateException e) {
-                output.remove(output.part);
-                throw new OutputException("cannot write " + target + ": the program is being interrupted; start it again");
-            }
+            PendingOutput output = begun(target, folder, made);
             return output;
         } catch (IOException e) {
             removeEmpty(made);
             throw OutputException.of(target, e);
+        }
+    }
+
+    /** Makes the part and enters it among the unfinished: both or, where the program is being interrupted, neither. */
+    private static PendingOutput begun(Path target, boolean folder, Deque<Path> made) throws IOException {
+        synchronized (UNFINISHED) {
+            if (interrupted) {
+                removeEmpty(made);
+                throw new OutputException("cannot write " + target + ": the program is being interrupted; start it again");
+            }
+            PendingOutput output = new PendingOutput(target, makePart(target, folder), made);
+            UNFINISHED.add(output);
+            return output;
         }
     }
 
@@ -165,11 +180,18 @@ final class PendingOutput {
 
     private void end() {
         ended = true;
-        try {
-            Runtime.getRuntime().removeShutdownHook(onShutdown);
-        } catch (IllegalStateException e) {
-            // the program is shutting down already; the hook finds nothing left to do
+        synchronized (UNFINISHED) {
+            UNFINISHED.remove(this);
         }
+    }
+
+    private static void removeUnfinished() {
+        List<PendingOutput> outputs;
+        synchronized (UNFINISHED) {
+            interrupted = true;
+            outputs = List.copyOf(UNFINISHED);
+        }
+        outputs.forEach(PendingOutput::vanish);
     }
 
     /**

@@ -2,6 +2,7 @@ package iridepth.report;
 
 import iridepth.quality.Distribution;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
@@ -60,15 +61,16 @@ public record UncertaintyBudget(List<Line> lines) {
     public static Map<String, Double> average(Map<String, double[]> causes, double fromNm, double stepNm,
                                               Distribution distribution) {
         Map<String, Double> result = new LinkedHashMap<>();
+        int size = causes.values().stream().mapToInt(u -> u.length).max().orElse(0);
+        double[] shares = new double[size];
+        Arrays.setAll(shares, k -> distribution.shareWithin(fromNm + (k - 0.5) * stepNm, fromNm + (k + 0.5) * stepNm));
         causes.forEach((cause, u) -> {
             double squares = 0;
             double all = 0;
             for (int k = 0; k < u.length; k++) {
-                double middle = fromNm + k * stepNm;
-                double share = distribution.shareWithin(middle - stepNm / 2, middle + stepNm / 2);
-                if (share > 0 && Double.isFinite(u[k])) {
-                    squares += share * u[k] * u[k];
-                    all += share;
+                if (shares[k] > 0 && Double.isFinite(u[k])) {
+                    squares += shares[k] * u[k] * u[k];
+                    all += shares[k];
                 }
             }
             result.put(cause, Math.sqrt(squares / all));

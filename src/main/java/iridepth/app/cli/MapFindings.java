@@ -32,15 +32,22 @@ import java.util.stream.Collectors;
  * @param map        the map
  * @param doubts     regions whose order is open
  * @param judgement  how it stands against the tolerance, if there is one
+ * @param budget     its uncertainty by cause
  * @param hashes     SHA-256 of all inputs
  */
 record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSource signal, MapFolder map,
-                   List<DoubtfulRegion> doubts, Optional<Judgement> judgement, Map<String, String> hashes) {
+                   List<DoubtfulRegion> doubts, Optional<Judgement> judgement, UncertaintyBudget budget,
+                   Map<String, String> hashes) {
     /** Doubtful regions that the terminal lists at most; summary.json has all. */
     private static final int SHOWN_DOUBTS = 5;
     /** What settles the order of a region. */
     static final String REMEDY = "a known point in it ([[film.known]] in the recipe), an edge where its film falls to nothing "
             + "(film.zero_edge), or a photo under another light";
+
+    static MapFindings of(Instrument instrument, Setup setup, SignalSource signal, MapFolder map, List<DoubtfulRegion> doubts,
+                          Optional<Judgement> judgement, Map<String, String> hashes) {
+        return new MapFindings(instrument, setup, signal.info(), signal, map, doubts, judgement, budget(setup, signal, map), hashes);
+    }
 
     Recipe recipe() {
         return instrument.recipe();
@@ -123,15 +130,15 @@ record MapFindings(Instrument instrument, Setup setup, PhotoInfo info, SignalSou
     }
 
     /** The uncertainty by cause. */
-    UncertaintyBudget budget() {
-        Map<String, Double> causes = setup().calibration().map(c -> {
-            double[] noise = new double[setup().curve().channels()];
+    private static UncertaintyBudget budget(Setup setup, SignalSource signal, MapFolder map) {
+        Map<String, Double> causes = setup.calibration().map(c -> {
+            double[] noise = new double[setup.curve().channels()];
             double[] middle = new double[noise.length];
-            setup().curve().at(map.uniformity().median(), middle, new double[noise.length], new double[noise.length]);
+            setup.curve().at(map.uniformity().median(), middle, new double[noise.length], new double[noise.length]);
             for (int i = 0; i < noise.length; i++) {
                 noise[i] = Math.sqrt(signal.variance(i, middle[i], 1));
             }
-            return UncertaintyBudget.average(c.budget(setup().curve(), noise), setup().curve().fromNm(), setup().curve().stepNm(),
+            return UncertaintyBudget.average(c.budget(setup.curve(), noise), setup.curve().fromNm(), setup.curve().stepNm(),
                     map.distribution());
         }).orElse(Map.of());
         return UncertaintyBudget.of(map.randomNm(), map.systematicNm(), causes);

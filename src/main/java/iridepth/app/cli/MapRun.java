@@ -23,6 +23,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.concurrent.CompletableFuture;
+import java.util.concurrent.CompletionException;
 
 /**
  * A photo before an instrument, or one under each of its lights: reads it and writes its result folder.
@@ -35,19 +36,29 @@ record MapRun(Instrument instrument, List<Path> photos, boolean orderChoice, Pri
     int write(Path out, boolean replace) {
         try (ResultFolder folder = ResultFolder.create(out, replace); OpenPhotos files = OpenPhotos.of(photos)) {
             CompletableFuture<Map<String, String>> hashes = CompletableFuture.supplyAsync(() -> instrument.hashes(photos.toArray(Path[]::new)));
+            CompletableFuture<Void> curve = CompletableFuture.runAsync(() -> instrument.prepare(files.files().get(0).info()));
             SignalSource signal = instrument.signal(files.files());
+            result(curve);
             PhotoInfo info = signal.info();
             Setup setup = instrument.setup(signal);
-            OtherCandidates others = OtherCandidates.of(setup.curve(), recipe().excluded(), signal, 0);
+            FilmReader reader = reader(setup, info);
+            OtherCandidates others = reader.others(signal, 0);
             try (MapFolder map = MapFolder.create(folder, info.width(), info.height(), instrument.pixelUm(info),
                     recipe().range().fromNm(), recipe().range().toNm(), others)) {
-                List<DoubtfulRegion> doubts = read(reader(setup, info), signal, map);
+                List<DoubtfulRegion> doubts = read(reader, signal, map);
                 Optional<Tolerance> tolerance = Optional.ofNullable(recipe().tolerance()).map(t -> Tolerance.between(t[0], t[1]));
-                map.finish(recipe().title(), tolerance);
-                MapFindings findings = new MapFindings(instrument, setup, info, signal, map, doubts, tolerance.map(map::judge), hashes.join());
-                SummaryJson.write(findings.summary(), folder.file("summary.json"));
-                PagePhoto preview = PagePhoto.of(signal.parts().get(0), 0, !recipe().camera().isColourManaged());
-                ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview));
+                CompletableFuture<Void> figures = CompletableFuture.runAsync(() -> map.finish(recipe().title(), tolerance));
+                MapFindings findings;
+                try {
+                    findings = MapFindings.of(instrument, setup, signal, map, doubts, tolerance.map(map::judge), result(hashes));
+                    SummaryJson.write(findings.summary(), folder.file("summary.json"));
+                    PagePhoto preview = PagePhoto.of(signal.parts().get(0), 0, !recipe().camera().isColourManaged());
+                    ReportPage.write(folder.file("report.html"), new MapPage(findings).content(preview));
+                } finally {
+                    // a folder that is given up must not be written to any more
+                    figures.exceptionally(failure -> null).join();
+                }
+                result(figures);
                 folder.commit();
                 findings.tell(terminal);
                 terminal.println("wrote        " + out);
@@ -56,6 +67,15 @@ record MapRun(Instrument instrument, List<Path> photos, boolean orderChoice, Pri
                 return findings.judgement().map(Judgement::verdict).filter(v -> v == Verdict.FAIL).isPresent()
                         ? Iridepth.OUT_OF_TOLERANCE : Iridepth.DONE;
             }
+        }
+    }
+
+    /** The result of a task, or the failure that it met. */
+    private static <T> T result(CompletableFuture<T> task) {
+        try {
+            return task.join();
+        } catch (CompletionException e) {
+            throw e.getCause() instanceof RuntimeException failure ? failure : e;
         }
     }
 
