@@ -85,6 +85,9 @@ abstract class Continuity {
 
     /** By {@link SlopeFilter}s up the columns and along the row, as in the {@link SlopeSweep}. */
     private static final class OfSlope extends Continuity {
+        /** Less than the sweeps' say, so that what was decided wrongly is not carried on against them. */
+        private static final float WEIGHT = 0.5f;
+
         private final TangentTable table;
         private final SlopeFilter filter;
         /** States of the filters, those of the columns and at the end that of the row; and the pixels since a reading. */
@@ -117,7 +120,7 @@ abstract class Continuity {
         @Override
         float cost(float d) {
             float variance = table.spread(table.nearest(d));
-            return jump(column, d, variance) + jump(along(), d, variance);
+            return WEIGHT * (jump(column, d, variance) + jump(along(), d, variance));
         }
 
         private float jump(int line, float d, float variance) {

@@ -22,7 +22,7 @@ abstract class Sweep {
     static final int WIDEST_GAP = 8;
     /** Share of its authority that a pixel takes over from its neighbours. */
     private static final float FADING = 0.999f;
-    private static final float LEAST_AUTHORITY = 0.25f;
+    private static final float LEAST_AUTHORITY = 0.1f;
 
     private final boolean forward;
     private SweepRow before;
