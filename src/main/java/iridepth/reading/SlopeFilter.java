@@ -34,6 +34,13 @@ final class SlopeFilter {
         return e * e / (p + variance);
     }
 
+    /** Whether the surprise is less than a bound. */
+    boolean isWithin(float[] state, int at, float steps, float d, float variance, float bound) {
+        float e = d - state[at] - steps * state[at + 1];
+        float p = state[at + 2] + steps * (2 * state[at + 3] + steps * (state[at + 4] + change));
+        return e * e < bound * (p + variance);
+    }
+
     /** Carries a filter on to a thickness so many pixels on, in the same array or another. */
     void follow(float[] from, int at, float steps, float d, float variance, float[] to, int toAt) {
         float slope = from[at + 1];

@@ -56,10 +56,12 @@ final class SlopeSweep extends Sweep {
         if (neighbour.weight() > 0) {
             SweepRow row = neighbour.row();
             int end = neighbour.start() + neighbour.count();
+            float steps = neighbour.steps();
             for (int j = neighbour.start(); j < end; j++) {
-                float loss = row.loss[j] + filter.surprise(row.value, j * FIELDS + which, neighbour.steps(), d, variance);
-                if (loss < least) {
-                    least = loss;
+                int at = j * FIELDS + which;
+                // most entries are far away: no need to divide to see that
+                if (filter.isWithin(row.value, at, steps, d, variance, least - row.loss[j])) {
+                    least = row.loss[j] + filter.surprise(row.value, at, steps, d, variance);
                     survivor = j;
                 }
             }
