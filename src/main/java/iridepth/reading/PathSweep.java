@@ -49,7 +49,8 @@ final class PathSweep extends Sweep {
         float least = T;
         for (int j = neighbour.start(); j < end; j++) {
             float jump = d - thickness[j];
-            least = Math.min(least, loss[j] + jump * jump * perSquare);
+            float sum = loss[j] + jump * jump * perSquare;
+            least = sum < least ? sum : least;
         }
         return least;
     }

@@ -220,7 +220,8 @@ abstract class Sweep {
     static void normalise(float[] loss, int at, int count) {
         float least = loss[at];
         for (int k = at + 1; k < at + count; k++) {
-            least = Math.min(least, loss[k]);
+            // no Math.min: its care for NaN takes longer than all the rest
+            least = loss[k] < least ? loss[k] : least;
         }
         for (int k = at; k < at + count; k++) {
             loss[k] -= least;

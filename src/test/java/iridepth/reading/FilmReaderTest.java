@@ -153,7 +153,7 @@ class FilmReaderTest {
     }
 
     @ParameterizedTest
-    @CsvSource({"false, 203", "true, 203", "false, 303", "true, 403", "false, 503"})
+    @CsvSource({"false, 203", "true, 203", "false, 303", "true, 403"})
     void doubtsAnIslandThatNothingPins(boolean noisy, long seed) throws IOException {
         Scene scene = scene(Fields.island().seed(seed), noisy);
         Result result = read(scene, zeroAtLeft(scene));
@@ -233,7 +233,7 @@ class FilmReaderTest {
 
     @Test
     void threadsDoNotChangeTheResult() throws Exception {
-        SimulatedPhoto photo = SimulatedPhoto.take(Fields.island(), folder);
+        SimulatedPhoto photo = SimulatedPhoto.take(Fields.dirty(), folder);
         FilmReader reader = FilmReader.of(photo.curve(), List.of());
         Result first = new ForkJoinPool(1).submit(() -> read(photo, reader)).get();
         Result second = new ForkJoinPool(5).submit(() -> read(photo, reader)).get();
