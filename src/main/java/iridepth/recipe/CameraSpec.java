@@ -19,11 +19,13 @@ import java.util.List;
  * @param flats            photo of the reference surface under each of the recipe's lights, or none
  * @param flatStack        stack of that surface, or null
  * @param steps            patches of known thickness
+ * @param target           a reference target, or null
  * @param readNoise        read noise in counts, NaN to estimate
  * @param fullWell         electrons at full scale, NaN to estimate
  */
 public record CameraSpec(String encoding, double whiteReflectance, double fullScale, Path sensitivities,
-                         List<Path> darks, List<Path> flats, Stack flatStack, List<Step> steps, double readNoise, double fullWell) {
+                         List<Path> darks, List<Path> flats, Stack flatStack, List<Step> steps, TargetSpec target, double readNoise,
+                         double fullWell) {
     /**
      * A patch of the film of known thickness.
      *
@@ -55,13 +57,18 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
             steps.add(step(section, tables, lights));
             section.finish();
         }
+        TargetSpec target = null;
+        if (camera.has("target")) {
+            Section section = camera.section("target");
+            target = TargetSpec.read(section, tables, photos(section, "image", tables, lights, false));
+        }
         double readNoise = camera.number("read_noise_counts", Double.NaN, 0, 65535);
         double fullWell = camera.number("full_well_e", Double.NaN, 1, 1e9);
         if (Double.isNaN(readNoise) != Double.isNaN(fullWell)) {
             throw camera.error("read_noise_counts", "camera.read_noise_counts and camera.full_well_e go together");
         }
         camera.finish();
-        return new CameraSpec(encoding, white, fullScale, sensitivities, darks, flats, flatStack, List.copyOf(steps), readNoise,
+        return new CameraSpec(encoding, white, fullScale, sensitivities, darks, flats, flatStack, List.copyOf(steps), target, readNoise,
                 fullWell);
     }
 
@@ -93,6 +100,16 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
         }
         return new Step(photos(section, "image", tables, lights, false), region, thickness,
                 section.number("uncertainty_nm", Double.NaN, 0, 1e4));
+    }
+
+    /** Whether there is something to calibrate on, steps or a target. */
+    public boolean isCalibrated() {
+        return !steps.isEmpty() || target != null;
+    }
+
+    /** Photos that show what to calibrate on, one under each of the recipe's lights; only where there is something. */
+    public List<Path> calibrationPhotos() {
+        return steps.isEmpty() ? target.images() : steps.get(0).images();
     }
 
     /** Whether the file's values are colour-managed. */

@@ -34,13 +34,13 @@ public record MeasuredRig(ColourCurve curve, ChannelNoise noise, NoiseModel nois
      */
     public static Optional<MeasuredRig> of(Recipe recipe, Optional<NoiseModel> known, Optional<ThicknessRange> shown) {
         CameraSpec camera = recipe.camera();
-        boolean open = !camera.isColourManaged() && camera.sensitivities() == null && camera.steps().isEmpty();
+        boolean open = !camera.isColourManaged() && camera.sensitivities() == null && !camera.isCalibrated();
         Stream<Path> photos = Stream.concat(Stream.concat(camera.flats().stream(), camera.darks().stream()),
                 camera.steps().stream().flatMap(step -> step.images().stream()));
         if (open || camera.flats().isEmpty() || !photos.allMatch(Files::exists)) {
             return Optional.empty();
         }
-        try (OpenPhotos like = OpenPhotos.of(camera.steps().isEmpty() ? camera.flats() : camera.steps().get(0).images())) {
+        try (OpenPhotos like = OpenPhotos.of(camera.isCalibrated() ? camera.calibrationPhotos() : camera.flats())) {
             Rig rig = Rig.of(recipe);
             PhotoInfo info = like.files().get(0).info();
             Encoding encoding = rig.encoding(info);

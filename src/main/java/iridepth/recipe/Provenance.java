@@ -43,6 +43,10 @@ public final class Provenance {
             files.add(camera.sensitivities());
         }
         camera.steps().forEach(step -> files.addAll(step.images()));
+        if (camera.target() != null) {
+            files.addAll(camera.target().images());
+            files.add(camera.target().patches());
+        }
         return files;
     }
 

@@ -80,7 +80,7 @@ public record Recipe(Path file, String title, Stack stack, ThicknessRange range,
         List<Region> excluded = excluded(top.section("exclude"));
         double[] tolerance = tolerance(top.section("tolerance"));
         Optional<InputUncertainty> inputs = top.has("uncertainty") ? Optional.of(InputSpec.read(top.section("uncertainty"),
-                camera.steps().isEmpty() ? InputUncertainty.NONE : InputUncertainty.DEFAULT)) : Optional.empty();
+                camera.isCalibrated() ? InputUncertainty.DEFAULT : InputUncertainty.NONE)) : Optional.empty();
         String title = top.text("title", file.getFileName().toString());
         top.finish();
         return new Recipe(file, title, stack, range, view, lights, camera, pixelUm, excluded, tolerance,

@@ -40,15 +40,15 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
     private static final double[][] LUMINANCE = {{0, 1, 0}};
 
     /**
-     * The set-up for a photo of a rig: from the steps where the recipe has any, else from what it states.
+     * The set-up for a photo of a rig: from its steps or target where the recipe has any, else from what it states.
      *
      * @param photo one of the photos, where several are read jointly
      * @throws RecipeException if the recipe does not fix the responses, or its steps cannot
      * @throws PhotoException  if a photo or a table contradicts it
      */
     public static Setup of(Rig rig, PhotoInfo photo) {
-        return rig.recipe().camera().steps().isEmpty() ? known(rig.recipe(), photo, rig.encoding(photo))
-                : calibrated(rig, photo);
+        return rig.recipe().camera().isCalibrated() ? calibrated(rig, photo)
+                : known(rig.recipe(), photo, rig.encoding(photo));
     }
 
     /** The set-up with a calibration that has been made before. */
@@ -119,6 +119,9 @@ public record Setup(View view, ColourCurve curve, Optional<Calibration> calibrat
         try {
             FitInput input = FitInput.of(names, lights.get(0), recipe.stack(), Optional.ofNullable(camera.flatStack()), view,
                     recipe.range(), steps).withLights(lights);
+            if (camera.target() != null) {
+                input = input.withPatches(camera.target().measure(rig, channels.size()));
+            }
             if (recipe.inputs().isPresent()) {
                 input = input.withInputs(recipe.inputs().get());
             }

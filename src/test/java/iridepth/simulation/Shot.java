@@ -158,6 +158,21 @@ public final class Shot {
         });
     }
 
+    /** Tells which patch of a target lies at a pixel, -1 for its dark frame. */
+    @FunctionalInterface
+    public interface PatchAt {
+        int patch(int x, int y);
+    }
+
+    /** A reference target whose patches have known reflectances. */
+    public Photograph target(int width, int height, PatchAt at, double[][] reflectance, long seed) {
+        double[][] e = rig.responses();
+        double[][] signal = new double[reflectance.length][];
+        Arrays.setAll(signal, k -> sums(e, reflectance[k]));
+        double[] holder = covers[Cover.HOLDER.ordinal()];
+        return render(width, height, 1, seed, (c, x, y) -> at.patch(x, y) < 0 ? holder[c] : signal[at.patch(x, y)][c]);
+    }
+
     @FunctionalInterface
     private interface Scene {
         double signal(int channel, int x, int y);

@@ -40,7 +40,7 @@ final class CalibrateCommand implements Callable<Integer> {
     @Spec
     private CommandSpec spec;
 
-    @Option(names = "--recipe", required = true, paramLabel = "FILE", description = "The recipe, with camera.steps.")
+    @Option(names = "--recipe", required = true, paramLabel = "FILE", description = "The recipe, with camera.steps or camera.target.")
     private Path recipeFile;
 
     @Option(names = "--out", required = true, paramLabel = "DIR", description = "The result folder.")
@@ -52,11 +52,12 @@ final class CalibrateCommand implements Callable<Integer> {
     @Override
     public Integer call() {
         Recipe recipe = Recipe.read(recipeFile);
-        if (recipe.camera().steps().isEmpty()) {
-            throw new RecipeException(recipe.file() + ": camera.steps is missing; name photos and regions of films of known thickness");
+        if (!recipe.camera().isCalibrated()) {
+            throw new RecipeException(recipe.file() + ": camera.steps is missing; name photos and regions of films of known thickness, "
+                    + "or a reference target in camera.target");
         }
         try (ResultFolder folder = ResultFolder.create(out, replace);
-                OpenPhotos photos = OpenPhotos.of(recipe.camera().steps().get(0).images())) {
+                OpenPhotos photos = OpenPhotos.of(recipe.camera().calibrationPhotos())) {
             Rig rig = Rig.of(recipe);
             Setup setup = Setup.of(rig, photos.files().get(0).info());
             Calibration calibration = setup.calibration().orElseThrow();
@@ -98,18 +99,25 @@ final class CalibrateCommand implements Callable<Integer> {
 
     private void tell(FitFigures f, List<ThicknessRange> weak) {
         PrintWriter terminal = spec.commandLine().getOut();
-        terminal.println("step / nm   left out, read as / nm   error / nm   u / nm");
-        for (LeaveOneOut l : f.leaveOneOut()) {
-            terminal.printf(Locale.ROOT, "%9.1f   %22.2f   %10.2f   %6.2f%s%n", l.thicknessNm(), l.readNm(), l.errorNm(), l.uncertaintyNm(),
-                    l.extrapolated() ? "   (extrapolated from the others)" : "");
+        if (!f.leaveOneOut().isEmpty()) {
+            terminal.println("step / nm   left out, read as / nm   error / nm   u / nm");
+            for (LeaveOneOut l : f.leaveOneOut()) {
+                terminal.printf(Locale.ROOT, "%9.1f   %22.2f   %10.2f   %6.2f%s%n", l.thicknessNm(), l.readNm(), l.errorNm(), l.uncertaintyNm(),
+                        l.extrapolated() ? "   (extrapolated from the others)" : "");
+            }
+            terminal.printf(Locale.ROOT, "leave-one-out error %.2f nm rms between the outermost steps, %.2f nm over all, %.2f nm typically%n",
+                    f.leaveOneOutRms(false), f.leaveOneOutRms(true), f.leaveOneOutTypical());
         }
-        terminal.printf(Locale.ROOT, "leave-one-out error %.2f nm rms between the outermost steps, %.2f nm over all%n",
-                f.leaveOneOutRms(false), f.leaveOneOutRms(true));
+        if (!Double.isNaN(f.expectedErrorNm())) {
+            terminal.printf(Locale.ROOT, "expected     systematic error of %.2f nm rms between the outermost steps, noise apart, with all steps in "
+                    + "use%n", f.expectedErrorNm());
+        }
+        if (f.index() != null) {
+            terminal.printf(Locale.ROOT, "index        %+.4f +- %.4f from the stated one at 550 nm%n", f.index().at(550), f.index().sigmaAt(550));
+        }
         terminal.printf(Locale.ROOT, "fit: chi-square %.1f with %.1f degrees of freedom (p = %.3f), condition %.0f, numerical aperture %.3f "
                 + "(stated %.3f)%n", f.chiSquare(), f.degreesOfFreedom(), f.pValue(), f.condition(), f.aperture(), f.apertureStated());
-        if (f.pValue() < 0.01) {
-            terminal.println("the steps contradict the recipe: check their thicknesses, the lamp, the aperture, the index and the flat");
-        }
+        f.remarks().forEach(remark -> terminal.println("note         " + remark));
         for (ThicknessRange range : weak) {
             terminal.printf(Locale.ROOT, "weak from %.0f to %.0f nm: add a step there%n", range.fromNm(), range.toNm());
         }
