@@ -20,12 +20,13 @@ import java.util.List;
  * @param flatStack        stack of that surface, or null
  * @param steps            patches of known thickness
  * @param target           a reference target, or null
+ * @param noiseFlats       single exposures of an even surface from which to take the noise, or none
  * @param readNoise        read noise in counts, NaN to estimate
  * @param fullWell         electrons at full scale, NaN to estimate
  */
 public record CameraSpec(String encoding, double whiteReflectance, double fullScale, Path sensitivities,
-                         List<Path> darks, List<Path> flats, Stack flatStack, List<Step> steps, TargetSpec target, double readNoise,
-                         double fullWell) {
+                         List<Path> darks, List<Path> flats, Stack flatStack, List<Step> steps, TargetSpec target, List<Path> noiseFlats,
+                         double readNoise, double fullWell) {
     /**
      * A patch of the film of known thickness.
      *
@@ -62,14 +63,15 @@ public record CameraSpec(String encoding, double whiteReflectance, double fullSc
             Section section = camera.section("target");
             target = TargetSpec.read(section, tables, photos(section, "image", tables, lights, false));
         }
+        List<Path> noiseFlats = camera.has("noise_flats") ? camera.texts("noise_flats").stream().map(tables::resolve).toList() : List.of();
         double readNoise = camera.number("read_noise_counts", Double.NaN, 0, 65535);
         double fullWell = camera.number("full_well_e", Double.NaN, 1, 1e9);
         if (Double.isNaN(readNoise) != Double.isNaN(fullWell)) {
             throw camera.error("read_noise_counts", "camera.read_noise_counts and camera.full_well_e go together");
         }
         camera.finish();
-        return new CameraSpec(encoding, white, fullScale, sensitivities, darks, flats, flatStack, List.copyOf(steps), target, readNoise,
-                fullWell);
+        return new CameraSpec(encoding, white, fullScale, sensitivities, darks, flats, flatStack, List.copyOf(steps), target, noiseFlats,
+                readNoise, fullWell);
     }
 
     /** One photo for each light; a single one may serve all where it does not depend on the light. */

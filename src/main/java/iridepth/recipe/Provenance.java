@@ -43,6 +43,7 @@ public final class Provenance {
             files.add(camera.sensitivities());
         }
         camera.steps().forEach(step -> files.addAll(step.images()));
+        files.addAll(camera.noiseFlats());
         if (camera.target() != null) {
             files.addAll(camera.target().images());
             files.add(camera.target().patches());

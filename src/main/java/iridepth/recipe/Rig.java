@@ -2,6 +2,7 @@ package iridepth.recipe;
 
 import iridepth.photo.Encoding;
 import iridepth.photo.NoiseModel;
+import iridepth.photo.OpenPhotos;
 import iridepth.photo.PhotoException;
 import iridepth.photo.PhotoFile;
 import iridepth.photo.PhotoInfo;
@@ -117,11 +118,28 @@ public record Rig(Recipe recipe, List<Optional<ShadingField>> darks, List<Option
                 NoiseModel.of(0, 1)).region(0, region));
     }
 
+    private static NoiseModel noise(List<Path> exposures, PhotoInfo photo, Encoding encoding, Optional<ShadingField> dark) {
+        try (OpenPhotos flats = OpenPhotos.of(exposures)) {
+            for (PhotoFile flat : flats.files()) {
+                PhotoInfo info = flat.info();
+                if (info.channels() != photo.channels() || info.bitDepth() != photo.bitDepth()) {
+                    throw new PhotoException(info.path(), "differs from " + photo.path() + " in channels or bit depth; give exposures with "
+                            + "the same camera settings in camera.noise_flats");
+                }
+                dark.ifPresent(field -> field.requireFits(info, "dark"));
+            }
+            return NoiseModel.fromFlats(flats.files(), encoding, dark);
+        }
+    }
+
     private NoiseModel noise(PhotoFile photo, Encoding encoding, Optional<ShadingField> dark) {
         CameraSpec camera = recipe.camera();
         if (!Double.isNaN(camera.fullWell())) {
             double fullScale = Double.isNaN(camera.fullScale()) ? photo.info().maxCount() : camera.fullScale();
             return NoiseModel.of(camera.readNoise() / fullScale * camera.fullWell(), camera.fullWell());
+        }
+        if (!camera.noiseFlats().isEmpty()) {
+            return noise(camera.noiseFlats(), photo.info(), encoding, dark);
         }
         // A flat is often the mean of several exposures and so quieter than the photo: the photo's own noise is what counts.
         return NoiseModel.fromPhoto(photo, encoding, dark);
