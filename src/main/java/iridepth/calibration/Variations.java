@@ -4,9 +4,12 @@ import iridepth.optics.Stack;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.function.DoubleFunction;
 
 /**
- * Refits a calibration with each input moved by its standard uncertainty.
+ * Refits a calibration with each input moved by its standard uncertainty: for index and lamp by what the observations leave of the
+ * one that was stated. With the evidence ln p falling by c x^2 / 2 where the input is moved by x of the stated ones, its posterior is
+ * 1 / sqrt(1 + c) of them (the second difference of ln p from -1 to +1 is c).
  *
  * @param input    the input, corrected as far as the steps corrected it
  * @param stated   the stack as stated
@@ -31,13 +34,28 @@ record Variations(FitInput input, Stack stated, IndexChange index, SensorPrior p
             result.add(refitIndex(index.plus(e.sigmaA(), e.correlation() * e.sigmaB())));
             result.add(refitIndex(index.plus(0, Math.sqrt(1 - e.correlation() * e.correlation()) * e.sigmaB())));
         } else if (relative > 0) {
-            result.add(refitIndex(index.times(1 + relative)));
+            double left = left(x -> input.withStack(index.times(1 + x * relative).apply(stated)));
+            result.add(refitIndex(index.times(1 + left * relative)));
         }
         double lampK = input.inputs().lampK();
         if (lampK > 0) {
-            result.add(refit("lamp", input.withLights(input.lights().stream().map(l -> l.hotter(lampK)).toList()), index));
+            result.add(refit("lamp", hotter(left(x -> hotter(x * lampK)) * lampK), index));
         }
         return result;
+    }
+
+    private FitInput hotter(double kelvin) {
+        return input.withLights(input.lights().stream().map(l -> l.hotter(kelvin)).toList());
+    }
+
+    /** Which share of an input's stated uncertainty the observations leave. */
+    private double left(DoubleFunction<FitInput> moved) {
+        double curvature = 2 * evidence(moved.apply(0)) - evidence(moved.apply(1)) - evidence(moved.apply(-1));
+        return 1 / Math.sqrt(1 + Math.max(0, curvature));
+    }
+
+    private double evidence(FitInput moved) {
+        return LaplaceFit.of(Observations.of(moved), prior, level).evidence();
     }
 
     private Variation refitIndex(IndexChange changed) {
