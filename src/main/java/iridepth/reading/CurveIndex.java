@@ -14,10 +14,11 @@ import org.apache.commons.math3.distribution.ChiSquaredDistribution;
  * @param threshold  chi-square of the farthest candidates, which one good pixel in a hundred thousand exceeds
  * @param acceptance chi-square above which a thickness does not explain a pixel, which one good pixel in ten thousand exceeds
  * @param tables     the curve as tangents, one table for each level
+ * @param partial    the same for pixels with censored channels
  * @param cells      which parts of it can explain a pixel
  */
 record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, double threshold, double acceptance,
-                  TangentTable[] tables, CurveCells cells) {
+                  TangentTable[] tables, PartialTables partial, CurveCells cells) {
     private static final double CANDIDATE_PROBABILITY = 1e-5;
     private static final double OFF_CURVE_PROBABILITY = 1e-4;
 
@@ -30,7 +31,7 @@ record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, do
         IntStream.range(0, tables.length).parallel()
                 .forEach(i -> tables[i] = TangentTable.of(curve, noise, levels.light(i), sampling));
         CurveCells cells = CurveCells.of(curve, noise, levels.light(0), tables[0], threshold);
-        return new CurveIndex(curve, noise, levels, threshold, acceptance, tables, cells);
+        return new CurveIndex(curve, noise, levels, threshold, acceptance, tables, new PartialTables(curve, noise, levels, sampling), cells);
     }
 
     /** The index of a photo's signal. */
@@ -49,9 +50,19 @@ record CurveIndex(ColourCurve curve, ExpectedNoise noise, LightLevels levels, do
         return curve.channels() == 1;
     }
 
+    /**
+     * The table for a pixel.
+     *
+     * @param level    level of light
+     * @param censored channels at an end of their scale, bit c for channel c; where that is all of them the table is that of none
+     */
+    TangentTable table(int level, int censored) {
+        return censored == 0 || censored == (1 << curve.channels()) - 1 ? tables[level] : partial.of(censored, level);
+    }
+
     /** Whether a candidate passes the off-curve test. */
-    boolean explains(float thicknessNm, float cost, int level) {
-        TangentTable table = tables[level];
+    boolean explains(float thicknessNm, float cost, int level, int censored) {
+        TangentTable table = table(level, censored);
         return cost - table.logDeterminant(table.nearest(thicknessNm)) <= acceptance;
     }
 }

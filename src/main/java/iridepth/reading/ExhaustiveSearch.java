@@ -1,8 +1,7 @@
 package iridepth.reading;
 
 /**
- * Looks at the curve at every sample of the table: slow, simple and complete. The measure for faster searches, and their resort for pixels
- * with censored channels.
+ * Looks at the curve at every sample of the table: slow, simple and complete. The measure for faster searches.
  */
 final class ExhaustiveSearch implements CandidateSearch {
     private final TangentTable table;

@@ -2,7 +2,7 @@ package iridepth.reading;
 
 /**
  * Finds candidates by the runs of the curve that a pixel's cell lists: in a straight run by Newton steps from sample to sample
- * until the nearest is found, in others by looking along it. Pixels with censored channels go to the exhaustive search.
+ * until the nearest is found, in others by looking along it. Pixels with censored channels go to the {@link CensoredSearch}.
  */
 final class GridSearch implements CandidateSearch {
     static final int AT_ONCE = 256;
@@ -16,7 +16,7 @@ final class GridSearch implements CandidateSearch {
     private final float threshold;
     private final float acceptance;
     private final TangentProbe probe;
-    private final ExhaustiveSearch exhaustive;
+    private final CensoredSearch censored;
     private final int channels;
     private final int size;
 
@@ -33,14 +33,14 @@ final class GridSearch implements CandidateSearch {
         this.channels = index.curve().channels();
         this.size = tables[0].size();
         this.probe = channels == 3 ? new ThreeChannelProbe() : new AnyChannelProbe(channels);
-        this.exhaustive = new ExhaustiveSearch(index);
+        this.censored = new CensoredSearch(index);
     }
 
     @Override
     public void find(float[] values, byte[] limits, int pixel, int level, CandidateRow into) {
         for (int c = 0; c < channels; c++) {
             if (limits[pixel * channels + c] != 0) {
-                exhaustive.find(values, limits, pixel, level, into);
+                censored.find(values, limits, pixel, level, into);
                 return;
             }
         }

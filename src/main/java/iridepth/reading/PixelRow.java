@@ -8,6 +8,7 @@ package iridepth.reading;
  *
  * @param kind      number of candidates of each pixel, or the complement of its state's code where it has none
  * @param level     level of light of each pixel; empty where there is only one
+ * @param censored  channels of each pixel that are at an end of their scale, bit c for channel c; empty where there are none
  * @param single    thickness of each pixel with one candidate, nm, NaN for others
  * @param column    column of each noted pixel
  * @param start     where the candidates of each noted pixel begin, one more entry at the end
@@ -16,10 +17,10 @@ package iridepth.reading;
  * @param pinned    columns of the pixels whose order is known beforehand
  * @param message   what the two downward sweeps say against the candidates of noted pixels
  */
-record PixelRow(byte[] kind, byte[] level, float[] single, int[] column, int[] start, float[] thickness, float[] cost,
+record PixelRow(byte[] kind, byte[] level, int[] censored, float[] single, int[] column, int[] start, float[] thickness, float[] cost,
                 int[] pinned, float[][] message) {
-    PixelRow(byte[] kind, byte[] level, float[] single, int[] column, int[] start, float[] thickness, float[] cost, int[] pinned) {
-        this(kind, level, single, column, start, thickness, cost, pinned,
+    PixelRow(byte[] kind, byte[] level, int[] censored, float[] single, int[] column, int[] start, float[] thickness, float[] cost, int[] pinned) {
+        this(kind, level, censored, single, column, start, thickness, cost, pinned,
                 new float[][] {new float[cost.length], new float[cost.length]});
     }
 
@@ -47,6 +48,16 @@ record PixelRow(byte[] kind, byte[] level, float[] single, int[] column, int[] s
         return level.length == 0 ? 0 : level[x];
     }
 
+    /** Table of a pixel. */
+    TangentTable table(CurveIndex index, int x) {
+        return index.table(levelAt(x), censoredAt(x));
+    }
+
+    /** Channels of a pixel that are at an end of their scale. */
+    int censoredAt(int x) {
+        return censored.length == 0 ? 0 : censored[x];
+    }
+
     /** Cost of a candidate and what the sweeps say against it. */
     float total(int candidate) {
         return cost[candidate] + message[0][candidate] + message[1][candidate];
@@ -54,6 +65,6 @@ record PixelRow(byte[] kind, byte[] level, float[] single, int[] column, int[] s
 
     /** Bytes that it takes, about. */
     long bytes() {
-        return kind.length + level.length + 4L * (single.length + 2L * column.length + 4L * cost.length);
+        return kind.length + level.length + 4L * (censored.length + single.length + 2L * column.length + 4L * cost.length);
     }
 }

@@ -25,7 +25,7 @@ record ReadRow(PixelRow pixels, float[] thickness, float[] margin) {
     void take(int noted, int candidate, float itsMargin, CurveIndex index) {
         int x = pixels.column()[noted];
         float d = pixels.thickness()[candidate];
-        boolean explains = index.explains(d, pixels.cost()[candidate], pixels.levelAt(x));
+        boolean explains = index.explains(d, pixels.cost()[candidate], pixels.levelAt(x), pixels.censoredAt(x));
         thickness[x] = explains ? d : Float.NaN;
         margin[noted] = pixels.count(noted) == 1 ? Float.POSITIVE_INFINITY : itsMargin;
     }

@@ -38,7 +38,7 @@ final class RowOutput {
                 planes[2][at + x] = Float.NaN;
                 planes[3][at + x] = Float.NaN;
             } else {
-                TangentTable table = index.tables()[row.pixels().levelAt(x)];
+                TangentTable table = row.pixels().table(index, x);
                 int k = table.nearest(d);
                 planes[1][at + x] = table.random(k);
                 planes[2][at + x] = table.systematic(k);

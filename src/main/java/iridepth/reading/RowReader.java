@@ -26,12 +26,14 @@ final class RowReader {
     private final byte[] kind;
     private final byte[] level;
     private final float[] single;
+    private final int[] censored;
     private final int[] column;
     private final int[] start;
     private final int[] pinned;
     private final boolean[] out;
     private int notedCount;
     private int pinnedCount;
+    private boolean anyCensored;
 
     /**
      * @param several whether to keep all candidates of a pixel, for the choice of order, or the likeliest alone
@@ -51,6 +53,7 @@ final class RowReader {
         this.kind = new byte[width];
         this.level = new byte[width];
         this.single = new float[width];
+        this.censored = new int[width];
         this.column = new int[width];
         this.start = new int[width + 1];
         this.pinned = new int[width];
@@ -90,6 +93,10 @@ final class RowReader {
         found.clear();
         notedCount = 0;
         pinnedCount = 0;
+        if (anyCensored) {
+            Arrays.fill(censored, 0);
+            anyCensored = false;
+        }
         if (index.levels().count() > 1) {
             for (int x = 0; x < level.length; x++) {
                 level[x] = (byte) index.levels().level(line.light()[x]);
@@ -100,7 +107,8 @@ final class RowReader {
     private PixelRow row() {
         start[notedCount] = found.size();
         byte[] levels = index.levels().count() == 1 ? new byte[0] : level.clone();
-        return new PixelRow(kind.clone(), levels, single.clone(), Arrays.copyOf(column, notedCount),
+        int[] limits = anyCensored ? censored.clone() : new int[0];
+        return new PixelRow(kind.clone(), levels, limits, single.clone(), Arrays.copyOf(column, notedCount),
                 Arrays.copyOf(start, notedCount + 1), found.thicknesses(), found.costs(), Arrays.copyOf(pinned, pinnedCount));
     }
 
@@ -130,6 +138,8 @@ final class RowReader {
         } else if (isClipped(x)) {
             leave(x, State.CLIPPED);
         } else {
+            censored[x] = CensoredSearch.mask(line.limit(), x, line.channels());
+            anyCensored |= censored[x] != 0;
             search.find(line.value(), line.limit(), x, level[x], found);
             if (known >= 0 && found.keepNearest(known, tolerance)) {
                 pinned[pinnedCount++] = x;

@@ -28,6 +28,15 @@ class LikenessesTest {
                 () -> assertTrue(o.normalized() <= 1.15), () -> assertTrue(o.within1u() >= 0.63 && o.within1u() <= 0.73));
     }
 
+    /** Alumina and nitride, where a sixth of the pixels has a channel that sRGB cannot show: it counts for nothing in the uncertainty. */
+    @ParameterizedTest
+    @ValueSource(longs = {1, 3})
+    void wedgesWithChannelsOffTheScaleAreReadAndTheirUncertaintyHolds(long number) throws IOException {
+        Outcome o = read(Likenesses.wedge(320, 240, number), 10);
+        assertAll(o.toString(), () -> assertTrue(o.read() >= 0.99), () -> assertTrue(o.within40() >= 0.995),
+                () -> assertTrue(o.within1u() >= 0.63 && o.within1u() <= 0.73), () -> assertTrue(o.within2u() >= 0.9 && o.within2u() <= 0.99));
+    }
+
     /** Number 7 hardly varies in thickness, number 10 is thin. */
     @ParameterizedTest
     @ValueSource(longs = {1, 4, 7, 10})
