@@ -4,9 +4,11 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import iridepth.curve.ColourCurve;
+import iridepth.photo.Signal;
 import java.util.Random;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
+import org.junit.jupiter.params.provider.ValueSource;
 
 /** The grid finds what the exhaustive search finds. */
 class GridSearchTest {
@@ -24,10 +26,16 @@ class GridSearchTest {
         "1, 3000, 0", "1, 2000000, 0", "3, 80000, 0.01", "1, 80000, 0.01", "4, 80000, 0.02"})
     void findsTheSameCandidatesAsTheExhaustiveSearch(int channels, double fullWell, double uncertainty) {
         ColourCurve curve = FilmCurves.inBands(1500, BANDS[channels - 1]);
-        compare(uncertainty > 0 ? FilmCurves.uncertain(curve, uncertainty) : curve, photons(fullWell));
+        compare(uncertainty > 0 ? FilmCurves.uncertain(curve, uncertainty) : curve, photons(fullWell), false);
     }
 
-    private static void compare(ColourCurve curve, ExpectedNoise noise) {
+    @ParameterizedTest
+    @ValueSource(ints = {2, 3, 4})
+    void findsThemInPixelsWithAChannelAtTheEndOfItsScale(int channels) {
+        compare(FilmCurves.inBands(800, BANDS[channels - 1]), photons(80_000), true);
+    }
+
+    private static void compare(ColourCurve curve, ExpectedNoise noise, boolean censored) {
         CurveIndex index = CurveIndex.of(curve, noise, LEVELS);
         ExhaustiveSearch exhaustive = new ExhaustiveSearch(index);
         GridSearch grid = new GridSearch(index);
@@ -35,10 +43,14 @@ class GridSearchTest {
         Random random = new Random(11);
         int found = 0;
         int doubtful = 0;
-        for (int i = 0; i < PIXELS; i++) {
+        int pixels = censored ? PIXELS / 5 : PIXELS;
+        for (int i = 0; i < pixels; i++) {
             int level = random.nextInt(LEVELS.count());
             float[] pixel = pixel(curve, noise, LEVELS.light(level), random, i % 2 == 0);
             byte[] limits = new byte[pixel.length];
+            if (censored) {
+                limits[random.nextInt(limits.length)] = random.nextBoolean() ? Signal.AT_LEAST : Signal.AT_MOST;
+            }
             CandidateRow expected = new CandidateRow(1);
             CandidateRow actual = new CandidateRow(1);
             exhaustive.find(pixel, limits, 0, level, expected);
@@ -48,7 +60,7 @@ class GridSearchTest {
             doubtful += unmatched > 0 ? 1 : 0;
             found += expected.size();
         }
-        assertTrue(found > PIXELS / 3, "candidates found: " + found);
+        assertTrue(found > pixels / 3, "candidates found: " + found);
         assertTrue(doubtful <= 0.06 * found, doubtful + " pixels with a candidate at an edge, of " + found);
     }
 
