@@ -13,24 +13,23 @@ class PackageArrowsTest {
     private static final List<String> ORDER = List.of("spectrum", "optics", "colour", "curve", "photo", "calibration", "reading",
             "planning", "quality", "report", "recipe", "app");
 
+    private static final JavaClasses CLASSES = new ClassFileImporter().withImportOption(new ImportOption.DoNotIncludeTests())
+            .importPackages("iridepth");
+
     @Test
     void eachPackageUsesOnlyThoseAboveItInTheTable() {
-        JavaClasses classes = new ClassFileImporter().withImportOption(new ImportOption.DoNotIncludeTests())
-                .importPackages("iridepth");
         for (int i = 0; i < ORDER.size(); i++) {
             String[] later = ORDER.subList(i + 1, ORDER.size()).stream().map(p -> "iridepth." + p + "..").toArray(String[]::new);
             if (later.length > 0) {
                 noClasses().that().resideInAPackage("iridepth." + ORDER.get(i) + "..").should().dependOnClassesThat()
-                        .resideInAnyPackage(later).allowEmptyShould(true).check(classes);
+                        .resideInAnyPackage(later).allowEmptyShould(true).check(CLASSES);
             }
         }
     }
 
     @Test
     void everyClassHasARoom() {
-        JavaClasses classes = new ClassFileImporter().withImportOption(new ImportOption.DoNotIncludeTests())
-                .importPackages("iridepth");
         String[] rooms = ORDER.stream().map(p -> "iridepth." + p + "..").toArray(String[]::new);
-        noClasses().should().resideOutsideOfPackages(rooms).check(classes);
+        noClasses().should().resideOutsideOfPackages(rooms).check(CLASSES);
     }
 }
